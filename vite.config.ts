@@ -1,0 +1,50 @@
+import tailwindcss from '@tailwindcss/vite'
+import react from '@vitejs/plugin-react'
+import { defineConfig } from 'vitest/config'
+
+export default defineConfig({
+  root: 'web',
+  plugins: [react(), tailwindcss()],
+  build: { outDir: '../.build/web', emptyOutDir: true, chunkSizeWarningLimit: 1500 },
+  test: {
+    projects: [
+      {
+        root: '.',
+        test: { name: 'shared', include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'], environment: 'node' },
+      },
+      {
+        root: '.',
+        test: {
+          name: 'api',
+          include: ['tests/api/**/*.test.ts'],
+          environment: 'node',
+          globalSetup: ['tests/setup/database.ts'],
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        root: '.',
+        plugins: [react()],
+        test: {
+          name: 'web',
+          include: ['tests/web/**/*.test.{ts,tsx}'],
+          environment: 'jsdom',
+          setupFiles: ['tests/setup/web.ts'],
+        },
+      },
+      {
+        root: '.',
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.test.ts'],
+          environment: 'node',
+          globalSetup: ['tests/setup/e2e.ts'],
+          testTimeout: 120_000,
+          hookTimeout: 180_000,
+          fileParallelism: false,
+        },
+      },
+    ],
+  },
+})
