@@ -152,7 +152,7 @@ const PLACED: Readonly<Record<Exclude<GroundState, 'none' | 'not-placed'>, Omit<
     hatch: { kind: 'cross-hatch', spacing: 10, stroke: 1.1, mark: VIOLET_MARK },
     nearHatch: near(VIOLET_MARK),
     cellLine: PLAIN_LINE,
-    label: INK,
+    label: colourOf('#120a20'),
     word: 'Suspect',
     meaning: 'the result can’t be right',
   },
