@@ -1,0 +1,192 @@
+import { z } from 'zod'
+import { criterionSchema, roundingSchema } from '#shared/schemas/criterion.ts'
+import { finiteSchema, idSchema, instantSchema, liftSchema, personSchema, reasonSchema, remarksSchema, sitePointSchema } from '#shared/schemas/common.ts'
+
+const massUnit = z.enum(['g', 'kg', 'lb'])
+const densityUnit = z.enum(['kg/m3', 'g/cm3', 'pcf', 'kN/m3', 'lb/yd3'])
+const lengthUnit = z.enum(['mm', 'cm', 'in', 'm', 'ft', 'us-ft'])
+
+/** Raw moisture sheets (shared/domain/field-sheets.ts). Ranges are the reduction's business, which names the field. */
+export const moistureSheetSchema = z.discriminatedUnion('method', [
+  z.object({ method: z.literal('oven'), massUnit, wetAndTin: finiteSchema, dryAndTin: finiteSchema, tin: finiteSchema }),
+  z.object({ method: z.literal('microwave'), massUnit, wetAndTin: finiteSchema, dryAndTin: finiteSchema, tin: finiteSchema }),
+  z.object({ method: z.literal('carbide'), readingPercent: finiteSchema }),
+  z.object({ method: z.literal('gauge'), densityUnit, moistureDensity: finiteSchema, correctionK: finiteSchema }),
+  z.object({ method: z.literal('stated'), percent: finiteSchema }),
+])
+
+export const rawSheetSchema = z.discriminatedUnion('method', [
+  z.object({
+    method: z.literal('sand-cone'),
+    massUnit,
+    apparatusBefore: finiteSchema,
+    apparatusAfter: finiteSchema,
+    coneAndPlate: finiteSchema,
+    densityUnit,
+    sandDensity: finiteSchema,
+    moistSoil: finiteSchema,
+    largestParticle: finiteSchema.optional(),
+    lengthUnit: lengthUnit.optional(),
+    moisture: moistureSheetSchema,
+  }),
+  z.object({
+    method: z.literal('nuclear-gauge'),
+    mode: z.enum(['direct-transmission', 'backscatter']),
+    lengthUnit,
+    rodDepth: finiteSchema,
+    densityUnit,
+    wetDensity: finiteSchema,
+    secondWetDensity: finiteSchema.optional(),
+    standardCounts: z
+      .object({
+        density: finiteSchema,
+        moisture: finiteSchema,
+        referenceDensity: finiteSchema.optional(),
+        referenceMoisture: finiteSchema.optional(),
+      })
+      .optional(),
+    moisture: moistureSheetSchema,
+  }),
+  z.object({
+    method: z.literal('plain'),
+    densityUnit,
+    densityIs: z.enum(['wet', 'dry']),
+    density: finiteSchema,
+    moisture: moistureSheetSchema,
+  }),
+])
+
+export const purposeSchema = z.enum(['required', 'judgement', 'verification', 'referee'])
+export type Purpose = z.infer<typeof purposeSchema>
+export const outcomeSchema = z.enum(['pass', 'fail', 'suspect'])
+
+/** What a technician sends. The place is a point; its cell is found by the server. */
+export const createTestSchema = z.object({
+  id: idSchema,
+  purpose: purposeSchema,
+  /** null for a new test; else the test it follows, after rework (retest) or because the reading is doubted (rerun) */
+  follows: z.object({ testId: idSchema, kind: z.enum(['retest', 'rerun']) }).nullable(),
+  stakeId: idSchema.nullable(),
+  at: sitePointSchema,
+  lift: liftSchema.min(1, 'A density test belongs to lift 1 or higher'),
+  /** true once the person has confirmed a lift that the elevation does not agree with (409 lift_differs) */
+  liftConfirmed: z.boolean(),
+  surfaceUm: z.number().int().min(-5e8).max(9e9).nullable(),
+  depthUm: z.number().int().min(0).max(3_000_000),
+  sampledAt: instantSchema,
+  curveId: idSchema,
+  oversizePercent: finiteSchema.min(0).max(100).nullable(),
+  sheet: rawSheetSchema,
+  remarks: remarksSchema,
+})
+export type CreateTest = z.infer<typeof createTestSchema>
+
+/** What saving would do to the ground, asked for while typing; nothing is stored. */
+export const previewTestSchema = createTestSchema.pick({ purpose: true, follows: true, at: true, lift: true, sampledAt: true, curveId: true, oversizePercent: true, sheet: true })
+export const testPreviewSchema = z.object({
+  zoneId: z.string().nullable(),
+  cell: z.number().nullable(),
+  lotName: z.string().nullable(),
+  /** cells that would go to rework, be suspect or be put on hold */
+  marks: z.array(z.object({ kind: z.enum(['fail', 'suspect', 'hold']), cells: z.array(z.number()), volumeCm3: z.number() })),
+  /** cells that would meet specification */
+  meets: z.array(z.number()),
+})
+export type TestPreview = z.infer<typeof testPreviewSchema>
+
+const verdictReasonSchema = z.object({ code: z.string(), message: z.string(), value: z.number(), limit: z.string() })
+const noteSchema = z.object({ code: z.string(), message: z.string() })
+
+/** The frozen verdict (shared/domain/verdict-types.ts) as it is stored and shown. */
+export const verdictSchema = z.object({
+  outcome: outcomeSchema,
+  treatedAsFail: z.boolean(),
+  near: z.boolean(),
+  reasons: z.array(verdictReasonSchema),
+  suspicions: z.array(noteSchema.extend({ check: z.string() })),
+  advice: z.array(noteSchema),
+  rc: z.number(),
+  moistureDeviation: z.number(),
+  saturation: z.number().nullable(),
+  airVoids: z.number(),
+  maxDryDensityUsed: z.number(),
+  optimumUsed: z.number(),
+  gsUsed: z.number(),
+  oversizeCorrected: z.boolean(),
+  headline: z.string(),
+  against: z.object({
+    criteria: z.array(criterionSchema),
+    rounding: roundingSchema,
+    repeatability: z.object({ rc: z.number(), moisture: z.number() }),
+    waterDensity: z.number(),
+    curve: z.object({ maxDryDensity: z.number(), optimumMoisture: z.number(), gs: z.number(), gsMeasured: z.boolean() }),
+  }),
+})
+
+/** A test as registers and maps need it. */
+export const testSummarySchema = z.object({
+  id: z.string(),
+  number: z.string(),
+  seq: z.number(),
+  purpose: purposeSchema,
+  method: z.enum(['sand-cone', 'nuclear-gauge', 'plain']),
+  zoneId: z.string(),
+  lift: z.number(),
+  cell: z.number(),
+  lotId: z.string().nullable(),
+  easting: z.number(),
+  northing: z.number(),
+  sampledAt: instantSchema,
+  recordedBy: personSchema,
+  curveId: z.string(),
+  curveCode: z.string(),
+  outcome: outcomeSchema,
+  treatedAsFail: z.boolean(),
+  near: z.boolean(),
+  headline: z.string(),
+  rc: z.number(),
+  moisture: z.number(),
+  moistureDeviation: z.number(),
+  dryDensity: z.number(),
+  /** the last non-void result of its chain */
+  current: z.boolean(),
+  /** put out of force by rework reported done in its cell */
+  superseded: z.boolean(),
+  voided: z.boolean(),
+  flagged: z.boolean(),
+})
+export type TestSummary = z.infer<typeof testSummarySchema>
+export const testListSchema = z.object({ tests: z.array(testSummarySchema), total: z.number() })
+export const testQuerySchema = z.object({
+  zoneId: z.string().optional(),
+  lift: z.coerce.number().int().optional(),
+  cell: z.coerce.number().int().optional(),
+  lotId: z.string().optional(),
+  outcome: outcomeSchema.optional(),
+  current: z.enum(['true', 'false']).optional(),
+  search: z.string().max(40).optional(),
+  offset: z.coerce.number().int().min(0).max(1e6).default(0),
+  limit: z.coerce.number().int().min(1).max(5_000).default(100),
+})
+
+export const testDetailSchema = testSummarySchema.extend({
+  follows: z.object({ testId: z.string(), kind: z.enum(['retest', 'rerun']) }).nullable(),
+  chain: z.array(z.object({ id: z.string(), number: z.string(), outcome: outcomeSchema, headline: z.string(), rc: z.number(), sampledAt: instantSchema, voided: z.boolean() })),
+  stakeLabel: z.string().nullable(),
+  surfaceUm: z.number().nullable(),
+  depthUm: z.number(),
+  recordedAt: instantSchema,
+  oversizePercent: z.number().nullable(),
+  wetDensity: z.number(),
+  sheet: rawSheetSchema,
+  remarks: z.string(),
+  verdict: verdictSchema,
+  flags: z.array(noteSchema),
+  marks: z.array(z.object({ kind: z.enum(['fail', 'suspect', 'hold']), cells: z.array(z.number()) })),
+  /** cells it speaks for now, with the volume it gives each */
+  speaksFor: z.array(z.object({ cell: z.number(), cm3: z.number() })),
+  orderId: z.string().nullable(),
+  void: z.object({ at: instantSchema, by: personSchema, reason: z.string() }).nullable(),
+})
+export type TestDetail = z.infer<typeof testDetailSchema>
+export const voidTestSchema = z.object({ reason: reasonSchema })

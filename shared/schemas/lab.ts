@@ -1,0 +1,71 @@
+import { z } from 'zod'
+import { finiteSchema, idSchema, instantSchema, lineSchema, nameSchema, percentSchema, reasonSchema } from '#shared/schemas/common.ts'
+
+export const specificGravitySchema = finiteSchema.min(1.5, 'Specific gravity is between 1.5 and 5.5').max(5.5, 'Specific gravity is between 1.5 and 5.5')
+
+export const createMaterialSchema = z.object({
+  id: idSchema,
+  name: nameSchema,
+  source: lineSchema,
+  classification: lineSchema,
+  /** percent of bank volume */
+  swellPercent: finiteSchema.min(0).max(150),
+  /** percent of bank volume lost when compacted; negative where it grows */
+  shrinkPercent: finiteSchema.min(-60).max(60),
+})
+export const materialSchema = createMaterialSchema.extend({
+  /** loose to compacted volume, from swell and shrink */
+  looseToCompacted: z.number(),
+})
+export const materialListSchema = z.object({ materials: z.array(materialSchema) })
+export type Material = z.infer<typeof materialSchema>
+
+/** Compaction curve points: densities kg/m³ (dry), moisture % of dry mass. */
+export const curvePointSchema = z.object({
+  moisture: finiteSchema.min(0, 'Moisture is not below 0 %').max(200),
+  dryDensity: finiteSchema.positive('Dry density is above 0').max(5_000),
+})
+export const createCurveSchema = z.object({
+  id: idSchema,
+  code: nameSchema,
+  materialId: idSchema,
+  method: z.enum(['D698', 'T 99', 'D1557', 'T 180']),
+  procedure: z.enum(['A', 'B', 'C', 'D']),
+  points: z.array(curvePointSchema).max(40),
+  gs: specificGravitySchema,
+  gsMeasured: z.boolean(),
+  /** the pair the laboratory reported; used only with a reason */
+  reported: z
+    .object({ maxDryDensity: finiteSchema.positive().max(5_000), optimumMoisture: percentSchema, reason: reasonSchema })
+    .nullable(),
+  sampledAt: instantSchema,
+})
+export type CreateCurve = z.infer<typeof createCurveSchema>
+export const approveCurveSchema = z.object({
+  /** the pair the lead confirms, reported to 0.1 and used so */
+  use: z.enum(['spline', 'quadratic', 'cubic', 'reported']),
+})
+
+const pairSchema = z.object({ maxDryDensity: z.number(), optimumMoisture: z.number() })
+export const curveSchema = createCurveSchema.extend({
+  materialName: z.string(),
+  status: z.enum(['draft', 'approved', 'superseded']),
+  fit: z.object({
+    spline: pairSchema.nullable(),
+    quadratic: pairSchema.nullable(),
+    cubic: pairSchema.nullable(),
+    refusal: z.string().nullable(),
+    warnings: z.array(z.object({ code: z.string(), message: z.string() })),
+    /** the drawn curve: moisture %, dry density kg/m³ */
+    drawn: z.array(z.tuple([z.number(), z.number()])),
+  }),
+  /** the pair in force: the approved one, or what would be proposed */
+  pair: pairSchema.nullable(),
+  pairFrom: z.enum(['spline', 'quadratic', 'cubic', 'reported']).nullable(),
+  approvedBy: z.string().nullable(),
+  approvedAt: instantSchema.nullable(),
+  recordedBy: z.string(),
+  testsJudged: z.number(),
+})
+export const curveListSchema = z.object({ curves: z.array(curveSchema) })
+export type Curve = z.infer<typeof curveSchema>

@@ -1,0 +1,52 @@
+import { z } from 'zod'
+import { idSchema, instantSchema } from '#shared/schemas/common.ts'
+
+export const lotStandingSchema = z.enum(['owes', 'rework', 'suspect', 'waiting-release', 'released'])
+
+export const lotSchema = z.object({
+  id: z.string(),
+  seq: z.number(),
+  /** such as "Pad L10, Dec 1" */
+  name: z.string(),
+  zoneId: z.string(),
+  lift: z.number(),
+  materialId: z.string(),
+  materialName: z.string(),
+  workDay: z.string(),
+  specificationVersion: z.number(),
+  cells: z.array(z.number()),
+  volumeCm3: z.number(),
+  spokenCm3: z.number(),
+  areaMm2: z.number(),
+  /** the volume one test speaks for */
+  fCm3: z.number(),
+  required: z.number(),
+  taken: z.number(),
+  passing: z.number(),
+  owed: z.number(),
+  reruns: z.number(),
+  staked: z.number(),
+  standing: lotStandingSchema,
+  releasedAt: instantSchema.nullable(),
+  /** one entry a test's block, by volume: what it stands for and how much it holds */
+  blocks: z.array(z.object({ testId: z.string().nullable(), state: z.enum(['meets', 'released', 'rework', 'suspect', 'owed']), cm3: z.number() })),
+})
+export type Lot = z.infer<typeof lotSchema>
+export const lotListSchema = z.object({ lots: z.array(lotSchema) })
+
+export const stakeSchema = z.object({
+  id: z.string(),
+  label: z.string(),
+  lotId: z.string(),
+  lotName: z.string(),
+  zoneId: z.string(),
+  lift: z.number(),
+  cell: z.number(),
+  easting: z.number(),
+  northing: z.number(),
+  drawnAt: instantSchema,
+  drawnBy: z.string(),
+})
+export type Stake = z.infer<typeof stakeSchema>
+export const stakeListSchema = z.object({ stakes: z.array(stakeSchema) })
+export const drawStakesSchema = z.object({ id: idSchema, lotId: idSchema })
