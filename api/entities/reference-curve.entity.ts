@@ -1,0 +1,57 @@
+import { Entity, ForeignKey, Unique } from 'typeorm'
+import { SiteOwned } from '#api/entities/base.ts'
+import { BooleanColumn, DecimalColumn, DoubleColumn, IdColumn, InstantColumn, JsonColumn, TextColumn, WordColumn } from '#api/entities/columns.ts'
+import type { CreateCurve, Curve } from '#shared/schemas/lab.ts'
+
+@Unique('uq_reference_curve_code', ['siteId', 'code'])
+@ForeignKey('borrow_material', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_reference_curve_material' })
+@Entity('reference_curve')
+export class ReferenceCurveEntity extends SiteOwned {
+  @TextColumn('code', 80)
+  code!: string
+
+  @IdColumn('material_id')
+  materialId!: string
+
+  @WordColumn('method')
+  method!: CreateCurve['method']
+
+  @WordColumn('procedure_letter')
+  procedure!: CreateCurve['procedure']
+
+  @JsonColumn('points')
+  points!: CreateCurve['points']
+
+  @DecimalColumn('gs', 6, 3)
+  gs!: number
+
+  @BooleanColumn('gs_measured')
+  gsMeasured!: boolean
+
+  @JsonColumn('reported', { nullable: true })
+  reported!: CreateCurve['reported']
+
+  @InstantColumn('sampled_at')
+  sampledAt!: Date
+
+  @WordColumn('status')
+  status!: Curve['status']
+
+  @DoubleColumn('max_dry_density', { nullable: true })
+  maxDryDensity!: number | null
+
+  @DoubleColumn('optimum_moisture', { nullable: true })
+  optimumMoisture!: number | null
+
+  @WordColumn('pair_from', { nullable: true })
+  pairFrom!: Curve['pairFrom']
+
+  @IdColumn('recorded_by')
+  recordedBy!: string
+
+  @IdColumn('approved_by', { nullable: true })
+  approvedBy!: string | null
+
+  @InstantColumn('approved_at', { nullable: true })
+  approvedAt!: Date | null
+}
