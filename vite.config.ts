@@ -2,18 +2,25 @@ import tailwindcss from '@tailwindcss/vite'
 import react from '@vitejs/plugin-react'
 import { defineConfig } from 'vitest/config'
 
+const ROOT = import.meta.dirname
+
 export default defineConfig({
-  root: 'web',
+  root: `${ROOT}/web`,
   plugins: [react(), tailwindcss()],
   build: { outDir: '../.build/web', emptyOutDir: true, chunkSizeWarningLimit: 1500 },
   test: {
     projects: [
       {
-        root: '.',
-        test: { name: 'shared', include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'], environment: 'node' },
+        root: ROOT,
+        test: {
+          name: 'shared',
+          include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'],
+          benchmark: { include: ['tests/bench/**/*.bench.ts'] },
+          environment: 'node',
+        },
       },
       {
-        root: '.',
+        root: ROOT,
         test: {
           name: 'api',
           include: ['tests/api/**/*.test.ts'],
@@ -24,7 +31,7 @@ export default defineConfig({
         },
       },
       {
-        root: '.',
+        root: ROOT,
         plugins: [react()],
         test: {
           name: 'web',
@@ -34,7 +41,7 @@ export default defineConfig({
         },
       },
       {
-        root: '.',
+        root: ROOT,
         test: {
           name: 'e2e',
           include: ['tests/e2e/**/*.test.ts'],
