@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { BigCountColumn, BooleanColumn, PrimaryIdColumn, PrimaryIntColumn } from '#api/entities/columns.ts'
 
 @Index('ix_allocation_test', ['siteId', 'testId'])
-@ForeignKey('lot', ['siteId', 'lotId'], ['siteId', 'id'], { name: 'fk_allocation_lot' })
+@ForeignKey('LotEntity', ['siteId', 'lotId'], ['siteId', 'id'], { name: 'fk_allocation_lot' })
 @Entity('allocation')
 export class AllocationEntity {
   @PrimaryIdColumn('site_id')

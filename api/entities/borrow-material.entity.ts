@@ -3,7 +3,7 @@ import { SiteOwned } from '#api/entities/base.ts'
 import { DecimalColumn, TextColumn } from '#api/entities/columns.ts'
 
 @Unique('uq_borrow_material_name', ['siteId', 'name'])
-@ForeignKey('site', ['siteId'], ['id'], { name: 'fk_borrow_material_site' })
+@ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_borrow_material_site' })
 @Entity('borrow_material')
 export class BorrowMaterialEntity extends SiteOwned {
   @TextColumn('name', 80)

@@ -3,7 +3,7 @@ import { BigCountColumn, IdColumn, PrimaryIdColumn, PrimaryIntColumn, TinyCountC
 
 @Index('ix_cell_lift_cell', ['siteId', 'cell'])
 @Index('ix_cell_lift_lot', ['siteId', 'lotId'])
-@ForeignKey('cell', ['siteId', 'cell'], ['siteId', 'cell'], { name: 'fk_cell_lift_cell' })
+@ForeignKey('CellEntity', ['siteId', 'cell'], ['siteId', 'cell'], { name: 'fk_cell_lift_cell' })
 @Entity('cell_lift')
 export class CellLiftEntity {
   @PrimaryIdColumn('site_id')

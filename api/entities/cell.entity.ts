@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { BigCountColumn, BooleanColumn, IdColumn, IntColumn, PrimaryIdColumn, PrimaryIntColumn, WordColumn } from '#api/entities/columns.ts'
 
 @Index('ix_cell_zone', ['siteId', 'zoneId'])
-@ForeignKey('site', ['siteId'], ['id'], { name: 'fk_cell_site' })
+@ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_cell_site' })
 @Entity('cell')
 export class CellEntity {
   @PrimaryIdColumn('site_id')

@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { IntColumn, PrimaryIdColumn, PrimaryIntColumn } from '#api/entities/columns.ts'
 
 @Index('ix_disposition_cell_place', ['siteId', 'lift', 'cell'])
-@ForeignKey('disposition', ['siteId', 'dispositionId'], ['siteId', 'id'], { name: 'fk_disposition_cell_disposition' })
+@ForeignKey('DispositionEntity', ['siteId', 'dispositionId'], ['siteId', 'id'], { name: 'fk_disposition_cell_disposition' })
 @Entity('disposition_cell')
 export class DispositionCellEntity {
   @PrimaryIdColumn('site_id')

@@ -2,7 +2,7 @@ import { Entity, ForeignKey } from 'typeorm'
 import { SiteOwned } from '#api/entities/base.ts'
 import { IdColumn, InstantColumn, IntColumn, TextColumn } from '#api/entities/columns.ts'
 
-@ForeignKey('site', ['siteId'], ['id'], { name: 'fk_disposition_site' })
+@ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_disposition_site' })
 @Entity('disposition')
 export class DispositionEntity extends SiteOwned {
   @IntColumn('lift')

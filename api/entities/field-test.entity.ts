@@ -11,8 +11,8 @@ import type { Purpose } from '#shared/schemas/field-test.ts'
 @Index('ix_field_test_sampled', ['siteId', 'sampledAt'])
 @Unique('uq_field_test_number', ['siteId', 'number'])
 @Unique('uq_field_test_seq', ['siteId', 'seq'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_field_test_zone' })
-@ForeignKey('reference_curve', ['siteId', 'curveId'], ['siteId', 'id'], { name: 'fk_field_test_curve' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_field_test_zone' })
+@ForeignKey('ReferenceCurveEntity', ['siteId', 'curveId'], ['siteId', 'id'], { name: 'fk_field_test_curve' })
 @Entity('field_test')
 export class FieldTestEntity extends SiteOwned {
   @IntColumn('seq')

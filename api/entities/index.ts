@@ -1,4 +1,5 @@
 import { EventEntity } from '#api/entities/event.entity.ts'
+import { groundEntities } from '#api/entities/ground-entities.ts'
 import { MembershipEntity } from '#api/entities/membership.entity.ts'
 import { PatchEntity } from '#api/entities/patch.entity.ts'
 import { RequestRecordEntity } from '#api/entities/request-record.entity.ts'
@@ -17,4 +18,5 @@ export const entities = [
   EventEntity,
   PatchEntity,
   RequestRecordEntity,
+  ...groundEntities,
 ]

@@ -2,7 +2,7 @@ import { Entity, ForeignKey } from 'typeorm'
 import { SiteOwned } from '#api/entities/base.ts'
 import { IdColumn, InstantColumn, TextColumn, WordColumn } from '#api/entities/columns.ts'
 
-@ForeignKey('site', ['siteId'], ['id'], { name: 'fk_inspection_site' })
+@ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_inspection_site' })
 @Entity('inspection')
 export class InspectionEntity extends SiteOwned {
   @InstantColumn('happened_at')

@@ -1,7 +1,7 @@
 import { Entity, ForeignKey } from 'typeorm'
 import { BigCountColumn, IntColumn, PrimaryIdColumn, PrimaryIntColumn } from '#api/entities/columns.ts'
 
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_lift_total_zone' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_lift_total_zone' })
 @Entity('lift_total')
 export class LiftTotalEntity {
   @PrimaryIdColumn('site_id')

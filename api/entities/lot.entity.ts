@@ -5,7 +5,7 @@ import type { LotStanding } from '#shared/domain/lot-facts.ts'
 
 @Index('ix_lot_zone_lift', ['siteId', 'zoneId', 'lift'])
 @Unique('uq_lot_seq', ['siteId', 'seq'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_lot_zone' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_lot_zone' })
 @Entity('lot')
 export class LotEntity extends SiteOwned {
   @IntColumn('seq')

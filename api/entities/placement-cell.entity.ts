@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { BigCountColumn, BooleanColumn, IntColumn, PrimaryIdColumn, PrimaryIntColumn, TinyCountColumn } from '#api/entities/columns.ts'
 
 @Index('ix_placement_cell_place', ['siteId', 'lift', 'cell'])
-@ForeignKey('placement', ['siteId', 'placementId'], ['siteId', 'id'], { name: 'fk_placement_cell_placement' })
+@ForeignKey('PlacementEntity', ['siteId', 'placementId'], ['siteId', 'id'], { name: 'fk_placement_cell_placement' })
 @Entity('placement_cell')
 export class PlacementCellEntity {
   @PrimaryIdColumn('site_id')

@@ -4,8 +4,8 @@ import { BigCountColumn, IdColumn, InstantColumn, IntColumn, TextColumn } from '
 
 @Index('ix_placement_happened', ['siteId', 'happenedAt'])
 @Unique('uq_placement_seq', ['siteId', 'seq'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_placement_zone' })
-@ForeignKey('borrow_material', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_placement_material' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_placement_zone' })
+@ForeignKey('BorrowMaterialEntity', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_placement_material' })
 @Entity('placement')
 export class PlacementEntity extends SiteOwned {
   @IntColumn('seq')

@@ -4,7 +4,7 @@ import { BooleanColumn, DecimalColumn, DoubleColumn, IdColumn, InstantColumn, Js
 import type { CreateCurve, Curve } from '#shared/schemas/lab.ts'
 
 @Unique('uq_reference_curve_code', ['siteId', 'code'])
-@ForeignKey('borrow_material', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_reference_curve_material' })
+@ForeignKey('BorrowMaterialEntity', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_reference_curve_material' })
 @Entity('reference_curve')
 export class ReferenceCurveEntity extends SiteOwned {
   @TextColumn('code', 80)

@@ -3,7 +3,7 @@ import { BigCountColumn, InstantColumn, IntColumn, JsonColumn, PrimaryIdColumn, 
 import type { SharePair } from '#shared/domain/lot-facts.ts'
 
 @Index('ix_release_cell_place', ['siteId', 'lift', 'cell'])
-@ForeignKey('release_record', ['siteId', 'releaseId'], ['siteId', 'id'], { name: 'fk_release_cell_release' })
+@ForeignKey('ReleaseEntity', ['siteId', 'releaseId'], ['siteId', 'id'], { name: 'fk_release_cell_release' })
 @Entity('release_cell')
 export class ReleaseCellEntity {
   @PrimaryIdColumn('site_id')

@@ -4,7 +4,7 @@ import { BooleanColumn, IdColumn, InstantColumn, IntColumn, TextColumn, WordColu
 
 @Index('ix_release_place', ['siteId', 'zoneId', 'lift'])
 @Unique('uq_release_seq', ['siteId', 'seq'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_release_zone' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_release_zone' })
 @Entity('release_record')
 export class ReleaseEntity extends SiteOwned {
   @IntColumn('seq')

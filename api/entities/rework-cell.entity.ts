@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { InstantColumn, PrimaryIdColumn, PrimaryIntColumn } from '#api/entities/columns.ts'
 
 @Index('ix_rework_cell_cell', ['siteId', 'cell'])
-@ForeignKey('rework_order', ['siteId', 'orderId'], ['siteId', 'id'], { name: 'fk_rework_cell_order' })
+@ForeignKey('ReworkOrderEntity', ['siteId', 'orderId'], ['siteId', 'id'], { name: 'fk_rework_cell_order' })
 @Entity('rework_cell')
 export class ReworkCellEntity {
   @PrimaryIdColumn('site_id')

@@ -4,7 +4,7 @@ import { IdColumn, InstantColumn, IntColumn, JsonColumn, TextColumn, WordColumn 
 
 @Index('ix_rework_order_place', ['siteId', 'zoneId', 'lift'])
 @Unique('uq_rework_order_seq', ['siteId', 'seq'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_rework_order_zone' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_rework_order_zone' })
 @Entity('rework_order')
 export class ReworkOrderEntity extends SiteOwned {
   @IntColumn('seq')

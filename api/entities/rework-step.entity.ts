@@ -3,7 +3,7 @@ import { SiteOwned } from '#api/entities/base.ts'
 import { IdColumn, InstantColumn, IntColumn, JsonColumn, TextColumn, WordColumn } from '#api/entities/columns.ts'
 
 @Unique('uq_rework_step_position', ['siteId', 'orderId', 'position'])
-@ForeignKey('rework_order', ['siteId', 'orderId'], ['siteId', 'id'], { name: 'fk_rework_step_order' })
+@ForeignKey('ReworkOrderEntity', ['siteId', 'orderId'], ['siteId', 'id'], { name: 'fk_rework_step_order' })
 @Entity('rework_step')
 export class ReworkStepEntity extends SiteOwned {
   @IdColumn('order_id')

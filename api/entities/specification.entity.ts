@@ -4,7 +4,7 @@ import { IdColumn, IntColumn, JsonColumn } from '#api/entities/columns.ts'
 import type { SpecificationInput } from '#shared/schemas/site.ts'
 
 @Unique('uq_specification_version', ['siteId', 'zoneId', 'version'])
-@ForeignKey('zone', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_specification_zone' })
+@ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_specification_zone' })
 @Entity('specification')
 export class SpecificationEntity extends SiteOwned {
   @IdColumn('zone_id')

@@ -4,7 +4,7 @@ import { BigCountColumn, DoubleColumn, IdColumn, InstantColumn, IntColumn, TextC
 
 @Index('ix_stake_lot', ['siteId', 'lotId'])
 @Unique('uq_stake_seq', ['siteId', 'seq'])
-@ForeignKey('lot', ['siteId', 'lotId'], ['siteId', 'id'], { name: 'fk_stake_lot' })
+@ForeignKey('LotEntity', ['siteId', 'lotId'], ['siteId', 'id'], { name: 'fk_stake_lot' })
 @Entity('stake')
 export class StakeEntity extends SiteOwned {
   @IntColumn('seq')

@@ -2,7 +2,7 @@ import { Entity, ForeignKey, Index } from 'typeorm'
 import { IntColumn, PrimaryIdColumn, PrimaryIntColumn, WordColumn } from '#api/entities/columns.ts'
 
 @Index('ix_test_mark_place', ['siteId', 'lift', 'cell'])
-@ForeignKey('field_test', ['siteId', 'testId'], ['siteId', 'id'], { name: 'fk_test_mark_test' })
+@ForeignKey('FieldTestEntity', ['siteId', 'testId'], ['siteId', 'id'], { name: 'fk_test_mark_test' })
 @Entity('test_mark')
 export class TestMarkEntity {
   @PrimaryIdColumn('site_id')

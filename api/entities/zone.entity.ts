@@ -5,7 +5,7 @@ import type { LiftPlan, SiteRing } from '#shared/domain/site-geometry.ts'
 import type { ZoneInput } from '#shared/schemas/site.ts'
 
 @Unique('uq_zone_position', ['siteId', 'position'])
-@ForeignKey('site', ['siteId'], ['id'], { name: 'fk_zone_site' })
+@ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_zone_site' })
 @Entity('zone')
 export class ZoneEntity extends SiteOwned {
   @IntColumn('position')

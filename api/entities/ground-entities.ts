@@ -1,0 +1,50 @@
+import { AllocationEntity } from '#api/entities/allocation.entity.ts'
+import { BorrowMaterialEntity } from '#api/entities/borrow-material.entity.ts'
+import { CellEntity } from '#api/entities/cell.entity.ts'
+import { CellLiftEntity } from '#api/entities/cell-lift.entity.ts'
+import { DispositionEntity } from '#api/entities/disposition.entity.ts'
+import { DispositionCellEntity } from '#api/entities/disposition-cell.entity.ts'
+import { FieldTestEntity } from '#api/entities/field-test.entity.ts'
+import { InspectionEntity } from '#api/entities/inspection.entity.ts'
+import { InspectionCellEntity } from '#api/entities/inspection-cell.entity.ts'
+import { LiftTotalEntity } from '#api/entities/lift-total.entity.ts'
+import { LotEntity } from '#api/entities/lot.entity.ts'
+import { PlacementEntity } from '#api/entities/placement.entity.ts'
+import { PlacementCellEntity } from '#api/entities/placement-cell.entity.ts'
+import { ReferenceCurveEntity } from '#api/entities/reference-curve.entity.ts'
+import { ReleaseEntity } from '#api/entities/release.entity.ts'
+import { ReleaseCellEntity } from '#api/entities/release-cell.entity.ts'
+import { ReworkCellEntity } from '#api/entities/rework-cell.entity.ts'
+import { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
+import { ReworkStepEntity } from '#api/entities/rework-step.entity.ts'
+import { SpecificationEntity } from '#api/entities/specification.entity.ts'
+import { StakeEntity } from '#api/entities/stake.entity.ts'
+import { TestMarkEntity } from '#api/entities/test-mark.entity.ts'
+import { ZoneEntity } from '#api/entities/zone.entity.ts'
+
+/** The tables of the earthwork: what was set up, the facts, and what is derived from them. */
+export const groundEntities = [
+  ZoneEntity,
+  SpecificationEntity,
+  CellEntity,
+  CellLiftEntity,
+  LiftTotalEntity,
+  BorrowMaterialEntity,
+  ReferenceCurveEntity,
+  LotEntity,
+  PlacementEntity,
+  PlacementCellEntity,
+  FieldTestEntity,
+  TestMarkEntity,
+  AllocationEntity,
+  StakeEntity,
+  ReworkOrderEntity,
+  ReworkCellEntity,
+  ReworkStepEntity,
+  ReleaseEntity,
+  ReleaseCellEntity,
+  InspectionEntity,
+  InspectionCellEntity,
+  DispositionEntity,
+  DispositionCellEntity,
+]
