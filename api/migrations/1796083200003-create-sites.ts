@@ -20,7 +20,7 @@ export class CreateSites1796083200003 implements MigrationInterface {
       \`created_at\` datetime(3) NOT NULL,
       \`updated_at\` datetime(3) NOT NULL,
       PRIMARY KEY (\`id\`),
-      CONSTRAINT \`fk_site_created_by\` FOREIGN KEY (\`created_by\`) REFERENCES \`user\` (\`id\`)
+      CONSTRAINT \`fk_site_created_by\` FOREIGN KEY (\`created_by\`) REFERENCES \`user\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
     await runner.query(`CREATE TABLE \`membership\` (
       \`site_id\` char(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
@@ -30,8 +30,8 @@ export class CreateSites1796083200003 implements MigrationInterface {
       \`updated_at\` datetime(3) NOT NULL,
       PRIMARY KEY (\`site_id\`, \`user_id\`),
       INDEX \`ix_membership_user\` (\`user_id\`),
-      CONSTRAINT \`fk_membership_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`),
-      CONSTRAINT \`fk_membership_user\` FOREIGN KEY (\`user_id\`) REFERENCES \`user\` (\`id\`)
+      CONSTRAINT \`fk_membership_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION,
+      CONSTRAINT \`fk_membership_user\` FOREIGN KEY (\`user_id\`) REFERENCES \`user\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
   }
 

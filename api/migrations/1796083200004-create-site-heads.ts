@@ -14,7 +14,7 @@ export class CreateSiteHeads1796083200004 implements MigrationInterface {
       \`next_release\` int NOT NULL,
       \`next_placement\` int NOT NULL,
       PRIMARY KEY (\`site_id\`),
-      CONSTRAINT \`fk_site_head_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`)
+      CONSTRAINT \`fk_site_head_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
     await runner.query(`CREATE TABLE \`patch\` (
       \`site_id\` char(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
@@ -22,7 +22,7 @@ export class CreateSiteHeads1796083200004 implements MigrationInterface {
       \`body\` mediumblob NOT NULL,
       \`recorded_at\` datetime(3) NOT NULL,
       PRIMARY KEY (\`site_id\`, \`revision\`),
-      CONSTRAINT \`fk_patch_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`)
+      CONSTRAINT \`fk_patch_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
     await runner.query(`CREATE TABLE \`request_record\` (
       \`site_id\` char(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
@@ -31,7 +31,7 @@ export class CreateSiteHeads1796083200004 implements MigrationInterface {
       \`answer\` longtext NOT NULL,
       \`recorded_at\` datetime(3) NOT NULL,
       PRIMARY KEY (\`site_id\`, \`id\`),
-      CONSTRAINT \`fk_request_record_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`)
+      CONSTRAINT \`fk_request_record_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
   }
 

@@ -18,8 +18,8 @@ export class CreateEvents1796083200005 implements MigrationInterface {
       \`hash\` char(64) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
       PRIMARY KEY (\`site_id\`, \`seq\`),
       INDEX \`ix_event_subject\` (\`site_id\`, \`subject_type\`, \`subject_id\`, \`seq\`),
-      CONSTRAINT \`fk_event_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`),
-      CONSTRAINT \`fk_event_actor\` FOREIGN KEY (\`actor_id\`) REFERENCES \`user\` (\`id\`)
+      CONSTRAINT \`fk_event_site\` FOREIGN KEY (\`site_id\`) REFERENCES \`site\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION,
+      CONSTRAINT \`fk_event_actor\` FOREIGN KEY (\`actor_id\`) REFERENCES \`user\` (\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION
     ) ENGINE=InnoDB`)
     await runner.query(`CREATE TRIGGER \`event_refuses_update\` BEFORE UPDATE ON \`event\` FOR EACH ROW
       SIGNAL SQLSTATE '45000' SET MESSAGE_TEXT = 'The audit trail is only added to: an event is never changed'`)

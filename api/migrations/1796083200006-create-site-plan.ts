@@ -105,19 +105,19 @@ const UP = [
   ) ENGINE=InnoDB`,
   `ALTER TABLE \`zone\`
     ADD CONSTRAINT \`fk_zone_site\` FOREIGN KEY (\`site_id\`)
-    REFERENCES \`site\`(\`id\`)`,
+    REFERENCES \`site\`(\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`specification\`
     ADD CONSTRAINT \`fk_specification_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`cell\`
     ADD CONSTRAINT \`fk_cell_site\` FOREIGN KEY (\`site_id\`)
-    REFERENCES \`site\`(\`id\`)`,
+    REFERENCES \`site\`(\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`borrow_material\`
     ADD CONSTRAINT \`fk_borrow_material_site\` FOREIGN KEY (\`site_id\`)
-    REFERENCES \`site\`(\`id\`)`,
+    REFERENCES \`site\`(\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`reference_curve\`
     ADD CONSTRAINT \`fk_reference_curve_material\` FOREIGN KEY (\`site_id\`, \`material_id\`)
-    REFERENCES \`borrow_material\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`borrow_material\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
 ]
 
 const DOWN = [

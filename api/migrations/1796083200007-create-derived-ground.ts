@@ -79,16 +79,16 @@ const UP = [
   ) ENGINE=InnoDB`,
   `ALTER TABLE \`lot\`
     ADD CONSTRAINT \`fk_lot_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`cell_lift\`
     ADD CONSTRAINT \`fk_cell_lift_cell\` FOREIGN KEY (\`site_id\`, \`cell\`)
-    REFERENCES \`cell\`(\`site_id\`,\`cell\`)`,
+    REFERENCES \`cell\`(\`site_id\`,\`cell\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`lift_total\`
     ADD CONSTRAINT \`fk_lift_total_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`allocation\`
     ADD CONSTRAINT \`fk_allocation_lot\` FOREIGN KEY (\`site_id\`, \`lot_id\`)
-    REFERENCES \`lot\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`lot\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
 ]
 
 const DOWN = [

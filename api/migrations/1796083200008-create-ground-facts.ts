@@ -256,52 +256,52 @@ const UP = [
   ) ENGINE=InnoDB`,
   `ALTER TABLE \`placement\`
     ADD CONSTRAINT \`fk_placement_material\` FOREIGN KEY (\`site_id\`, \`material_id\`)
-    REFERENCES \`borrow_material\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`borrow_material\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`placement\`
     ADD CONSTRAINT \`fk_placement_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`placement_cell\`
     ADD CONSTRAINT \`fk_placement_cell_placement\` FOREIGN KEY (\`site_id\`, \`placement_id\`)
-    REFERENCES \`placement\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`placement\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`field_test\`
     ADD CONSTRAINT \`fk_field_test_curve\` FOREIGN KEY (\`site_id\`, \`curve_id\`)
-    REFERENCES \`reference_curve\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`reference_curve\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`field_test\`
     ADD CONSTRAINT \`fk_field_test_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`test_mark\`
     ADD CONSTRAINT \`fk_test_mark_test\` FOREIGN KEY (\`site_id\`, \`test_id\`)
-    REFERENCES \`field_test\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`field_test\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`stake\`
     ADD CONSTRAINT \`fk_stake_lot\` FOREIGN KEY (\`site_id\`, \`lot_id\`)
-    REFERENCES \`lot\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`lot\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`rework_order\`
     ADD CONSTRAINT \`fk_rework_order_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`rework_cell\`
     ADD CONSTRAINT \`fk_rework_cell_order\` FOREIGN KEY (\`site_id\`, \`order_id\`)
-    REFERENCES \`rework_order\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`rework_order\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`rework_step\`
     ADD CONSTRAINT \`fk_rework_step_order\` FOREIGN KEY (\`site_id\`, \`order_id\`)
-    REFERENCES \`rework_order\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`rework_order\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`release_record\`
     ADD CONSTRAINT \`fk_release_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
-    REFERENCES \`zone\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`release_cell\`
     ADD CONSTRAINT \`fk_release_cell_release\` FOREIGN KEY (\`site_id\`, \`release_id\`)
-    REFERENCES \`release_record\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`release_record\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`inspection\`
     ADD CONSTRAINT \`fk_inspection_site\` FOREIGN KEY (\`site_id\`)
-    REFERENCES \`site\`(\`id\`)`,
+    REFERENCES \`site\`(\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`inspection_cell\`
     ADD CONSTRAINT \`fk_inspection_cell_inspection\` FOREIGN KEY (\`site_id\`, \`inspection_id\`)
-    REFERENCES \`inspection\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`inspection\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`disposition\`
     ADD CONSTRAINT \`fk_disposition_site\` FOREIGN KEY (\`site_id\`)
-    REFERENCES \`site\`(\`id\`)`,
+    REFERENCES \`site\`(\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`disposition_cell\`
     ADD CONSTRAINT \`fk_disposition_cell_disposition\` FOREIGN KEY (\`site_id\`, \`disposition_id\`)
-    REFERENCES \`disposition\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`disposition\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
 ]
 
 const DOWN = [
