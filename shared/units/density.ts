@@ -18,6 +18,15 @@ const KG_PER_M3 = {
 
 export type DensityUnit = keyof typeof KG_PER_M3
 
+/** How each unit is written on sheets. */
+export const DENSITY_UNIT_LABEL: Readonly<Record<DensityUnit, string>> = {
+  'kg/m3': 'kg/m³',
+  'g/cm3': 'g/cm³',
+  pcf: 'pcf',
+  'kN/m3': 'kN/m³',
+  'lb/yd3': 'lb/yd³',
+}
+
 /**
  * Converts a density or unit weight.
  * @param value in `from`, any finite number
