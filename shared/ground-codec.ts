@@ -67,6 +67,8 @@ const patchTailSchema = z.object({
 
 export interface GroundPatch {
   readonly revision: number
+  /** revision of the patch before this one, 0 for the first: revisions between changed nothing on the Ground */
+  readonly base: number
   readonly entries: readonly PatchEntry[]
   /** ids of lots whose figures changed */
   readonly lots: readonly string[]
@@ -78,7 +80,7 @@ export interface GroundPatch {
 const CELL_BYTES = 1 + 1 + 2 + 4 + 4 + 4
 const SHEET_HEADER = 4 + 8 + 8 + 4
 const ENTRY_BYTES = 4 + 2 * (2 + 1 + 1 + 4 + 4 + 4)
-const PATCH_HEADER = 4 + 8 + 4 + 4
+const PATCH_HEADER = 4 + 8 + 8 + 4 + 4
 
 /** Bytes of a sheet. The surface cut is carried as NaN in the place of the elevation. */
 export function encodeSheet(sheet: GroundSheet): Uint8Array {
@@ -161,8 +163,9 @@ export function encodePatch(patch: GroundPatch): Uint8Array {
   const view = new DataView(bytes.buffer)
   view.setUint32(0, PATCH_MAGIC, true)
   view.setFloat64(4, patch.revision, true)
-  view.setUint32(12, patch.entries.length, true)
-  view.setUint32(16, tail.length, true)
+  view.setFloat64(12, patch.base, true)
+  view.setUint32(20, patch.entries.length, true)
+  view.setUint32(24, tail.length, true)
   let at = PATCH_HEADER
   for (const entry of patch.entries) {
     view.setUint32(at, entry.cell, true)
@@ -183,8 +186,8 @@ export function decodePatch(bytes: Uint8Array): GroundPatch {
   if (bytes.byteLength < PATCH_HEADER || view.getUint32(0, true) !== PATCH_MAGIC) {
     throw new Error('These bytes are not a patch of the Ground')
   }
-  const count = view.getUint32(12, true)
-  const tailLength = view.getUint32(16, true)
+  const count = view.getUint32(20, true)
+  const tailLength = view.getUint32(24, true)
   if (bytes.byteLength !== PATCH_HEADER + count * ENTRY_BYTES + tailLength) {
     throw new Error('The patch of the Ground is cut short')
   }
@@ -194,7 +197,7 @@ export function decodePatch(bytes: Uint8Array): GroundPatch {
     entries.push({ cell: view.getUint32(at, true), ...readStanding(view, at + 4), surface: readStanding(view, at + 20) })
   }
   const tail = patchTailSchema.parse(JSON.parse(new TextDecoder().decode(bytes.subarray(at))))
-  return { revision: view.getFloat64(4, true), entries, ...tail }
+  return { revision: view.getFloat64(4, true), base: view.getFloat64(12, true), entries, ...tail }
 }
 
 /**

@@ -46,10 +46,12 @@ const UP = [
     \`placement_id\` char(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
     \`cell\` int NOT NULL,
     \`lift\` int NOT NULL,
+    \`lot_id\` char(36) CHARACTER SET ascii COLLATE ascii_bin NOT NULL,
     \`quarters\` tinyint UNSIGNED NOT NULL,
     \`volume_cm3\` bigint NOT NULL,
     \`covered_early\` tinyint NOT NULL,
     INDEX \`ix_placement_cell_place\` (\`site_id\`, \`lift\`, \`cell\`),
+    INDEX \`ix_placement_cell_lot\` (\`site_id\`, \`lot_id\`),
     PRIMARY KEY (\`site_id\`, \`placement_id\`, \`cell\`)
   ) ENGINE=InnoDB`,
   `CREATE TABLE \`field_test\` (
@@ -260,6 +262,9 @@ const UP = [
   `ALTER TABLE \`placement\`
     ADD CONSTRAINT \`fk_placement_zone\` FOREIGN KEY (\`site_id\`, \`zone_id\`)
     REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
+  `ALTER TABLE \`placement_cell\`
+    ADD CONSTRAINT \`fk_placement_cell_lot\` FOREIGN KEY (\`site_id\`, \`lot_id\`)
+    REFERENCES \`lot\`(\`site_id\`,\`id\`)`,
   `ALTER TABLE \`placement_cell\`
     ADD CONSTRAINT \`fk_placement_cell_placement\` FOREIGN KEY (\`site_id\`, \`placement_id\`)
     REFERENCES \`placement\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,

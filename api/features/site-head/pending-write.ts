@@ -7,6 +7,7 @@ import { hashOfEvent } from '#api/features/site-head/event-chain.ts'
 import type { RunningNumber, SiteRead, SiteWrite } from '#api/features/site-head/site-write.ts'
 import type { Publication } from '#api/realtime/publish.ts'
 import { encodePatch } from '#shared/ground-codec.ts'
+import type { GroundPatch } from '#shared/ground-codec.ts'
 
 /** How many patches a site keeps for clients that catch up. */
 export const PATCHES_KEPT = 10_000
@@ -32,7 +33,7 @@ export function startWrite(read: Omit<SiteRead, 'revision'>, head: SiteHeadEntit
   const revision = head.revision + 1
   const events: EventEntity[] = []
   const notices: Publication[] = []
-  let patchBody: Uint8Array | null = null
+  let groundPatch: Omit<GroundPatch, 'revision' | 'base'> | null = null
 
   const write: SiteWrite = {
     ...read,
@@ -59,8 +60,8 @@ export function startWrite(read: Omit<SiteRead, 'revision'>, head: SiteHeadEntit
       head.chainHead = event.hash
     },
     patch(patch) {
-      if (patchBody) throw new Error('A write changes the Ground once: merge its patches')
-      patchBody = encodePatch({ ...patch, revision })
+      if (groundPatch) throw new Error('A write changes the Ground once: merge its patches')
+      groundPatch = patch
     },
     changed(resource, id) {
       notices.push({ to: 'site', event: { type: 'site:changed', siteId, resource, id, updatedAt: now.toISOString(), revision } })
@@ -72,12 +73,21 @@ export function startWrite(read: Omit<SiteRead, 'revision'>, head: SiteHeadEntit
 
   async function finish(): Promise<readonly Publication[]> {
     if (events.length > 0) await manager.insert(EventEntity, events)
-    if (patchBody) await storePatch(manager, { siteId, revision, body: Buffer.from(patchBody), recordedAt: now })
     await manager.update(SiteHeadEntity, { siteId }, { ...head, revision })
-    return patchBody ? [{ to: 'site', patch: { siteId, revision, body: patchBody } }, ...notices] : notices
+    if (!groundPatch) return notices
+    const base = await lastPatchRevision(manager, siteId)
+    const body = encodePatch({ ...groundPatch, revision, base })
+    await storePatch(manager, { siteId, revision, body: Buffer.from(body), recordedAt: now })
+    return [{ to: 'site', patch: { siteId, revision, body } }, ...notices]
   }
 
   return { write, finish }
+}
+
+/** Revision of the last change of the Ground, 0 before the first. */
+export async function lastPatchRevision(manager: EntityManager, siteId: string): Promise<number> {
+  const rows: { revision: string | null }[] = await manager.query('SELECT MAX(`revision`) AS `revision` FROM `patch` WHERE `site_id` = ?', [siteId])
+  return Number(rows[0]?.revision ?? 0)
 }
 
 async function storePatch(manager: EntityManager, patch: PatchEntity): Promise<void> {

@@ -31,7 +31,7 @@ export interface SiteWrite extends SiteRead {
   /** appends to the audit trail; happenedAt is now unless the act was earlier */
   record(verb: string, subject: { type: string; id: string }, payload: object, happenedAt?: Date): void
   /** what the change does to the Ground; at most once in a write */
-  patch(patch: Omit<GroundPatch, 'revision'>): void
+  patch(patch: Omit<GroundPatch, 'revision' | 'base'>): void
   /** tells open boards, after the commit, to fetch this again */
   changed(resource: ChangedResource, id: string): void
   /** tells one person, after the commit, of a change of the membership (null: taken away) */
