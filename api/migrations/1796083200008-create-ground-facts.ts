@@ -264,7 +264,7 @@ const UP = [
     REFERENCES \`zone\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`placement_cell\`
     ADD CONSTRAINT \`fk_placement_cell_lot\` FOREIGN KEY (\`site_id\`, \`lot_id\`)
-    REFERENCES \`lot\`(\`site_id\`,\`id\`)`,
+    REFERENCES \`lot\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,
   `ALTER TABLE \`placement_cell\`
     ADD CONSTRAINT \`fk_placement_cell_placement\` FOREIGN KEY (\`site_id\`, \`placement_id\`)
     REFERENCES \`placement\`(\`site_id\`,\`id\`) ON DELETE NO ACTION ON UPDATE NO ACTION`,

@@ -30,9 +30,8 @@ export const roundingSchema = z.discriminatedUnion('method', [
 
 /** Frequency rules in shared units (shared/domain/frequency-rule.ts). */
 export const frequencyRuleSchema = z.discriminatedUnion('kind', [
-  z.object({ kind: z.literal('volume'), scope: z.enum(['lot', 'running']), perCm3: z.number().positive() }),
-  z.object({ kind: z.literal('area'), perMm2: z.number().positive() }),
-  z.object({ kind: z.literal('length'), perMm: z.number().positive() }),
+  z.object({ kind: z.literal('volume'), scope: z.literal('lot'), perCm3: z.number().int().positive() }),
+  z.object({ kind: z.literal('area'), perMm2: z.number().int().positive() }),
   z.object({ kind: z.literal('per-lot'), atLeast: z.number().int().min(1).max(50) }),
   z.object({ kind: z.literal('per-lift-day'), atLeast: z.number().int().min(1).max(50) }),
 ])
