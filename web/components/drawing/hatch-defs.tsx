@@ -43,7 +43,7 @@ export function HatchDefs() {
         {states.flatMap((state) =>
           [false, true].map((near) => {
             const look = stateLook(state)
-            // Ten near-limit lines fit the tile of any hatch they lie over only where the two share a size.
+            // The product of two spacings is a tile that both repeat in without a seam.
             const tile = near ? look.hatch.spacing * look.nearHatch.spacing : look.hatch.spacing
             return (
               <pattern key={hatchId(state, near)} id={hatchId(state, near)} width={tile} height={tile} patternUnits="userSpaceOnUse">
