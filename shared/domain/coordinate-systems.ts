@@ -1,4 +1,5 @@
 import proj4 from 'proj4'
+import type { Converter } from 'proj4'
 import { STATE_PLANE_SYSTEMS } from './state-plane-systems.ts'
 import type { PlanUnit, SitePoint } from './site-geometry.ts'
 
@@ -90,9 +91,9 @@ export function findCoordinateSystem(code: string): CoordinateSystem | undefined
   return COORDINATE_SYSTEMS.find((system) => system.code === code)
 }
 
-const converters = new Map<string, ReturnType<typeof proj4>>()
+const converters = new Map<string, Converter>()
 
-function converterOf(system: CoordinateSystem): ReturnType<typeof proj4> {
+function converterOf(system: CoordinateSystem): Converter {
   const known = converters.get(system.proj4)
   if (known !== undefined) return known
   const made = proj4(system.proj4)

@@ -71,7 +71,7 @@ export function cellRectangle(grid: GridDefinition, { column, row }: CellAddress
 
 /** Index k of the half-open step [k·side, (k+1)·side) that holds the value, exact at the edges. */
 function stepOf(value: number, side: number): number {
-  const guess = Math.floor(value / side)
+  const guess = Math.floor(value / side) + 0
   // the quotient can round across an edge that the products k·side put on the other side
   if (value < guess * side) return guess - 1
   if (value >= (guess + 1) * side) return guess + 1

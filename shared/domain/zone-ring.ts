@@ -33,18 +33,23 @@ function sidesMeet([a, b]: Side, [c, d]: Side): boolean {
   )
 }
 
+function headsBack(a: SitePoint, b: SitePoint, c: SitePoint): boolean {
+  return (b.easting - a.easting) * (c.easting - b.easting) + (b.northing - a.northing) * (c.northing - b.northing) < 0
+}
+
 function checkSides(ring: SiteRing): RingCheck {
   const sides = sidesOf(ring)
   const name = (i: number) => `${i + 1}–${((i + 1) % ring.length) + 1}`
-  for (const [i, side] of sides.entries()) {
-    const [a, b] = side
+  for (const [i, [a, b]] of sides.entries()) {
     if (a.easting === b.easting && a.northing === b.northing) {
       return refuse(`Points ${name(i).replace('–', ' and ')} are at the same place.`)
     }
     const next = sides[(i + 1) % sides.length]?.[1]
-    if (next && turn(a, b, next) === 0 && (b.easting - a.easting) * (next.easting - b.easting) + (b.northing - a.northing) * (next.northing - b.northing) < 0) {
+    if (next && turn(a, b, next) === 0 && headsBack(a, b, next)) {
       return refuse(`The outline doubles back on itself at point ${((i + 1) % ring.length) + 1}.`)
     }
+  }
+  for (const [i, side] of sides.entries()) {
     for (let j = i + 2; j < sides.length; j++) {
       const other = sides[j]
       const adjacent = i === 0 && j === sides.length - 1
@@ -73,14 +78,16 @@ function distanceToSide([a, b]: Side, point: SitePoint): number {
   return Math.hypot(a.easting + share * de - point.easting, a.northing + share * dn - point.northing)
 }
 
-/** Places along a side, as shares of it, where the boundary's sides cross its line. */
-function crossingShares([a, b]: Side, boundary: readonly Side[]): number[] {
+/** Places along a side, as shares of it, where the boundary meets it: crossings and corners beside it. */
+function crossingShares(side: Side, boundary: readonly Side[]): number[] {
+  const [a, b] = side
   const shares: number[] = []
-  for (const [c, d] of boundary) {
+  for (const other of boundary) {
+    const [c, d] = other
     const before = turn(c, d, a)
     const after = turn(c, d, b)
-    if (before !== after) shares.push(before / (before - after))
-    // a corner of the boundary beside the line also parts it
+    if (before !== after && sidesMeet(side, other)) shares.push(before / (before - after))
+    if (distanceToSide(side, c) > 2 * ALONG_BOUNDARY) continue
     const [de, dn] = [b.easting - a.easting, b.northing - a.northing]
     shares.push(((c.easting - a.easting) * de + (c.northing - a.northing) * dn) / (de * de + dn * dn))
   }
@@ -91,9 +98,10 @@ function checkInside(ring: SiteRing, boundary: SiteRing): RingCheck {
   const sides = sidesOf(boundary)
   const allowed = (point: SitePoint) =>
     ringContains(boundary, point) || sides.some((side) => distanceToSide(side, point) <= ALONG_BOUNDARY)
+  const out = ring.findIndex((point) => !allowed(point))
+  if (out >= 0) return refuse(`Point ${out + 1} is outside the site's boundary.`)
   for (const [i, side] of sidesOf(ring).entries()) {
     const [a, b] = side
-    if (!allowed(a)) return refuse(`Point ${i + 1} is outside the site's boundary.`)
     const cuts = [0, ...crossingShares(side, sides).sort((p, q) => p - q), 1]
     for (const [k, cut] of cuts.entries()) {
       const share = (cut + (cuts[k + 1] ?? 1)) / 2
