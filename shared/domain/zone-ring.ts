@@ -24,8 +24,16 @@ function within(a: SitePoint, b: SitePoint, c: SitePoint): boolean {
   return inside(a.easting, b.easting, c.easting) && inside(a.northing, b.northing, c.northing)
 }
 
+/** Whether the boxes round two sides come within a distance: a cheap first question, outlines have thousands of sides. */
+function boxesNear([a, b]: Side, [c, d]: Side, distance: number): boolean {
+  const apart = (p: number, q: number, r: number, s: number) =>
+    Math.max(p, q) + distance < Math.min(r, s) || Math.max(r, s) + distance < Math.min(p, q)
+  return !apart(a.easting, b.easting, c.easting, d.easting) && !apart(a.northing, b.northing, c.northing, d.northing)
+}
+
 /** Whether two sides meet anywhere, touching included. */
 function sidesMeet([a, b]: Side, [c, d]: Side): boolean {
+  if (!boxesNear([a, b], [c, d], 0)) return false
   const [atC, atD, atA, atB] = [turn(a, b, c), turn(a, b, d), turn(c, d, a), turn(c, d, b)].map(Math.sign)
   if (atC !== atD && atA !== atB) return true
   return (
@@ -61,9 +69,9 @@ function checkSides(ring: SiteRing): RingCheck {
   return OK
 }
 
-function ringContains(ring: SiteRing, point: SitePoint): boolean {
+function sidesHold(sides: readonly Side[], point: SitePoint): boolean {
   let inside = false
-  for (const [a, b] of sidesOf(ring)) {
+  for (const [a, b] of sides) {
     if (a.northing > point.northing === b.northing > point.northing) continue
     const share = (point.northing - a.northing) / (b.northing - a.northing)
     if (point.easting < a.easting + share * (b.easting - a.easting)) inside = !inside
@@ -83,6 +91,7 @@ function crossingShares(side: Side, boundary: readonly Side[]): number[] {
   const [a, b] = side
   const shares: number[] = []
   for (const other of boundary) {
+    if (!boxesNear(side, other, 2 * ALONG_BOUNDARY)) continue
     const [c, d] = other
     const before = turn(c, d, a)
     const after = turn(c, d, b)
@@ -97,7 +106,7 @@ function crossingShares(side: Side, boundary: readonly Side[]): number[] {
 function checkInside(ring: SiteRing, boundary: SiteRing): RingCheck {
   const sides = sidesOf(boundary)
   const allowed = (point: SitePoint) =>
-    ringContains(boundary, point) || sides.some((side) => distanceToSide(side, point) <= ALONG_BOUNDARY)
+    sidesHold(sides, point) || sides.some((side) => distanceToSide(side, point) <= ALONG_BOUNDARY)
   const out = ring.findIndex((point) => !allowed(point))
   if (out >= 0) return refuse(`Point ${out + 1} is outside the site's boundary.`)
   for (const [i, side] of sidesOf(ring).entries()) {
