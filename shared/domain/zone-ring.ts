@@ -20,15 +20,23 @@ function turn(a: SitePoint, b: SitePoint, c: SitePoint): number {
 }
 
 function within(a: SitePoint, b: SitePoint, c: SitePoint): boolean {
-  const inside = (p: number, q: number, x: number) => Math.min(p, q) <= x && x <= Math.max(p, q)
-  return inside(a.easting, b.easting, c.easting) && inside(a.northing, b.northing, c.northing)
+  return between(a.easting, b.easting, c.easting) && between(a.northing, b.northing, c.northing)
+}
+
+// functions of their own: one made anew at each call costs more here than what it computes
+function between(p: number, q: number, x: number): boolean {
+  return Math.min(p, q) <= x && x <= Math.max(p, q)
+}
+
+function spansNear(p: number, q: number, r: number, s: number, distance: number): boolean {
+  return Math.max(p, q) + distance >= Math.min(r, s) && Math.max(r, s) + distance >= Math.min(p, q)
 }
 
 /** Whether the boxes round two sides come within a distance: a cheap first question, outlines have thousands of sides. */
 function boxesNear([a, b]: Side, [c, d]: Side, distance: number): boolean {
-  const apart = (p: number, q: number, r: number, s: number) =>
-    Math.max(p, q) + distance < Math.min(r, s) || Math.max(r, s) + distance < Math.min(p, q)
-  return !apart(a.easting, b.easting, c.easting, d.easting) && !apart(a.northing, b.northing, c.northing, d.northing)
+  return (
+    spansNear(a.easting, b.easting, c.easting, d.easting, distance) && spansNear(a.northing, b.northing, c.northing, d.northing, distance)
+  )
 }
 
 /** Whether two sides meet anywhere, touching included. */
