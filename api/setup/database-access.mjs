@@ -1,5 +1,6 @@
 import { randomBytes } from 'node:crypto'
 import { findProgram, runOrFail } from './commands.mjs'
+import { userName } from './mariadb.mjs'
 
 export const APPLICATION_USER = 'hardpan'
 
@@ -18,7 +19,7 @@ export async function grantAccess(instance, { password, database, grantOn }) {
   ]
   if (database !== undefined) statements.push(`CREATE DATABASE IF NOT EXISTS \`${database}\` CHARACTER SET utf8mb4 COLLATE utf8mb4_unicode_ci`)
   // By standard input: a command line can be read by every user of the machine.
-  await runOrFail(findProgram('mariadb') ?? 'mariadb', ['--no-defaults', `--socket=${instance.socket}`, '--user=root'], {
+  await runOrFail(findProgram('mariadb') ?? 'mariadb', ['--no-defaults', `--socket=${instance.socket}`, `--user=${userName()}`], {
     input: `${statements.join(';\n')};\n`,
     failure: 'The database refused to set up its user:',
   })

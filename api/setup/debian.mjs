@@ -77,5 +77,5 @@ async function updateLists(prefix, apt) {
 /** @param {string[]} prefix @param {string} apt @param {string[]} args */
 function aptGet(prefix, apt, args) {
   const words = [...prefix, '/usr/bin/env', 'DEBIAN_FRONTEND=noninteractive', 'LC_ALL=C', apt, '-q', '-o', `DPkg::Lock::Timeout=${LOCK_WAIT_SECONDS}`, ...args]
-  return run(words[0] ?? apt, words.slice(1))
+  return run(words[0] ?? apt, words.slice(1), { uninterruptible: true })
 }

@@ -1,6 +1,8 @@
 import { stopRunningCommands } from './commands.mjs'
 import { describeFailure, say, SetupError } from './say.mjs'
 
+// npm passes Ctrl-C on to a program that has had it from the terminal already: only a later one is a second Ctrl-C.
+const ONE_CTRL_C_MS = 1000
 const EXIT_CODES = { SIGINT: 130, SIGTERM: 143, SIGHUP: 129 }
 
 /**
@@ -23,6 +25,7 @@ export async function runLifetime(main) {
 /** What must be stopped before the command may exit. */
 export class Lifetime {
   ending = false
+  #endingSince = 0
   /** @type {(() => unknown)[]} */
   #stops = []
   /** @type {(() => void)[]} */
@@ -46,11 +49,12 @@ export class Lifetime {
   /** @param {number} code */
   async end(code) {
     if (this.ending) {
-      for (const hurry of this.#hurries) hurry()
+      if (Date.now() - this.#endingSince > ONE_CTRL_C_MS) for (const hurry of this.#hurries) hurry()
       return
     }
     this.ending = true
-    stopRunningCommands()
+    this.#endingSince = Date.now()
+    await stopRunningCommands()
     for (let stop = this.#stops.pop(); stop !== undefined; stop = this.#stops.pop()) {
       try {
         await stop()

@@ -20,7 +20,7 @@ export function tryLock(file, about) {
   writeFileSync(draft, JSON.stringify({ pid: process.pid, about }))
   try {
     for (let attempt = 0; attempt < 5; attempt += 1) {
-      if (placed(draft, file)) return { release: () => rmSync(file, { force: true }) }
+      if (placed(draft, file)) return { release: releaser(file) }
       const holder = readHolder(file)
       if (holder !== null && isHolding(holder)) return { holder }
       rmSync(file, { force: true })
@@ -29,6 +29,16 @@ export function tryLock(file, about) {
     rmSync(draft, { force: true })
   }
   throw new SetupError(`The lock ${file} cannot be taken. Remove it if nothing of Hardpan is running.`)
+}
+
+/** Removes the lock once; at the latest when the process exits. @param {string} file */
+function releaser(file) {
+  const release = () => {
+    process.off('exit', release)
+    rmSync(file, { force: true })
+  }
+  process.on('exit', release)
+  return release
 }
 
 /** Waits for the lock, saying so once. @param {string} file @param {string} about @param {number} withinMs */

@@ -13,13 +13,14 @@ import { say, SetupError } from './say.mjs'
  * @typedef {object} Instance
  * @property {number} pid
  * @property {number} port on 127.0.0.1
- * @property {string} socket the only way in for root
+ * @property {string} socket the only way in for its administrator
  * @property {string} runFolder holds the socket; readable by this user only
  * @property {string} folder holds the data directory, the record and the log
  */
 
 /** @typedef {{ port: number, socket: string, runFolder: string }} Place */
 
+const RUN_FOLDER_PREFIX = 'hardpan-db-'
 const READY_WITHIN_MS = 60_000
 const STOP_WITHIN_MS = 30_000
 // Debian's default of 96 MB of redo log is far more than a private instance needs on a laptop's disk.
@@ -43,13 +44,14 @@ export const filesOf = (folder) => ({
 export async function startMariadb(folder, { throwAway = false, onSpawn = () => undefined } = {}) {
   mkdirSync(folder, { recursive: true, mode: 0o700 })
   const files = filesOf(folder)
-  checkOwner(files.data)
+  checkDataDirectory(files.data)
   const orphan = await adoptOrphan(folder)
   if (orphan !== null) {
     onSpawn(orphan)
     say(`Using the database an earlier run left running (process ${orphan.pid}).`)
     return orphan
   }
+  removeLeftovers(files)
   if (!existsSync(files.data)) await createDataDirectory(files)
   for (let attempt = 1; ; attempt += 1) {
     const instance = await launch(folder, throwAway, onSpawn)
@@ -84,7 +86,7 @@ export function findRunning(folder) {
 
 /** @param {Place} place */
 async function answers({ socket }) {
-  return (await run(program('mariadb-admin'), ['--no-defaults', `--socket=${socket}`, '--user=root', '--connect-timeout=5', 'ping'])).code === 0
+  return (await run(program('mariadb-admin'), ['--no-defaults', `--socket=${socket}`, `--user=${userName()}`, '--connect-timeout=5', 'ping'])).code === 0
 }
 
 /** @param {string} folder */
@@ -97,10 +99,24 @@ async function adoptOrphan(folder) {
   return null
 }
 
-/** @param {string} data */
-function checkOwner(data) {
+/** The socket's folder of a server that was ended without a word. @param {ReturnType<typeof filesOf>} files */
+function removeLeftovers(files) {
+  try {
+    const { runFolder } = /** @type {Place} */ (JSON.parse(readFileSync(files.record, 'utf8')))
+    if (path.basename(runFolder).startsWith(RUN_FOLDER_PREFIX)) rmSync(runFolder, { recursive: true, force: true })
+  } catch {
+    // No record, or none that can be read: nothing is known to be left over.
+  }
+  rmSync(files.record, { force: true })
+  rmSync(files.pid, { force: true })
+}
+
+/** What can be told before the server tries, which would leave files in a folder that is no database. @param {string} data */
+function checkDataDirectory(data) {
+  if (!existsSync(data)) return
+  if (!existsSync(path.join(data, 'mysql'))) throw new SetupError(`${data} is not a whole database: its own tables are missing.\n${moveAway(data)}`)
   const uid = process.getuid?.()
-  if (uid === undefined || !existsSync(data)) return
+  if (uid === undefined) return
   const owner = statSync(data).uid
   if (owner === uid) return
   throw new SetupError(`${data} belongs to user number ${owner}, and this is user number ${uid}. Start Hardpan as that user.`)
@@ -109,7 +125,7 @@ function checkOwner(data) {
 /** Made beside its place and moved there when whole, so that an interrupted start leaves no half-made database. @param {ReturnType<typeof filesOf>} files */
 async function createDataDirectory(files) {
   rmSync(files.unfinished, { recursive: true, force: true })
-  const user = os.userInfo().username
+  const user = userName()
   const args = ['--no-defaults', `--datadir=${files.unfinished}`, '--skip-test-db', '--skip-name-resolve', LOG_SIZE]
   args.push('--auth-root-authentication-method=socket', `--auth-root-socket-user=${user}`)
   if (user === 'root') args.push('--user=root')
@@ -151,7 +167,7 @@ async function launch(folder, throwAway, onSpawn) {
 async function makePlace() {
   // The path of a Unix socket may have 107 bytes at most.
   const base = os.tmpdir().length > 60 ? '/tmp' : os.tmpdir()
-  const runFolder = mkdtempSync(path.join(base, 'hardpan-db-'))
+  const runFolder = mkdtempSync(path.join(base, RUN_FOLDER_PREFIX))
   mkdirSync(path.join(runFolder, 'files'), { mode: 0o700 })
   return { port: await freePort(), socket: path.join(runFolder, 'socket'), runFolder }
 }
@@ -197,9 +213,21 @@ export function cannotOpenMessage(folder, log) {
   const inUse = /Unable to lock|Can't lock aria control file|errno: 11/i.test(log)
   const remedy = inUse
     ? 'Another MariaDB server has it open: stop that one, then start again.'
-    : `Nothing was changed in it. To begin with a fresh demo, move it away: mv ${data} ${data}.broken`
+    : `Nothing was removed from it. ${moveAway(data)}`
   return `The database in ${data} cannot be opened:\n${reason}\nThe whole log is ${file}.\n${remedy}`
 }
+
+/** The database's root goes by the name of the user who runs it, and is let in by the socket only as that user. @returns {string} */
+export function userName() {
+  try {
+    return os.userInfo().username
+  } catch {
+    throw new SetupError(`User number ${process.getuid?.()} has no name on this machine, which the database needs.`)
+  }
+}
+
+/** @param {string} data */
+const moveAway = (data) => `To begin with a fresh demo, move it away: mv ${data} ${data}.broken`
 
 /** @param {string} name */
 function program(name) {

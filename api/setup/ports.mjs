@@ -62,8 +62,9 @@ export function describeHolder(port) {
   const pid = findListener(port)
   if (pid === null) return 'another program'
   const folder = workingDirectory(pid)
-  if (folder !== null && isCheckout(folder)) return `the Hardpan checkout in ${folder} (process ${pid})`
-  return `${path.basename(commandLine(pid)[0] ?? 'another program')} (process ${pid})`
+  const name = path.basename(commandLine(pid)[0] ?? 'another program')
+  if (folder !== null && name.startsWith('node') && isCheckout(folder)) return `the Hardpan checkout in ${folder} (process ${pid})`
+  return `${name} (process ${pid})`
 }
 
 /** @param {string} folder */
