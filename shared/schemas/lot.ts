@@ -1,7 +1,8 @@
 import { z } from 'zod'
+import { LOT_STANDINGS } from '#shared/domain/lot-facts.ts'
 import { idSchema, instantSchema } from '#shared/schemas/common.ts'
 
-export const lotStandingSchema = z.enum(['owes', 'rework', 'suspect', 'waiting-release', 'released'])
+export const lotStandingSchema = z.enum(LOT_STANDINGS)
 
 export const lotSchema = z.object({
   id: z.string(),
