@@ -1,0 +1,31 @@
+/** Addresses of the pages: patterns for the router, functions for links. */
+export const PATTERNS = {
+  home: '/',
+  signIn: '/sign-in',
+  ground: '/sites/:siteId/ground',
+  frequency: '/sites/:siteId/frequency',
+  tests: '/sites/:siteId/tests',
+  newTest: '/sites/:siteId/tests/new',
+  test: '/sites/:siteId/tests/:testId',
+  rework: '/sites/:siteId/rework',
+  reworkOrder: '/sites/:siteId/rework/:orderId',
+  lab: '/sites/:siteId/lab',
+  parts: '/parts',
+} as const
+
+const site = (siteId: string): string => `/sites/${encodeURIComponent(siteId)}`
+
+export const paths = {
+  home: () => PATTERNS.home,
+  /** @param next where to go on to afterwards; an address of this site. */
+  signIn: (next?: string) => (next === undefined || next === '/' ? PATTERNS.signIn : `${PATTERNS.signIn}?next=${encodeURIComponent(next)}`),
+  ground: (siteId: string) => `${site(siteId)}/ground`,
+  frequency: (siteId: string) => `${site(siteId)}/frequency`,
+  tests: (siteId: string) => `${site(siteId)}/tests`,
+  newTest: (siteId: string) => `${site(siteId)}/tests/new`,
+  test: (siteId: string, testId: string) => `${site(siteId)}/tests/${encodeURIComponent(testId)}`,
+  rework: (siteId: string) => `${site(siteId)}/rework`,
+  reworkOrder: (siteId: string, orderId: string) => `${site(siteId)}/rework/${encodeURIComponent(orderId)}`,
+  lab: (siteId: string) => `${site(siteId)}/lab`,
+  parts: () => PATTERNS.parts,
+} as const
