@@ -87,15 +87,18 @@ export function allocateShares(input: AllocationInput): Allocation {
   const shares: AllocatedShare[] = []
   const distances = measurePairs(slices, points, input)
   let toGive = Math.min(sum(sliceLeft), sum(testLeft))
-  for (const pair of orderPairs(slices, points, distances)) {
-    if (toGive === 0) break
-    const [s, t] = [Math.floor(pair / points.length), pair % points.length]
+  const order = orderPairs(slices, points, distances)
+  for (let turn = 0; toGive > 0; turn++) {
+    const pair = order[turn]
+    const s = Math.floor(pair / points.length)
+    const t = pair % points.length
     const cm3 = Math.min(sliceLeft[s], testLeft[t])
     if (cm3 === 0) continue
     sliceLeft[s] -= cm3
     testLeft[t] -= cm3
     toGive -= cm3
-    const [slice, point] = [slices[s], points[t]]
+    const slice = slices[s]
+    const point = points[t]
     const far = isFar(distances[pair], input.fCm3, input.cellOf(slice.cell).thicknessUm)
     shares.push({ testId: point.testId, cell: slice.cell, slice: slice.slice, cm3, far })
     hold(slice.cell, point.outcome, cm3)
@@ -152,17 +155,20 @@ function measurePairs(slices: readonly AllocationSlice[], points: readonly Alloc
 function orderPairs(slices: readonly AllocationSlice[], points: readonly AllocationPoint[], distances: Float64Array): Uint32Array {
   const times = [...new Set(slices.map((slice) => slice.placedAt))].sort((a, b) => a - b)
   const timeRank = new Map(times.map((time, rank) => [time, rank]))
-  const firstCells = points.map((point) => new Set(point.firstCells))
+  const firstCells = points.map((point) => (point.firstCells === undefined ? null : new Set(point.firstCells)))
+  const sampledAt = Float64Array.from(points, (point) => point.sampledAt)
+  const order = new Uint32Array(distances.length)
   const turns = new Float64Array(distances.length)
   let pair = 0
-  for (const slice of slices) {
-    const later = 2 + (timeRank.get(slice.placedAt) ?? 0)
-    points.forEach((point, t) => {
-      const before = slice.placedAt <= point.sampledAt
-      turns[pair++] = before ? (firstCells[t].has(slice.cell) ? 0 : 1) : later
-    })
+  for (const { cell, placedAt } of slices) {
+    const later = 2 + (timeRank.get(placedAt) ?? 0)
+    for (let t = 0; t < points.length; t++) {
+      turns[pair] = placedAt > sampledAt[t] ? later : firstCells[t]?.has(cell) === true ? 0 : 1
+      order[pair] = pair
+      pair++
+    }
   }
-  return sortStable(sortStable(Uint32Array.from(distances, (_, index) => index), distances), turns)
+  return sortStable(sortStable(order, distances), turns)
 }
 
 function compareText(a: string, b: string): number {

@@ -20,16 +20,13 @@ export type LotAssignment =
   | { readonly cell: number; readonly newLotIndex: number }
 
 export interface LotAssignments {
-  /** in the order of the placed cells */
+  /** one per placed cell; cells that keep their lot first */
   readonly assignments: readonly LotAssignment[]
   /** how many new lots to open */
   readonly newLots: number
   /** lots a placement bridges: every cell of `from` goes `into` the oldest */
   readonly merges: readonly { readonly from: string; readonly into: string }[]
 }
-
-/** A lot that exists, or one to open, as the joining of pieces sees it. */
-type Home = ExistingLot | undefined
 
 /**
  * The lots the cells of one placement belong to (domain section 5). A (cell, lift) already in a lot stays there
@@ -47,32 +44,31 @@ export function assignLots(lots: readonly ExistingLot[], placed: readonly Placed
   const sameKey = lots.filter((lot) => lot.key === key)
   const lotAt = new Map(sameKey.flatMap((lot) => lot.cells.map((cell) => [placeOf(cell), lot] as const)))
 
-  const homeOfCell = new Map<number, Home | number>()
-  const merges: { from: string; into: string }[] = []
-  const mergedInto = new Map<string, ExistingLot>()
+  const mergedInto = new Map<ExistingLot, ExistingLot>()
   const settle = (lot: ExistingLot): ExistingLot => {
-    const into = mergedInto.get(lot.lotId)
+    const into = mergedInto.get(lot)
     return into === undefined ? lot : settle(into)
+  }
+  const homeOf = new Map<number, ExistingLot | number>()
+  for (const { cell } of placed) {
+    const lot = lotOfCell.get(cell)
+    if (lot !== undefined) homeOf.set(cell, lot)
   }
   let newLots = 0
   for (const piece of piecesOf(fresh)) {
-    const touched = [...new Set(piece.flatMap((cell) => placesAround(cell).flatMap((place) => lotAt.get(place) ?? [])).map(settle))]
-    const [oldest, ...others] = touched.sort((a, b) => a.seq - b.seq)
-    for (const lot of others) {
-      mergedInto.set(lot.lotId, oldest)
-      merges.push({ from: lot.lotId, into: oldest.lotId })
-    }
+    const touched = piece.flatMap((cell) => placesAround(cell).flatMap((place) => lotAt.get(place) ?? []))
+    const [oldest, ...others] = [...new Set(touched.map(settle))].sort((a, b) => a.seq - b.seq)
+    for (const lot of others) mergedInto.set(lot, oldest)
     const home = oldest ?? newLots++
-    for (const cell of piece) homeOfCell.set(cell.cell, home)
+    for (const { cell } of piece) homeOf.set(cell, home)
   }
-  const finalLot = (lot: ExistingLot) => settle(lot).lotId
-  const assignments = placed.map(({ cell }): LotAssignment => {
-    const home = homeOfCell.get(cell) ?? lotOfCell.get(cell)
-    if (typeof home === 'number') return { cell, newLotIndex: home }
-    if (home === undefined) throw new RangeError(`Cell ${cell} found no lot`)
-    return { cell, lotId: finalLot(home) }
-  })
-  return { assignments, newLots, merges: merges.map(({ from, into }) => ({ from, into: settleId(into, mergedInto) })) }
+  return {
+    assignments: [...homeOf].map(([cell, home]) =>
+      typeof home === 'number' ? { cell, newLotIndex: home } : { cell, lotId: settle(home).lotId },
+    ),
+    newLots,
+    merges: [...mergedInto.keys()].map((lot) => ({ from: lot.lotId, into: settle(lot).lotId })),
+  }
 }
 
 /** Connected pieces, sides or corners touching, each in the order the cells are given. */
@@ -103,9 +99,4 @@ function placeOf({ column, row }: { readonly column: number; readonly row: numbe
 function placesAround({ column, row }: PlacedCell): string[] {
   const steps = [-1, 0, 1]
   return steps.flatMap((down) => steps.map((right) => placeOf({ column: column + right, row: row + down })))
-}
-
-function settleId(lotId: string, mergedInto: ReadonlyMap<string, ExistingLot>): string {
-  const into = mergedInto.get(lotId)
-  return into === undefined ? lotId : settleId(into.lotId, mergedInto)
 }

@@ -10,19 +10,26 @@ const BASE = 1 << DIGIT_BITS
  */
 export function sortStable(order: Uint32Array, keys: Float64Array): Uint32Array {
   let largest = 0
-  for (const index of order) largest = Math.max(largest, keys[index])
-  let from = order
-  for (let weight = 1; weight <= largest; weight *= BASE) {
-    const to = new Uint32Array(from.length)
-    const starts = new Uint32Array(BASE + 1)
-    for (const index of from) starts[digitOf(keys[index], weight) + 1]++
-    for (let digit = 0; digit < BASE; digit++) starts[digit + 1] += starts[digit]
-    for (const index of from) to[starts[digitOf(keys[index], weight)]++] = index
-    from = to
+  for (let i = 0; i < keys.length; i++) if (keys[i] > largest) largest = keys[i]
+  // two halves of two digits and more, so that digits come by integer shifts
+  const low = new Int32Array(keys.length)
+  const high = new Int32Array(keys.length)
+  for (let i = 0; i < keys.length; i++) {
+    high[i] = Math.floor(keys[i] / (BASE * BASE))
+    low[i] = keys[i] - high[i] * (BASE * BASE)
   }
-  return from
+  let sorted = order
+  for (let digit = 0; BASE ** digit <= largest; digit++) {
+    sorted = sortByDigit(sorted, digit < 2 ? low : high, (digit < 2 ? digit : digit - 2) * DIGIT_BITS)
+  }
+  return sorted
 }
 
-function digitOf(key: number, weight: number): number {
-  return Math.floor(key / weight) % BASE
+function sortByDigit(from: Uint32Array, halves: Int32Array, shift: number): Uint32Array {
+  const to = new Uint32Array(from.length)
+  const starts = new Uint32Array(BASE + 1)
+  for (let i = 0; i < from.length; i++) starts[((halves[from[i]] >>> shift) & (BASE - 1)) + 1]++
+  for (let digit = 0; digit < BASE; digit++) starts[digit + 1] += starts[digit]
+  for (let i = 0; i < from.length; i++) to[starts[(halves[from[i]] >>> shift) & (BASE - 1)]++] = from[i]
+  return to
 }
