@@ -10,6 +10,6 @@ export class SessionEntity {
   @Column({ type: 'int', name: 'expires', unsigned: true })
   expires!: number
 
-  @Column('mediumtext', { name: 'data', nullable: true, collation: 'utf8mb4_bin' })
+  @Column({ type: 'mediumtext', name: 'data', nullable: true, collation: 'utf8mb4_bin' })
   data!: string | null
 }

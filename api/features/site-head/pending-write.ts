@@ -64,10 +64,10 @@ export function startWrite(read: Omit<SiteRead, 'revision'>, head: SiteHeadEntit
       groundPatch = patch
     },
     changed(resource, id) {
-      notices.push({ to: 'site', event: { type: 'site:changed', siteId, resource, id, updatedAt: now.toISOString(), revision } })
+      notices.push({ type: 'site:changed', siteId, resource, id, updatedAt: now.toISOString(), revision })
     },
     memberChanged(userId, role) {
-      notices.push({ to: 'user', userId, event: { type: 'membership:changed', siteId, role } })
+      notices.push({ type: 'member', userId, event: { type: 'membership:changed', siteId, role } })
     },
   }
 
@@ -78,7 +78,7 @@ export function startWrite(read: Omit<SiteRead, 'revision'>, head: SiteHeadEntit
     const base = await lastPatchRevision(manager, siteId)
     const body = encodePatch({ ...groundPatch, revision, base })
     await storePatch(manager, { siteId, revision, body: Buffer.from(body), recordedAt: now })
-    return [{ to: 'site', patch: { siteId, revision, body } }, ...notices]
+    return [{ type: 'patch', siteId, revision, body }, ...notices]
   }
 
   return { write, finish }

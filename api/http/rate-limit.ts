@@ -1,0 +1,47 @@
+import type { Request, RequestHandler } from 'express'
+import { ipKeyGenerator, rateLimit } from 'express-rate-limit'
+import { tooManyRequests } from '#api/errors.ts'
+
+const WINDOW_MS = 15 * 60_000
+/** wrong passwords for one e-mail address from one network address, and for any of them, in the window */
+export const SIGN_IN_LIMITS = { perAccount: 10, perAddress: 100 } as const
+
+interface Counted {
+  readonly limit: number
+  readonly keyOf: (req: Request) => string
+}
+
+function limitFailures({ limit, keyOf }: Counted): RequestHandler {
+  return rateLimit({
+    windowMs: WINDOW_MS,
+    limit,
+    keyGenerator: keyOf,
+    skipSuccessfulRequests: true,
+    standardHeaders: 'draft-7',
+    legacyHeaders: false,
+    handler: (_req, _res, next) => {
+      next(
+        tooManyRequests('Too many sign-ins with a wrong password. Wait a quarter of an hour, then try again.', {
+          retryAfterSeconds: WINDOW_MS / 1000,
+        }),
+      )
+    },
+  })
+}
+
+function addressOf(req: Request): string {
+  return ipKeyGenerator(req.ip ?? '')
+}
+
+function emailOf(req: Request): string {
+  const { email } = (req.body ?? {}) as { email?: unknown }
+  return typeof email === 'string' ? email.trim().toLowerCase().slice(0, 254) : ''
+}
+
+/** Slows down the guessing of passwords; a right one is never counted. */
+export function limitSignIns(): RequestHandler[] {
+  return [
+    limitFailures({ limit: SIGN_IN_LIMITS.perAddress, keyOf: addressOf }),
+    limitFailures({ limit: SIGN_IN_LIMITS.perAccount, keyOf: (req) => `${addressOf(req)} ${emailOf(req)}` }),
+  ]
+}
