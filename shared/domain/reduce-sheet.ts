@@ -7,6 +7,7 @@ import type { FieldProblem, Reason } from '#shared/domain/result.ts'
 import { reduceSandCone } from '#shared/domain/sand-cone.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import type { DensityUnit } from '#shared/units/density.ts'
+import { formatQuantity } from '#shared/units/format.ts'
 
 type Density =
   | { readonly ok: true; readonly wetDensity: number; readonly holeVolumeCm3?: number; readonly flags: readonly Reason[] }
@@ -96,10 +97,15 @@ function reduceDryEntry(sheet: PlainSheet): SheetReduction {
 function absurdDensity(sheet: RawSheet, density: number): FieldProblem | null {
   if (density >= LEAST_DENSITY && density <= GREATEST_DENSITY) return null
   const field = { 'sand-cone': 'moistSoil', 'nuclear-gauge': 'wetDensity', plain: 'density' }[sheet.method]
-  const shown = `${convertDensity(density, 'kg/m3', 'pcf').toFixed(0)}\u2009pcf (${density.toFixed(0)}\u2009kg/m³)`
-  const compared = density > GREATEST_DENSITY ? 'heavier than solid rock' : 'lighter than any soil'
+  const compared = density < LEAST_DENSITY ? 'lighter than any soil' : 'heavier than solid rock'
   const check = sheet.method === 'sand-cone' ? 'Check the masses and the sand density.' : 'Check the value and its unit.'
-  return { field, code: 'density-absurd', message: `The density comes to ${shown}, ${compared}. ${check}` }
+  return { field, code: 'density-absurd', message: `The density comes to ${densityText(density)}, ${compared}. ${check}` }
+}
+
+/** Both units, since either may be the one that was mistaken; a slip by many digits needs no digits. */
+function densityText(density: number): string {
+  if (!(density < 1e6)) return 'far too much'
+  return `${formatQuantity(convertDensity(density, 'kg/m3', 'pcf'), 0, 'pcf')} (${formatQuantity(density, 0, 'kg/m³')})`
 }
 
 type Moisture =

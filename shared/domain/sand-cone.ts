@@ -73,7 +73,7 @@ function sandConeProblems(sheet: SandConeSheet): FieldProblem[] {
     return [{
       field: 'sandDensity',
       code: 'density-range',
-      message: `Sand pours at 1.3 to 1.7\u2009g/cm³; this is ${sand.toFixed(2)}. Check the value and its unit.`,
+      message: 'Dry sand pours at 1.3 to 1.7\u2009g/cm³ (80 to 106\u2009pcf). Check the value and its unit.',
     }]
   }
   return []
