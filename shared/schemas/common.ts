@@ -3,7 +3,8 @@ import { z } from 'zod'
 /** The longest texts that are taken anywhere, by kind. */
 export const TEXT_LIMITS = { name: 80, line: 200, remarks: 2_000 } as const
 
-export const idSchema = z.uuid('This record needs an identifier')
+/** Lower case, so that equal ids are equal texts. */
+export const idSchema = z.uuid('This record needs an identifier').toLowerCase()
 /** An instant as ISO-8601 text with its offset. */
 export const instantSchema = z.iso.datetime({ offset: true, error: 'Give a date and time' })
 export const nameSchema = z.string().trim().min(1, 'Give a name').max(TEXT_LIMITS.name, `At most ${TEXT_LIMITS.name} characters`)
