@@ -90,6 +90,14 @@ export const createSiteSchema = z.object({
 })
 export type CreateSite = z.infer<typeof createSiteSchema>
 
+/** What may still change once a site is made; what is left out stays. */
+export const updateSiteSchema = createSiteSchema.pick({ name: true, subtitle: true, unitSystem: true }).partial()
+export type UpdateSite = z.infer<typeof updateSiteSchema>
+
+/** A new version of a zone's specification. */
+export const createSpecificationSchema = specificationInputSchema.extend({ id: idSchema })
+export type CreateSpecification = z.infer<typeof createSpecificationSchema>
+
 export const specificationSchema = specificationInputSchema.extend({
   id: z.string(),
   version: z.number().int(),
