@@ -1,10 +1,15 @@
 import type { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
 import { eventRoutes } from '#api/features/events/events.routes.ts'
+import { labRoutes } from '#api/features/lab/lab.routes.ts'
+import { lotRoutes } from '#api/features/lots/lots.routes.ts'
 import { memberRoutes } from '#api/features/members/members.routes.ts'
+import { siteRoutes, sitesRoutes } from '#api/features/sites/sites.routes.ts'
+import { stakeRoutes } from '#api/features/stakes/stakes.routes.ts'
+import { testRoutes } from '#api/features/tests/tests.routes.ts'
 
 /** Routers mounted at /api, for a signed-in person and no site in particular. */
-export const apiFeatures: readonly ((deps: Deps) => Router)[] = []
+export const apiFeatures: readonly ((deps: Deps) => Router)[] = [sitesRoutes]
 
 /** Routers mounted at /api/sites/:siteId (mergeParams), behind the check that the person belongs to the site. */
-export const siteFeatures: readonly ((deps: Deps) => Router)[] = [memberRoutes, eventRoutes]
+export const siteFeatures: readonly ((deps: Deps) => Router)[] = [siteRoutes, labRoutes, memberRoutes, eventRoutes, testRoutes, stakeRoutes, lotRoutes]

@@ -17,6 +17,7 @@ export const materialSchema = createMaterialSchema.extend({
   /** loose to compacted volume, from swell and shrink */
   looseToCompacted: z.number(),
 })
+export type CreateMaterial = z.infer<typeof createMaterialSchema>
 export const materialListSchema = z.object({ materials: z.array(materialSchema) })
 export type Material = z.infer<typeof materialSchema>
 
@@ -45,6 +46,7 @@ export const approveCurveSchema = z.object({
   /** the pair the lead confirms, reported to 0.1 and used so */
   use: z.enum(['spline', 'quadratic', 'cubic', 'reported']),
 })
+export type CurveUse = z.infer<typeof approveCurveSchema>['use']
 
 const pairSchema = z.object({ maxDryDensity: z.number(), optimumMoisture: z.number() })
 export const curveSchema = createCurveSchema.extend({
