@@ -17,6 +17,8 @@ import { webClient } from '#api/http/web-client.ts'
 
 /** The largest request body taken in. */
 export const BODY_LIMIT = '256kb'
+/** A new site brings its surveyed surfaces: some 20,000 points each. */
+export const SITE_BODY_LIMIT = '4mb'
 
 export function createApp(deps: Deps, authentication: Authentication): Express {
   const { env, logger, dataSource } = deps
@@ -29,7 +31,9 @@ export function createApp(deps: Deps, authentication: Authentication): Express {
     await dataSource.query('SELECT 1')
     res.json({ ok: true, app: 'hardpan' })
   })
-  app.use('/api', express.json({ limit: BODY_LIMIT }), ...authentication.handlers, requireCsrfToken)
+  app.use('/api', ...authentication.handlers)
+  app.post('/api/sites', requireUser, express.json({ limit: SITE_BODY_LIMIT }))
+  app.use('/api', express.json({ limit: BODY_LIMIT }), requireCsrfToken)
   app.use('/api', sessionRoutes(deps, authentication.passport))
   for (const routes of apiFeatures) app.use('/api', routes(deps))
   app.use('/api/sites/:siteId', requireUser, requireMember(dataSource), ...siteFeatures.map((routes) => routes(deps)))

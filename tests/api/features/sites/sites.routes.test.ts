@@ -121,6 +121,20 @@ describe('POST /api/sites', () => {
     expect(pathsOf(answer.body)).toEqual(['body.crs', 'body.timeZone'])
   })
 
+  it('takes in a survey of thousands of points, from a signed-in person only', async () => {
+    const maker = await app.signedIn()
+    const [corner] = cellsRing(0, 0, 6, 5)
+    const points = Array.from({ length: 6_000 }, (_, i) => ({
+      easting: corner!.easting - 10 + (i % 100) * 3.3 + 0.001,
+      northing: corner!.northing - 10 + Math.floor(i / 100) * 4.7 + 0.001,
+      elevationUm: GROUND_UM + (i % 7) * 1_000,
+    }))
+    const body = siteInput({ ground: { kind: 'points', points } })
+    expect(JSON.stringify(body).length).toBeGreaterThan(400_000)
+    expect((await maker.post('/api/sites', body)).status).toBe(201)
+    expect((await app.visitor().post('/api/sites', body)).status).toBe(401)
+  })
+
   it('cuts a turned grid by the boundary: areas sum to the outline, design volumes to all planned layers', async () => {
     const maker = await app.signedIn()
     const grid: CreateSite['grid'] = { origin: { easting: 500_000, northing: 4_400_000 }, cellSize: 10, columns: 9, rows: 7, rotationDeg: 27, unit: 'm' }
