@@ -83,6 +83,7 @@ export type CreateTest = z.infer<typeof createTestSchema>
 
 /** What saving would do to the ground, asked for while typing; nothing is stored. */
 export const previewTestSchema = createTestSchema.pick({ purpose: true, follows: true, at: true, lift: true, sampledAt: true, curveId: true, oversizePercent: true, sheet: true })
+export type PreviewTest = z.infer<typeof previewTestSchema>
 export const testPreviewSchema = z.object({
   zoneId: z.string().nullable(),
   cell: z.number().nullable(),
@@ -168,6 +169,7 @@ export const testQuerySchema = z.object({
   offset: z.coerce.number().int().min(0).max(1e6).default(0),
   limit: z.coerce.number().int().min(1).max(5_000).default(100),
 })
+export type TestQuery = z.infer<typeof testQuerySchema>
 
 export const testDetailSchema = testSummarySchema.extend({
   follows: z.object({ testId: z.string(), kind: z.enum(['retest', 'rerun']) }).nullable(),
@@ -190,3 +192,28 @@ export const testDetailSchema = testSummarySchema.extend({
 })
 export type TestDetail = z.infer<typeof testDetailSchema>
 export const voidTestSchema = z.object({ reason: reasonSchema })
+
+/** POST /api/sites/:siteId/tests: what saving did. */
+export const recordTestAnswerSchema = z.object({
+  id: z.string(),
+  number: z.string(),
+  outcome: outcomeSchema,
+  headline: z.string(),
+  revision: z.number(),
+  /** cells it marked */
+  marked: z.number(),
+  /** the rework order it opened or went back to */
+  orderId: z.string().nullable(),
+  orderNumber: z.string().nullable(),
+})
+export type RecordTestAnswer = z.infer<typeof recordTestAnswerSchema>
+
+/** POST /api/sites/:siteId/tests/:id/void */
+export const voidTestAnswerSchema = z.object({
+  id: z.string(),
+  number: z.string(),
+  revision: z.number(),
+  /** the chain's result that counts now, null when none is left */
+  currentId: z.string().nullable(),
+})
+export type VoidTestAnswer = z.infer<typeof voidTestAnswerSchema>

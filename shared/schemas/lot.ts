@@ -33,6 +33,8 @@ export const lotSchema = z.object({
   blocks: z.array(z.object({ testId: z.string().nullable(), state: z.enum(['meets', 'released', 'rework', 'suspect', 'owed']), cm3: z.number() })),
 })
 export type Lot = z.infer<typeof lotSchema>
+export const lotQuerySchema = z.object({ zoneId: z.string().max(36).optional(), lift: z.coerce.number().int().optional() })
+export type LotQuery = z.infer<typeof lotQuerySchema>
 export const lotListSchema = z.object({ lots: z.array(lotSchema) })
 
 export const stakeSchema = z.object({
@@ -51,3 +53,7 @@ export const stakeSchema = z.object({
 export type Stake = z.infer<typeof stakeSchema>
 export const stakeListSchema = z.object({ stakes: z.array(stakeSchema) })
 export const drawStakesSchema = z.object({ id: idSchema, lotId: idSchema })
+export type DrawStakes = z.infer<typeof drawStakesSchema>
+/** POST /api/sites/:siteId/stakes/draw: the stakes it drew. */
+export const drawStakesAnswerSchema = z.object({ id: z.string(), revision: z.number(), stakes: z.array(stakeSchema) })
+export type DrawStakesAnswer = z.infer<typeof drawStakesAnswerSchema>

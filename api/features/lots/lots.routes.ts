@@ -1,0 +1,33 @@
+import { Router } from 'express'
+import type { Deps } from '#api/deps.ts'
+import { listLots, loadLotView } from '#api/features/lots/lots.queries.ts'
+import { readSite } from '#api/features/site-head/write-to-site.ts'
+import { requireUser, userOf } from '#api/http/require-user.ts'
+import { validate } from '#api/http/validate.ts'
+import { recordParamsSchema, siteParamsSchema } from '#shared/schemas/common.ts'
+import { lotListSchema, lotQuerySchema, lotSchema } from '#shared/schemas/lot.ts'
+
+/** Mounted at /api/sites/:siteId. */
+export function lotRoutes(deps: Deps): Router {
+  const router = Router({ mergeParams: true })
+
+  router.get(
+    '/lots',
+    requireUser,
+    validate({ params: siteParamsSchema, query: lotQuerySchema }, async ({ params: { siteId }, query }, req, res) => {
+      const lots = await readSite(deps, { siteId, userId: userOf(req).id, verb: 'registers.see' }, ({ manager }) => listLots(manager, siteId, query))
+      res.json(lotListSchema.parse({ lots }))
+    }),
+  )
+
+  router.get(
+    '/lots/:id',
+    requireUser,
+    validate({ params: recordParamsSchema }, async ({ params: { siteId, id } }, req, res) => {
+      const lot = await readSite(deps, { siteId, userId: userOf(req).id, verb: 'registers.see' }, ({ manager }) => loadLotView(manager, siteId, id))
+      res.json(lotSchema.parse(lot))
+    }),
+  )
+
+  return router
+}

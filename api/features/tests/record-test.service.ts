@@ -1,0 +1,194 @@
+import { FieldTestEntity } from '#api/entities/field-test.entity.ts'
+import type { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
+import { TestMarkEntity } from '#api/entities/test-mark.entity.ts'
+import { changeGround, deriveLotNow } from '#api/features/ground/change-ground.ts'
+import { orderNumber } from '#api/features/ground/order-steps.ts'
+import { loadSitePlan } from '#api/features/ground/site-plan.ts'
+import type { SitePlan } from '#api/features/ground/site-plan.ts'
+import { notInFuture } from '#api/features/ground/times.ts'
+import { loadLotsOfCells } from '#api/features/lots/lots-of-cells.queries.ts'
+import type { SiteWrite } from '#api/features/site-head/site-write.ts'
+import { retireIdleStakes, retireStakes } from '#api/features/stakes/retire-stakes.ts'
+import { continueOrder, findOpenOrder, issueOrder, orderCells, withdrawOrder } from '#api/features/tests/failure-order.ts'
+import { curveFlags, judgeSheet, loadCurve } from '#api/features/tests/judge-sheet.ts'
+import { checkLift, placeTest } from '#api/features/tests/locate-test.ts'
+import { failedCells, marksOf } from '#api/features/tests/mark-ground.ts'
+import type { GroundMark } from '#api/features/tests/mark-ground.ts'
+import { refutes } from '#api/features/tests/refute-failure.ts'
+import { checkFollowing, loadChain, wasReworkReported } from '#api/features/tests/test-chain.ts'
+import type { Chain } from '#api/features/tests/test-chain.ts'
+import { authorizeRecording } from '#api/features/tests/test-rights.ts'
+import { checkStakes } from '#api/features/tests/test-stakes.ts'
+import { refuseIf } from '#api/http/refuse-input.ts'
+import type { Reason } from '#shared/domain/result.ts'
+import { formatTestNumber, nextChainName } from '#shared/domain/retest-chain.ts'
+import type { CreateTest, RecordTestAnswer } from '#shared/schemas/field-test.ts'
+
+/**
+ * Records a field test: places and judges it, freezes the verdict, marks the ground of a failure and issues or reopens
+ * its rework order, retires the stake it was taken at, and derives the lots it touches again.
+ */
+export async function recordTest(write: SiteWrite, input: CreateTest): Promise<RecordTestAnswer> {
+  const { manager, siteId, role, now } = write
+  authorizeRecording(role, input.purpose)
+  const plan = await loadSitePlan(manager, siteId)
+  const sampledAt = notInFuture(new Date(input.sampledAt), now)
+  const { cell, zone, at } = placeTest(plan, input)
+  const curve = await loadCurve(manager, siteId, input.curveId)
+  const [lotId] = await loadLotsOfCells(manager, siteId, input.lift, [cell])
+  const lot = lotId === undefined ? undefined : await deriveLotNow(manager, plan, lotId)
+  const specification = lot?.specification ?? zone.specification
+  const judged = judgeSheet(input, plan, curve, specification)
+  if (!judged.ok) {
+    refuseIf(judged.problems.map(({ field, message }) => ({ path: `body.${field}`, message })))
+    throw new Error('A sheet was refused without a reason')
+  }
+  const { reduced, verdict } = judged
+
+  const liftFlags = checkLift(plan, cell, input)
+  const chain = await loadChain(manager, siteId, input.follows)
+  const reworkReported = chain !== null && (await wasReworkReported(manager, siteId, chain.id, sampledAt))
+  const chainFlags = chain ? checkFollowing(chain, { ...input, zoneId: zone.id, at, sampledAt, reworkReported }) : []
+  const stakes = await checkStakes(manager, siteId, { ...input, at, zone, lotId, rules: specification.body })
+  const order = chain ? await findOpenOrder(write, chain.tests) : null
+  const refuted = order && chain ? refutes(chain, { ...input, verdict, elsewhere: chainFlags.length > 0 }) : null
+  const flags: Reason[] = [
+    ...reduced.flags,
+    ...liftFlags,
+    ...chainFlags,
+    ...stakes.flags,
+    ...curveFlags(curve, lot?.lot.materialId ?? null),
+    ...(refuted === 'cause-missing' ? [{ code: 'cause-not-recorded', message: 'The cause of the doubted reading is not recorded, so its order stays.' }] : []),
+  ]
+  const test = await insertTest(write, input, { cell, at, zoneId: zone.id, sampledAt, chain, flags, reduced, verdict })
+
+  const marks = marksOf({ verdict, purpose: input.purpose, cell, at, replacesId: chain?.current?.id ?? null, lot })
+  await storeMarks(write, test, marks)
+  const standing = await settleOrder(write, plan, { test, chain, order, marks, refuted: refuted === 'refuted' })
+  await retireStakes(write, stakes.retires, test.number)
+  write.record(
+    'test.recorded',
+    { type: 'test', id: test.id },
+    {
+      ...input,
+      number: test.number,
+      seq: test.seq,
+      cell: plan.label(cell),
+      lotId: lotId ?? null,
+      specificationId: specification.id,
+      verdict: { outcome: verdict.outcome, treatedAsFail: verdict.treatedAsFail, near: verdict.near, headline: verdict.headline, rc: verdict.rc, moistureDeviation: verdict.moistureDeviation, reasons: verdict.reasons },
+      marks: marks.map(({ kind, cells }) => ({ kind, cells: cells.map((marked) => plan.label(marked)) })),
+      flags: flags.map((flag) => flag.code),
+      orderNumber: standing ? orderNumber(standing.seq) : null,
+      retiredStakes: stakes.retires.map((stake) => stake.label),
+    },
+    sampledAt,
+  )
+  write.changed('test', test.id)
+
+  const inOrder = order ? await orderCells(write, order.id) : []
+  const touched = [cell, ...marks.flatMap((mark) => mark.cells), ...(chain?.tests.map((other) => other.cell) ?? []), ...inOrder]
+  const lots = await loadLotsOfCells(manager, siteId, input.lift, touched)
+  const change = await changeGround(write, plan, { lots, from: input.at })
+  await retireIdleStakes(write, change.lots.values())
+  return {
+    id: test.id,
+    number: test.number,
+    outcome: verdict.outcome,
+    headline: verdict.headline,
+    revision: write.revision,
+    marked: marks.reduce((sum, mark) => sum + mark.cells.length, 0),
+    orderId: standing?.id ?? null,
+    orderNumber: standing ? orderNumber(standing.seq) : null,
+  }
+}
+
+type Judged = Extract<ReturnType<typeof judgeSheet>, { ok: true }>
+
+interface Details extends Pick<Judged, 'reduced' | 'verdict'>, Pick<FieldTestEntity, 'cell' | 'zoneId' | 'sampledAt' | 'flags'> {
+  readonly at: { readonly u: number; readonly v: number }
+  readonly chain: Chain | null
+}
+
+async function insertTest(write: SiteWrite, input: CreateTest, details: Details): Promise<FieldTestEntity> {
+  const { manager, siteId, user, now } = write
+  const { at, chain, reduced, verdict, cell, zoneId, sampledAt, flags } = details
+  const [{ last }]: [{ last: number | null }] = await manager.query('SELECT MAX(`seq`) AS `last` FROM `field_test` WHERE `site_id` = ?', [siteId])
+  const test: FieldTestEntity = {
+    siteId,
+    id: input.id,
+    seq: Number(last ?? 0) + 1,
+    number: nameOf(write, chain, input.follows),
+    chainId: chain?.id ?? input.id,
+    followsId: input.follows?.testId ?? null,
+    followKind: input.follows?.kind ?? null,
+    purpose: input.purpose,
+    zoneId,
+    lift: input.lift,
+    cell,
+    stakeId: input.stakeId,
+    easting: input.at.easting,
+    northing: input.at.northing,
+    u: at.u,
+    v: at.v,
+    surfaceUm: input.surfaceUm,
+    depthUm: input.depthUm,
+    sampledAt,
+    recordedAt: now,
+    recordedBy: user.id,
+    method: input.sheet.method,
+    sheet: input.sheet,
+    oversizePercent: input.oversizePercent,
+    curveId: input.curveId,
+    remarks: input.remarks,
+    outcome: verdict.outcome,
+    treatedAsFail: verdict.treatedAsFail,
+    near: verdict.near,
+    headline: verdict.headline,
+    wetDensity: reduced.wetDensity,
+    dryDensity: reduced.dryDensity,
+    moisture: reduced.moisture,
+    rc: verdict.rc,
+    moistureDeviation: verdict.moistureDeviation,
+    verdict,
+    flags,
+    voidedAt: null,
+    voidedBy: null,
+    voidReason: null,
+    createdAt: now,
+    updatedAt: now,
+  }
+  await manager.insert(FieldTestEntity, test as never)
+  return test
+}
+
+function nameOf(write: SiteWrite, chain: Chain | null, follows: CreateTest['follows']): string {
+  if (!chain || !follows) return formatTestNumber(write.take('test'))
+  const entries = chain.tests.map((test) => ({ name: test.number, isVoid: test.voidedAt !== null }))
+  const name = nextChainName(entries, follows.kind === 'rerun' ? 're-run' : 'retest')
+  if (name === null) throw new Error(`The chain of ${chain.followed.number} holds a foreign name`)
+  return name
+}
+
+async function storeMarks({ manager, siteId }: SiteWrite, test: FieldTestEntity, marks: readonly GroundMark[]): Promise<void> {
+  const rows = marks.flatMap(({ kind, cells }) => cells.map((cell) => ({ siteId, testId: test.id, cell, lift: test.lift, kind })))
+  if (rows.length > 0) await manager.insert(TestMarkEntity, rows)
+}
+
+interface Settling {
+  readonly test: FieldTestEntity
+  readonly chain: Chain | null
+  readonly order: ReworkOrderEntity | null
+  readonly marks: readonly GroundMark[]
+  readonly refuted: boolean
+}
+
+/** The order the test stands under afterwards: issued, taken over, or none. */
+async function settleOrder(write: SiteWrite, plan: SitePlan, { test, order, marks, refuted }: Settling): Promise<ReworkOrderEntity | null> {
+  const cells = failedCells(marks)
+  if (order && refuted) await withdrawOrder(write, order, `${test.number} refutes it: ${test.remarks}`)
+  if (cells.length === 0) return refuted ? null : order
+  if (!order) return issueOrder(write, plan, test, cells)
+  await continueOrder(write, plan, order, test, cells)
+  return order
+}
