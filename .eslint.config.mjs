@@ -71,6 +71,8 @@ export default tseslint.config(
   { files: ['api/**/*.ts'], rules: restrictImports(NO_WEB) },
   { files: ['web/**/*.{ts,tsx}'], extends: [reactHooks.configs.flat.recommended], rules: restrictImports(NO_API) },
   { files: ['web/components/**/*.{ts,tsx}', 'web/lib/**/*.{ts,tsx}'], rules: restrictImports(NO_API, NO_TOP_FEATURES) },
+  // Declarations describe how others wrote their packages.
+  { files: ['**/*.d.ts'], rules: { 'no-restricted-syntax': 'off', '@typescript-eslint/no-namespace': 'off' } },
   {
     files: ['api/commands/**/*.ts', 'tests/setup/**/*.ts'],
     rules: { 'no-console': 'off' },

@@ -6,6 +6,8 @@ const ROOT = import.meta.dirname
 
 export default defineConfig({
   root: `${ROOT}/web`,
+  // Beside the packages, not in web/, which is source only.
+  cacheDir: `${ROOT}/node_modules/.vite`,
   plugins: [react(), tailwindcss()],
   build: { outDir: '../.build/web', emptyOutDir: true, chunkSizeWarningLimit: 1500 },
   test: {
