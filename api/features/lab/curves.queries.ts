@@ -56,7 +56,7 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
 
 async function countTests(manager: EntityManager, siteId: string, curveIds: readonly string[]): Promise<ReadonlyMap<string, number>> {
   const rows: { curveId: string; tests: string }[] = await manager.query(
-    'SELECT `curve_id` AS `curveId`, COUNT(*) AS `tests` FROM `field_test` WHERE `site_id` = ? AND `curve_id` IN (?) GROUP BY `curve_id`',
+    'SELECT `curve_id` AS `curveId`, COUNT(*) AS `tests` FROM `field_test` WHERE `site_id` = ? AND `voided_at` IS NULL AND `curve_id` IN (?) GROUP BY `curve_id`',
     [siteId, curveIds],
   )
   return new Map(rows.map(({ curveId, tests }) => [curveId, Number(tests)]))

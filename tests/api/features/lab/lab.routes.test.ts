@@ -168,6 +168,21 @@ describe('GET /api/sites/:siteId/curves and /curves/:id', () => {
     expect((await other.people['qc-lead'].get(open.path('/curves'))).status).toBe(404)
   })
 
+  it('count the tests that stand on a curve, voided ones left out', async () => {
+    const curve = await record()
+    const test = {
+      siteId: open.siteId, purpose: 'required', zoneId: open.site.zones[0]?.id ?? '', lift: 1, cell: 0, easting: 0, northing: 0, u: 0, v: 0, depthUm: 200_000,
+      method: 'other', sheet: {}, curveId: curve.id, remarks: '', outcome: 'pass', treatedAsFail: false, near: false, headline: '',
+      wetDensity: 2_000, dryDensity: 1_850, moisture: 12, rc: 96, moistureDeviation: 0, verdict: {}, flags: [],
+      recordedBy: lead.user.id, sampledAt: new Date(), recordedAt: new Date(), createdAt: new Date(), updatedAt: new Date(),
+    }
+    for (const seq of [1, 2, 3]) {
+      const id = randomUUID()
+      await app.dataSource.manager.insert('field_test', { ...test, id, chainId: id, seq, number: `T-${seq}`, voidedAt: seq === 3 ? new Date() : null })
+    }
+    expect(curveSchema.parse((await lead.get(open.path(`/curves/${curve.id}`))).body).testsJudged).toBe(2)
+  })
+
   it('tell the curve with its material', async () => {
     const curve = curveSchema.parse((await technician.get(open.path(`/curves/${open.curve.id}`))).body)
     expect(curve).toEqual(open.curve)
