@@ -13,19 +13,36 @@ const WORDS: Readonly<Record<BrokenRelease['reason'], string>> = {
 /** Revokes releases that lost their basis, each cell with the reason, in one event a lot. */
 export async function revokeBroken(write: SiteWrite, plan: SitePlan, { lot }: LoadedLot, broken: readonly BrokenRelease[]): Promise<void> {
   if (broken.length === 0) return
-  const { manager, siteId, now } = write
+  const { manager, siteId } = write
   const names = await loadTestNames(manager, siteId, broken.map((release) => release.testId))
   for (const { cell, reason, testId } of broken) {
     const name = names.get(testId ?? '')
     const words = name === undefined ? WORDS[reason] : `${WORDS[reason]} (${name})`
-    await manager.query(
-      "UPDATE `release_cell` c JOIN `release_record` r ON r.`site_id` = c.`site_id` AND r.`id` = c.`release_id` SET c.`revoked_at` = ?, c.`revoked_reason` = ? WHERE c.`site_id` = ? AND c.`lift` = ? AND c.`cell` = ? AND c.`revoked_at` IS NULL AND r.`status` IN ('released', 'awaiting-acceptance')",
-      [now, words, siteId, lot.lift, cell],
-    )
+    await revoke(write, lot.lift, [cell], words)
   }
   write.record('release.revoked', { type: 'lot', id: lot.id }, {
     lift: lot.lift,
     cells: broken.map((release) => ({ cell: plan.label(release.cell), reason: WORDS[release.reason], testId: release.testId })),
   })
   write.changed('release', lot.id)
+}
+
+/** Revokes what stands released of these cells at a lift, for a reason of its own. */
+export async function revokeCells(
+  write: SiteWrite,
+  plan: SitePlan,
+  { lift, cells, reason }: { readonly lift: number; readonly cells: readonly number[]; readonly reason: string },
+): Promise<void> {
+  const revoked = await revoke(write, lift, cells, reason)
+  if (revoked === 0) return
+  write.record('release.revoked', { type: 'site', id: write.siteId }, { lift, cells: cells.map((cell) => plan.label(cell)), reason })
+  write.changed('release', write.siteId)
+}
+
+async function revoke({ manager, siteId, now }: SiteWrite, lift: number, cells: readonly number[], reason: string): Promise<number> {
+  const result: { affectedRows: number } = await manager.query(
+    "UPDATE `release_cell` c JOIN `release_record` r ON r.`site_id` = c.`site_id` AND r.`id` = c.`release_id` SET c.`revoked_at` = ?, c.`revoked_reason` = ? WHERE c.`site_id` = ? AND c.`lift` = ? AND c.`cell` IN (?) AND c.`revoked_at` IS NULL AND r.`status` IN ('released', 'awaiting-acceptance')",
+    [now, reason, siteId, lift, cells],
+  )
+  return result.affectedRows
 }
