@@ -18,7 +18,7 @@ const note =
   }
 const plain = new URLSearchParams(location.search).has('plain')
 const first: GroundMapProps = {
-  site: plain ? { ...BOARD_SITE, zones: [], cells: { ...BOARD_SITE.cells, baseUm: BOARD_SITE.cells.baseUm } } : BOARD_SITE,
+  site: plain ? { ...BOARD_SITE, zones: [], cells: { ...BOARD_SITE.cells, baseUm: new Float64Array(sheet.state.length) } } : BOARD_SITE,
   sheet,
   marks: plain ? [] : BOARD_MARKS,
   stakes: plain ? [] : BOARD_STAKES,
@@ -49,8 +49,9 @@ window.boardPage = { sheet, calls, handle, set: () => undefined }
 function BoardOnly() {
   const [props, setProps] = useState(first)
   window.boardPage.set = (changes) => flushSync(() => setProps((before) => ({ ...before, ...changes })))
+  document.documentElement.dataset.theme = props.theme ?? 'light'
   return (
-    <div data-theme={props.theme ?? 'light'} style={{ width: '100vw', height: '100vh' }}>
+    <div style={{ width: '100vw', height: '100vh' }}>
       <HatchDefs />
       <GroundMap ref={handle} {...props} />
     </div>

@@ -6,7 +6,7 @@ import type { BoardSite, GroundMapProps } from './board-types.ts'
 export const MARGIN = 30
 
 /** Free of the plan when it is fitted: the margins, and below it the legend and the scale. */
-const FIT_PADDING = { top: MARGIN + 32, right: 48, bottom: 66, left: MARGIN + 22 }
+const FIT_PADDING = { top: MARGIN + 32, right: 48, bottom: 84, left: MARGIN + 22 }
 const TILE = 512
 
 export interface BoardCamera {

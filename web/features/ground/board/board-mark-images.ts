@@ -20,8 +20,10 @@ function strokePath(pen: Pen, path: string, width: number, fill: boolean): void 
 }
 
 /** The second ring of a verification test, clear of the mark inside it. */
-function verificationRing(pen: Pen): void {
-  ring(pen, 10.5)
+const VERIFICATION_RADIUS: Readonly<Record<MarkOutcome, number>> = { pass: 8.5, near: 8.5, fail: 10, suspect: 10.5, pending: 8.5 }
+
+function verificationRing(pen: Pen, radius: number): void {
+  ring(pen, radius)
   pen.fill()
   pen.lineWidth = 1.2
   pen.stroke()
@@ -49,13 +51,12 @@ const DRAW: Readonly<Record<MarkOutcome, (pen: Pen, ink: string) => void>> = {
     strokePath(pen, 'M-3 -3l6 6m0 -6l-6 6', 1.6, false)
   },
   suspect(pen, ink) {
-    strokePath(pen, 'M0 -7l7 12h-14z', 1.6, true)
+    strokePath(pen, 'M0 -7.5l7.5 13h-15z', 1.6, true)
     // the question mark is drawn, so that it does not wait for a font
-    strokePath(pen, 'M-1.7 -1.1a1.75 1.75 0 1 1 2.6 1.4q-.9 .5 -.9 1.3', 1.15, false)
-    ring(pen, 0.75)
+    strokePath(pen, 'M-1.9 -0.9a1.9 1.9 0 1 1 2.9 1.6q-1 .55 -1 1.5', 1.3, false)
+    pen.translate(0, 3.7)
+    ring(pen, 0.85)
     pen.fillStyle = ink
-    pen.translate(0, 3.3)
-    ring(pen, 0.75)
     pen.fill()
   },
   pending(pen) {
@@ -87,7 +88,7 @@ export function drawMarkImages(pixelRatio: number): MarkImage[] {
       pen.fillStyle = WHITE.css
       pen.strokeStyle = ink
       pen.lineCap = 'butt'
-      if (verification) verificationRing(pen)
+      if (verification) verificationRing(pen, VERIFICATION_RADIUS[outcome])
       DRAW[outcome](pen, ink)
       return {
         name: markImageName({ outcome, verification }),

@@ -150,6 +150,11 @@ float regionEdge(ivec2 cell, int bit, vec2 p, vec2 q) {
   if ((texel(cell + ivec2(1, 0), 1) & bit) == 0) d = min(d, q.x);
   if ((texel(cell + ivec2(0, 1), 1) & bit) == 0) d = min(d, q.y);
   if ((texel(cell + ivec2(-1, 0), 1) & bit) == 0) d = min(d, p.x);
+  // across a corner, so that the line turns inward without a gap
+  if ((texel(cell + ivec2(-1, -1), 1) & bit) == 0) d = min(d, max(p.x, p.y));
+  if ((texel(cell + ivec2(1, -1), 1) & bit) == 0) d = min(d, max(q.x, p.y));
+  if ((texel(cell + ivec2(1, 1), 1) & bit) == 0) d = min(d, max(q.x, q.y));
+  if ((texel(cell + ivec2(-1, 1), 1) & bit) == 0) d = min(d, max(p.x, q.y));
   return d;
 }
 

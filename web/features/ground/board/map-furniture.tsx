@@ -149,7 +149,7 @@ export function MapFurniture({ board }: { board: BoardMap }) {
       <Legend />
       <div className="board-furniture-right">
         <NorthArrow turn={northTurn(board, bearing)} />
-        <ScaleBarDrawing scale={chooseScale(pixelsPerUnit, board.site.grid.unit, 150)} />
+        <ScaleBarDrawing scale={chooseScale(pixelsPerUnit, board.site.grid.unit, 170)} />
       </div>
     </div>
   )
