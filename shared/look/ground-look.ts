@@ -1,6 +1,6 @@
 import type { GroundFlag, GroundState } from '#shared/domain/ground-state.ts'
 import { colourOf, type Colour } from '#shared/look/colour.ts'
-import { SHEET_COLOURS, WHITE, type Theme } from '#shared/look/theme.ts'
+import { MARK_INK, SHEET_COLOURS, WHITE, type Theme } from '#shared/look/theme.ts'
 
 export const HATCH_KINDS = [
   'none',
@@ -75,7 +75,6 @@ export const GROUND_INKS = {
   suspectMark: VIOLET_MARK,
 } as const
 
-const INK = SHEET_COLOURS.light.ink
 const PLAIN_LINE: CellLine = { colour: WHITE, opacity: 0.55, width: 0.7, dash: [] }
 const DEEP_LINE: CellLine = { colour: colourOf('#2c7a75'), opacity: 0.9, width: 0.7, dash: [] }
 
@@ -89,7 +88,7 @@ const PLACED: Readonly<Record<Exclude<GroundState, 'none' | 'not-placed'>, Omit<
     hatch: { kind: 'stipple', spacing: 10, stroke: 1.8, mark: SAND_MARK },
     nearHatch: near(SAND_MARK),
     cellLine: PLAIN_LINE,
-    label: INK,
+    label: MARK_INK,
     word: 'Awaiting test',
     meaning: 'no valid test speaks for all of it',
   },
@@ -98,7 +97,7 @@ const PLACED: Readonly<Record<Exclude<GroundState, 'none' | 'not-placed'>, Omit<
     hatch: { kind: 'sparse-diagonals', spacing: 16, stroke: 2.4, mark: ORANGE },
     nearHatch: near(SAND_MARK),
     cellLine: PLAIN_LINE,
-    label: INK,
+    label: MARK_INK,
     word: 'Awaiting retest',
     meaning: 'rework reported done',
   },
@@ -107,7 +106,7 @@ const PLACED: Readonly<Record<Exclude<GroundState, 'none' | 'not-placed'>, Omit<
     hatch: noHatch(PALE_GREEN_MARK),
     nearHatch: near(PALE_GREEN_MARK),
     cellLine: PLAIN_LINE,
-    label: INK,
+    label: MARK_INK,
     word: 'Meets spec',
     meaning: 'not released yet',
   },
@@ -143,7 +142,7 @@ const PLACED: Readonly<Record<Exclude<GroundState, 'none' | 'not-placed'>, Omit<
     hatch: { kind: 'diagonals', spacing: 10, stroke: 1.7, mark: ORANGE_MARK },
     nearHatch: near(ORANGE_MARK),
     cellLine: PLAIN_LINE,
-    label: INK,
+    label: MARK_INK,
     word: 'Rework',
     meaning: 'a failing test speaks for it',
   },
@@ -193,7 +192,7 @@ export const OVERLAY_LOOKS: Readonly<Record<GroundFlag, OverlayLook>> = {
 }
 
 /**
- * Forms of the overlay marks, lengths in screen pixels unless said.
+ * Forms of the overlay marks, in MARK_INK, lengths in screen pixels unless said.
  * covered: heavy ink edge inside the cell and an ink wedge filling the top left corner;
  * hold: the top right corner split, outer half ink, inner half white; doubt: a broken ink edge inside the cell.
  */

@@ -44,8 +44,8 @@ export const SHEET_COLOURS: Readonly<Record<Theme, SheetColours>> = {
   },
   dark: {
     film: colourOf('#10191f'),
-    sheet: colourOf('#18242b'),
-    raised: colourOf('#131d24'),
+    sheet: colourOf('#1a272f'),
+    raised: colourOf('#17222a'),
     ink: colourOf('#f3f6f4'),
     ink2: colourOf('#a9b9bc'),
     ink3: colourOf('#82959b'),
@@ -59,5 +59,7 @@ export const SHEET_COLOURS: Readonly<Record<Theme, SheetColours>> = {
 
 /** Survey pink: only ever "go here next". The same in both themes. */
 export const STAKE_COLOUR: Colour = colourOf('#d4127f')
+/** The ink of marks laid over the ground's colours, which do not change with the theme: neither does this. */
+export const MARK_INK: Colour = SHEET_COLOURS.light.ink
 /** The halo and lettering on a stake and on marks laid over the ground, in both themes. */
 export const WHITE: Colour = colourOf('#ffffff')

@@ -23,11 +23,12 @@ export function initialsOf(name: string): string {
 export function UserMenu({ user, nav, onSignOut }: { user: ShellUser; nav: readonly NavItem[]; onSignOut: () => void }) {
   const choice = useThemeChoice()
   const trigger = (
-    <button type="button" aria-label={`Menu, ${user.name}`} className="flex min-h-11 items-center gap-[10px] text-left text-[13px]">
+    <button type="button" className="flex min-h-11 items-center gap-[10px] text-left text-[13px]">
       <span aria-hidden className="grid size-8 place-items-center rounded-full bg-ink pt-px text-[12px] font-bold text-raised">
         {initialsOf(user.name)}
       </span>
-      <span className="hidden leading-[1.15] xl:block">
+      <span className="leading-[1.15] max-xl:sr-only">
+        <span className="sr-only">Menu, </span>
         <b className="block font-semibold">{user.name}</b>
         {user.role !== undefined && <span className="block text-[12px] text-ink-2">{user.role}</span>}
       </span>

@@ -42,11 +42,11 @@ export function acceptedOutline(range: AcceptedRange, zav: readonly PlotPoint[],
   return [{ moisture: low, density: range.densityMin }, { moisture: high, density: range.densityMin }, ...top]
 }
 
-function padded(values: readonly number[], step: number, fallback: readonly [number, number]): readonly [number, number] {
+function padded(values: readonly number[], step: number, headroom: number, fallback: readonly [number, number]): readonly [number, number] {
   const finite = values.filter((value) => Number.isFinite(value))
   if (finite.length === 0) return fallback
   const low = Math.floor((Math.min(...finite) - step * 0.35) / step) * step
-  const high = Math.ceil((Math.max(...finite) + step * 0.35) / step) * step
+  const high = Math.ceil((Math.max(...finite) + step * headroom) / step) * step
   return [Math.max(0, low), high]
 }
 
@@ -59,8 +59,8 @@ export function plotExtent(points: readonly PlotPoint[], range: AcceptedRange | 
     densities.push(range.densityMin)
   }
   return {
-    moisture: padded(moistures, steps.moisture, [0, 20]),
-    density: padded(densities, steps.density, [steps.density * 20, steps.density * 25]),
+    moisture: padded(moistures, steps.moisture, 0.35, [0, 20]),
+    density: padded(densities, steps.density, 1, [steps.density * 20, steps.density * 25]),
   }
 }
 

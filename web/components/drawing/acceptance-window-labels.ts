@@ -34,18 +34,23 @@ function boxesAlong({ x, y, frame }: LabelInput, points: readonly PlotPoint[]): 
 function zavPlaces(input: LabelInput, text: string): LabelWish['places'] {
   const { x, y, frame, zav } = input
   const width = textWidth(text, input.fontSize)
-  const rightOf = [0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8].map((share) => {
+  const right = frame.x + frame.width
+  const beside = [0.08, 0.14, 0.2, 0.28, 0.36, 0.44, 0.52, 0.6, 0.7, 0.8].flatMap((share) => {
     const base = frame.y + share * frame.height
-    const onLine = zav.points.find((point) => y(point.density) >= base - input.fontSize)
-    return { x: (onLine === undefined ? frame.x : x(onLine.moisture)) + 14, y: base }
+    const onLine = zav.points.find((point) => y(point.density) >= base)
+    const onTop = zav.points.find((point) => y(point.density) >= base - input.fontSize)
+    if (onLine === undefined || onTop === undefined) return []
+    return [
+      { x: x(onLine.moisture) + 12, y: base },
+      { x: x(onTop.moisture) - width - 12, y: base },
+    ]
   })
-  return [...rightOf.filter((place) => place.x + width <= frame.x + frame.width), { x: frame.x + frame.width - width, y: frame.y + input.fontSize }]
+  return [...beside.filter((place) => place.x >= frame.x && place.x + width <= right), { x: right - width, y: frame.y + input.fontSize }]
 }
 
 /** Where the words of the plot stand, clear of the tests, the curve and one another. */
 export function windowLabels(input: LabelInput): readonly PlacedLabel[] {
   const { x, y, frame, densityUnit, zav, accepted, limit, tests, curve, fontSize } = input
-  const right = frame.x + frame.width
   const wishes: LabelWish[] = [
     { id: 'axis', text: `Dry density, ${densityUnit}`, fontSize, places: [{ x: frame.x + 4, y: frame.y + fontSize }, { x: frame.x + 4, y: frame.y + fontSize * 2.4 }] },
   ]
@@ -57,7 +62,7 @@ export function windowLabels(input: LabelInput): readonly PlacedLabel[] {
       id: 'limit',
       text: limit.label,
       fontSize,
-      places: [right - width, frame.x + 6, frame.x + frame.width * 0.3].flatMap((left) => [
+      places: [1, 0, 0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8, 0.9].map((share) => frame.x + share * (frame.width - width)).flatMap((left) => [
         { x: left, y: base + fontSize * 1.35 },
         { x: left, y: base - fontSize * 0.5 },
       ]),

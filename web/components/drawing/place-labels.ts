@@ -12,7 +12,7 @@ export type LabelWish = {
 export type PlacedLabel = { readonly id: string; readonly text: string; readonly fontSize: number; readonly x: number; readonly y: number }
 
 /** Mean advance of the text face at weight 600, share of its size; a little generous, so that boxes err apart. */
-const ADVANCE = 0.57
+const ADVANCE = 0.55
 
 /** Width of a line of text in drawing units, near enough to keep labels apart. */
 export function textWidth(text: string, fontSize: number): number {

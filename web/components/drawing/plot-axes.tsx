@@ -14,8 +14,8 @@ type PlotAxesProps = {
 
 /** Two axes with their figures; the last figure at the right is drawn inwards so that it is never cut off. */
 export function PlotAxes({ x, y, left, right, top, bottom, fontSize, grid, xLabel }: PlotAxesProps) {
-  const xTicks = x.ticks(Math.max(2, Math.floor((right - left) / (fontSize * 4))))
-  const yTicks = y.ticks(Math.max(2, Math.floor((bottom - top) / (fontSize * 3.6))))
+  const xTicks = x.ticks(Math.min(8, Math.max(2, Math.floor((right - left) / (fontSize * 2.6)))))
+  const yTicks = y.ticks(Math.max(2, Math.floor((bottom - top) / (fontSize * 5))))
   const yFormat = y.tickFormat(yTicks.length)
   return (
     <g fontSize={fontSize} fill="var(--ink-2)">

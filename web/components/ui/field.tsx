@@ -58,7 +58,7 @@ export function Field({ label, unit, hint, error, warning, calculated = false, c
           id={wordsId}
           role={error === undefined ? undefined : 'alert'}
           className={classNames(
-            'mt-[5px] mb-0 text-small font-medium',
+            'mt-2 mb-0 text-small font-medium',
             error !== undefined ? 'text-bad' : warning !== undefined ? 'text-warn' : 'text-ink-2',
           )}
         >

@@ -24,7 +24,7 @@ export type Fact = { readonly label: string; readonly value: string; readonly un
 export function FactsRow({ facts, className }: { facts: readonly Fact[]; className?: string }) {
   return (
     <dl
-      className={classNames('m-0 grid border-y border-rule-2', className)}
+      className={classNames('m-0 grid overflow-hidden border-y border-rule-2', className)}
       style={{ gridTemplateColumns: `repeat(auto-fit, minmax(min(100%, ${facts.length > 3 ? 96 : 120}px), 1fr))` }}
     >
       {facts.map(({ label, value, unit, tone }) => (
@@ -39,7 +39,7 @@ export function FactsRow({ facts, className }: { facts: readonly Fact[]; classNa
           >
             {value}
             {unit !== undefined && (
-              <small className="text-[12px] font-medium text-ink-2">
+              <small className="ml-[3px] text-[12px] font-medium text-ink-2">
                 {THIN_SPACE}
                 {unit}
               </small>

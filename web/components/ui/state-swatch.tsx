@@ -1,5 +1,6 @@
-import { stateLook } from '#shared/look/ground-look.ts'
 import type { GroundState } from '#shared/domain/ground-state.ts'
+import { OVERLAY_MARKS, stateLook } from '#shared/look/ground-look.ts'
+import { MARK_INK } from '#shared/look/theme.ts'
 import { stateFill } from '#web/components/drawing/state-fill.ts'
 
 type StateSwatchProps = {
@@ -15,7 +16,7 @@ type StateSwatchProps = {
 export function StateSwatch({ state, near = false, covered = false, size = 20, label }: StateSwatchProps) {
   const bare = state === 'not-placed' || state === 'none'
   const edge = size >= 48 ? 2 : 0.9
-  const wedge = size * 0.32
+  const wedge = size * OVERLAY_MARKS.covered.wedgeShare
   return (
     <svg
       width={size}
@@ -37,9 +38,9 @@ export function StateSwatch({ state, near = false, covered = false, size = 20, l
         strokeDasharray={bare ? '2 3' : undefined}
       />
       {covered && (
-        <g fill="none" stroke="var(--ink)">
-          <rect x={1.5} y={1.5} width={size - 3} height={size - 3} strokeWidth={3} />
-          <path d={`M0 0h${wedge + 3}L0 ${wedge + 3}z`} fill="var(--ink)" stroke="none" />
+        <g fill="none" stroke={MARK_INK.css}>
+          <rect x={edge + 1.5} y={edge + 1.5} width={size - 2 * edge - 3} height={size - 2 * edge - 3} strokeWidth={3} />
+          <path d={`M${edge} ${edge}h${wedge + 3}L${edge} ${edge + wedge + 3}z`} fill={MARK_INK.css} stroke="none" />
         </g>
       )}
     </svg>

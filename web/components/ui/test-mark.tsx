@@ -1,3 +1,4 @@
+import { MARK_INK } from '#shared/look/theme.ts'
 import { classNames } from '#web/lib/class-names.ts'
 
 export type TestOutcome = 'passes' | 'near' | 'fails' | 'suspect'
@@ -9,8 +10,7 @@ const WORDS: Readonly<Record<TestOutcome, string>> = {
   suspect: 'suspect',
 }
 
-/** Marks lie on the ground's colours, which do not change with the theme: neither does their ink. */
-const INK = '#14212a'
+const INK = MARK_INK.css
 
 type ShapeProps = { outcome: TestOutcome; verification?: boolean; x: number; y: number; scale?: number }
 

@@ -1,3 +1,4 @@
+import { StateLegend } from '#web/components/drawing/state-legend.tsx'
 import { stateFill } from '#web/components/drawing/state-fill.ts'
 import { TestMarkShape } from '#web/components/ui/test-mark.tsx'
 import { boundaryPath, cellStates, CELL, COLUMNS, contourPath, hachurePath, ROWS, stepPath, TESTS } from './sign-in-plan-cells.ts'
@@ -14,7 +15,7 @@ const CONTOURS = Array.from({ length: 17 }, (_, index) => index)
 export function SignInPlan() {
   return (
     <div aria-hidden className="relative min-h-0 overflow-hidden bg-sheet">
-      <svg viewBox={`0 0 ${WIDTH} ${HEIGHT}`} preserveAspectRatio="xMidYMid slice" className="absolute inset-0 size-full">
+      <svg viewBox={`0 0 ${WIDTH} ${HEIGHT}`} preserveAspectRatio="xMinYMin slice" className="absolute inset-0 size-full">
         <g fill="none" stroke="var(--rule)" strokeWidth={1}>
           {CONTOURS.map((index) => (
             <path key={index} d={contourPath(index, WIDTH)} />
@@ -61,6 +62,11 @@ export function SignInPlan() {
           </g>
         </g>
       </svg>
+      <StateLegend
+        near
+        states={['not-placed', 'awaiting-test', 'awaiting-retest', 'meets-spec', 'released', 'recheck', 'rework', 'suspect']}
+        className="absolute right-5 bottom-5 left-[50px] max-lg:hidden"
+      />
     </div>
   )
 }
