@@ -1,50 +1,12 @@
-import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { deriveLot } from '#shared/domain/derive-lot.ts'
 import { GROUND_FLAGS } from '#shared/domain/ground-state.ts'
-import type { LotCell, LotFacts, LotOrder, LotSlice, LotTest } from '#shared/domain/lot-facts.ts'
+import type { LotFacts, LotOrder } from '#shared/domain/lot-facts.ts'
+import { buildLotFacts, buildSlice, buildTest, CELL } from '#tests/factories/lot-facts.ts'
 
-const SIDE = 10_000
-/** A row of cells of 10 × 10 m, 0.2 m thick: 20 m³ = 20,000,000 cm³ each. */
-const CELL = 20_000_000
-const cellAt = (cell: number): LotCell => ({
-  cell,
-  column: cell,
-  row: 0,
-  centroid: { u: cell * SIDE + SIDE / 2, v: SIDE / 2 },
-  areaMm2: SIDE * SIDE,
-  thicknessUm: 200_000,
-  partial: false,
-})
-const sliceAt = (cell: number, placedAt = 10, slice = 'p1', volumeCm3 = CELL): LotSlice => ({ cell, slice, placedAt, volumeCm3 })
-const testAt = (testId: string, cell: number, change: Partial<LotTest> = {}): LotTest => ({
-  testId,
-  seq: Number(testId.slice(1)),
-  at: cellAt(cell).centroid,
-  cell,
-  sampledAt: 20,
-  purpose: 'required',
-  outcome: 'pass',
-  near: false,
-  superseded: false,
-  ...change,
-})
-/** Six cells, 120 m³, one test per 50 m³: three required. */
-const facts = (change: Partial<LotFacts> = {}): LotFacts => ({
-  lift: 2,
-  rules: [{ kind: 'volume', scope: 'lot', perCm3: 50_000_000 }],
-  cells: [0, 1, 2, 3, 4, 5].map(cellAt),
-  slices: [0, 1, 2, 3, 4, 5].map((cell) => sliceAt(cell)),
-  tests: [],
-  marks: [],
-  orders: [],
-  releases: [],
-  acceptedAsIs: [],
-  ...change,
-})
-const derive = (change: Partial<LotFacts> = {}) => deriveLot(facts(change))
+const derive = (change: Partial<LotFacts> = {}) => deriveLot(buildLotFacts(change))
 const statesOf = (change: Partial<LotFacts>) => derive(change).cells.map((cell) => cell.state)
-const threePasses = [testAt('t1', 0), testAt('t2', 3), testAt('t3', 5)]
+const threePasses = [buildTest('t1', 0), buildTest('t2', 3), buildTest('t3', 5)]
 const order = (change: Partial<LotOrder> = {}): LotOrder => ({ orderId: 'o1', state: 'issued', cells: [2, 3, 4], causeTestId: 't2', reportedAt: null, ...change })
 
 describe('a lot before and after its tests', () => {
@@ -57,7 +19,7 @@ describe('a lot before and after its tests', () => {
 
   it('shows which cells one pass speaks for in full', () => {
     // the test in cell 0 has 50 m³: 20 of cell 0, 20 of cell 1, 10 of cell 2
-    const lot = derive({ tests: [testAt('t1', 0)] })
+    const lot = derive({ tests: [buildTest('t1', 0)] })
     expect(lot.cells.map((cell) => cell.spokenCm3 / 1e6)).toEqual([20, 20, 10, 0, 0, 0])
     expect(lot.cells.map((cell) => cell.state)).toEqual(['meets-spec', 'meets-spec', ...Array<string>(4).fill('awaiting-test')])
     expect(lot).toMatchObject({ taken: 1, owed: 2, standing: 'owes' })
@@ -74,16 +36,16 @@ describe('a lot before and after its tests', () => {
 
   it('leaves out judgement, verification, referee and superseded tests', () => {
     const tests = [
-      testAt('t1', 0, { purpose: 'judgement' }),
-      testAt('t2', 1, { purpose: 'verification' }),
-      testAt('t3', 2, { purpose: 'referee' }),
-      testAt('t4', 3, { superseded: true }),
+      buildTest('t1', 0, { purpose: 'judgement' }),
+      buildTest('t2', 1, { purpose: 'verification' }),
+      buildTest('t3', 2, { purpose: 'referee' }),
+      buildTest('t4', 3, { superseded: true }),
     ]
     expect(derive({ tests })).toMatchObject({ required: 3, taken: 0, pairs: [] })
   })
 
   it('lists re-runs apart and stakes no test that is due anyway', () => {
-    const tests = [testAt('t1', 0, { outcome: 'suspect' }), testAt('t2', 3, { outcome: 'pending' }), testAt('t3', 5)]
+    const tests = [buildTest('t1', 0, { outcome: 'suspect' }), buildTest('t2', 3, { outcome: 'pending' }), buildTest('t3', 5)]
     const lot = derive({ tests, marks: [{ testId: 't1', kind: 'suspect', cells: [0, 1] }] })
     expect(lot).toMatchObject({ taken: 1, owed: 2, reruns: 1, toStake: 0, standing: 'suspect' })
     expect(lot.cells.map(({ state, namingTestId }) => [state, namingTestId])).toEqual([
@@ -102,25 +64,25 @@ describe('a lot before and after its tests', () => {
   })
 
   it('flags cells that a near result speaks for, and cells partly placed', () => {
-    const cells = facts().cells.map((cell) => ({ ...cell, partial: cell.cell === 5 }))
-    const lot = derive({ cells, tests: [testAt('t1', 0, { near: true }), testAt('t2', 3), testAt('t3', 5)] })
+    const cells = buildLotFacts().cells.map((cell) => ({ ...cell, partial: cell.cell === 5 }))
+    const lot = derive({ cells, tests: [buildTest('t1', 0, { near: true }), buildTest('t2', 3), buildTest('t3', 5)] })
     const { near, partial } = GROUND_FLAGS
     expect(lot.cells.map((cell) => cell.flags)).toEqual([near, near, 0, 0, 0, partial])
   })
 
   it('shows a cell without fill as not placed', () => {
-    expect(statesOf({ slices: facts().slices.slice(0, 5), tests: threePasses })[5]).toBe('not-placed')
+    expect(statesOf({ slices: buildLotFacts().slices.slice(0, 5), tests: threePasses })[5]).toBe('not-placed')
   })
 
   it('wants cells for its fill', () => {
-    expect(() => derive({ slices: [sliceAt(77)], tests: threePasses })).toThrow(RangeError)
+    expect(() => derive({ slices: [buildSlice(77)], tests: threePasses })).toThrow(RangeError)
   })
 })
 
 describe('the round of a failure', () => {
   const mark = { testId: 't2', kind: 'fail' as const, cells: [2, 3] }
-  const failing = testAt('t2', 3, { outcome: 'fail' })
-  const others = [testAt('t1', 0), testAt('t3', 5)]
+  const failing = buildTest('t2', 3, { outcome: 'fail' })
+  const others = [buildTest('t1', 0), buildTest('t3', 5)]
 
   it('turns marked ground to rework, named by the failing test, and holds its share from the passes', () => {
     const lot = derive({ tests: [failing, ...others], marks: [mark] })
@@ -148,7 +110,7 @@ describe('the round of a failure', () => {
   })
 
   it('says that the order closes with a retest passed, and meets spec once it is closed', () => {
-    const retest = testAt('t4', 3, { sampledAt: 40, firstCells: [2, 3] })
+    const retest = buildTest('t4', 3, { sampledAt: 40, firstCells: [2, 3] })
     const ready = order({ state: 'ready', cells: [2, 3], reportedAt: 30 })
     const open = derive({ tests: [retest, ...others], marks: [mark], orders: [ready] })
     expect(open.orders[0]).toMatchObject({ passed: 1, left: 0, closes: true })
@@ -159,7 +121,7 @@ describe('the round of a failure', () => {
   })
 
   it('is rework again when the retest fails', () => {
-    const retest = testAt('t4', 3, { sampledAt: 40, outcome: 'fail' })
+    const retest = buildTest('t4', 3, { sampledAt: 40, outcome: 'fail' })
     const lot = derive({
       tests: [retest, ...others],
       marks: [mark, { testId: 't4', kind: 'fail', cells: [3] }],
@@ -183,7 +145,7 @@ describe('releases', () => {
   const released = [0, 1].map((cell) => release(cell, [{ testId: 't1', cell, cm3: CELL }]))
 
   it('freeze their shares: a nearer later pass does not take them over', () => {
-    const lot = derive({ tests: [testAt('t1', 0), testAt('t2', 1, { sampledAt: 30 })], releases: released })
+    const lot = derive({ tests: [buildTest('t1', 0), buildTest('t2', 1, { sampledAt: 30 })], releases: released })
     expect(lot.pairs.filter((pair) => pair.cell < 2).map(({ testId, cell, frozen }) => [testId, cell, frozen])).toEqual([['t1', 0, true], ['t1', 1, true]])
     expect(lot.cells.slice(0, 2).map(({ state, namingTestId, spokenCm3 }) => [state, namingTestId, spokenCm3])).toEqual([
       ['released', 't1', CELL],
@@ -202,35 +164,35 @@ describe('releases', () => {
   })
 
   it('reopen only the cell that is topped up', () => {
-    const slices = [...facts().slices, sliceAt(0, 40, 'p2', 1_000_000)]
-    const lot = derive({ slices, tests: [testAt('t1', 0)], releases: released })
+    const slices = [...buildLotFacts().slices, buildSlice(0, 40, 'p2', 1_000_000)]
+    const lot = derive({ slices, tests: [buildTest('t1', 0)], releases: released })
     expect(lot.cells.slice(0, 2).map((cell) => cell.state)).toEqual(['awaiting-test', 'released'])
-    const again = derive({ slices, tests: [testAt('t1', 0), testAt('t2', 0, { sampledAt: 50 })], releases: released })
+    const again = derive({ slices, tests: [buildTest('t1', 0), buildTest('t2', 0, { sampledAt: 50 })], releases: released })
     expect(again.cells[0]).toMatchObject({ state: 'meets-spec', spokenCm3: CELL + 1_000_000 })
   })
 
   it('are reported broken when a failure marks the cell, the basis is lost, or the fill is gone', () => {
     const mark = { testId: 't9', kind: 'fail' as const, cells: [0] }
-    const failed = testAt('t9', 0, { outcome: 'fail', purpose: 'judgement' })
-    expect(derive({ tests: [testAt('t1', 0), failed], marks: [mark], releases: released }).brokenReleases).toEqual([{ cell: 0, reason: 'failed', testId: 't9' }])
-    expect(derive({ tests: [testAt('t1', 0, { superseded: true })], releases: released }).brokenReleases).toEqual([
+    const failed = buildTest('t9', 0, { outcome: 'fail', purpose: 'judgement' })
+    expect(derive({ tests: [buildTest('t1', 0), failed], marks: [mark], releases: released }).brokenReleases).toEqual([{ cell: 0, reason: 'failed', testId: 't9' }])
+    expect(derive({ tests: [buildTest('t1', 0, { superseded: true })], releases: released }).brokenReleases).toEqual([
       { cell: 0, reason: 'basis-lost', testId: 't1' },
       { cell: 1, reason: 'basis-lost', testId: 't1' },
     ])
-    expect(derive({ slices: facts().slices.slice(1), tests: [testAt('t1', 0)], releases: released }).brokenReleases).toEqual([{ cell: 0, reason: 'removed', testId: null }])
-    expect(derive({ tests: [testAt('t1', 0)], releases: released }).brokenReleases).toEqual([])
+    expect(derive({ slices: buildLotFacts().slices.slice(1), tests: [buildTest('t1', 0)], releases: released }).brokenReleases).toEqual([{ cell: 0, reason: 'removed', testId: null }])
+    expect(derive({ tests: [buildTest('t1', 0)], releases: released }).brokenReleases).toEqual([])
   })
 
   it('stand under a verification hold, which is a failure on ground not released', () => {
     const marks = [{ testId: 'v1', kind: 'hold' as const, cells: [1, 2] }]
-    const lot = derive({ tests: [testAt('t1', 0)], releases: released, marks })
+    const lot = derive({ tests: [buildTest('t1', 0)], releases: released, marks })
     expect(lot.cells[1]).toMatchObject({ state: 'released', flags: GROUND_FLAGS.hold })
     expect(lot.cells[2]).toMatchObject({ state: 'rework', namingTestId: 'v1' })
     expect(lot.brokenReleases).toEqual([])
   })
 
   it('give way to a recheck', () => {
-    expect(statesOf({ tests: [testAt('t1', 0)], releases: released, rechecks: [0] }).slice(0, 2)).toEqual(['recheck', 'released'])
+    expect(statesOf({ tests: [buildTest('t1', 0)], releases: released, rechecks: [0] }).slice(0, 2)).toEqual(['recheck', 'released'])
   })
 })
 
@@ -251,74 +213,8 @@ describe('the foundation', () => {
   })
 
   it('is rework where a failing test marks it', () => {
-    const tests = [testAt('t1', 1, { outcome: 'fail', purpose: 'judgement' })]
+    const tests = [buildTest('t1', 1, { outcome: 'fail', purpose: 'judgement' })]
     const lot = foundation({ tests, marks: [{ testId: 't1', kind: 'fail', cells: [1] }], inspections: [{ cell: 1, outcome: 'accepted' }] })
     expect(lot.cells[1]).toMatchObject({ state: 'rework', namingTestId: 't1' })
-  })
-})
-
-describe('properties of the derivation', () => {
-  const outcome = fc.constantFrom('pass', 'pass', 'pass', 'fail', 'suspect', 'pending') as fc.Arbitrary<LotTest['outcome']>
-  const tests = fc
-    .array(fc.record({ cell: fc.integer({ min: 0, max: 5 }), sampledAt: fc.integer({ min: 0, max: 60 }), outcome, superseded: fc.boolean(), purpose: fc.constantFrom('required', 'required', 'judgement') as fc.Arbitrary<LotTest['purpose']> }), { maxLength: 6 })
-    .map((items) => items.map(({ cell, ...rest }, i) => testAt(`t${i + 1}`, cell, rest)))
-  const slices = fc
-    .uniqueArray(fc.record({ cell: fc.integer({ min: 0, max: 5 }), time: fc.integer({ min: 0, max: 5 }), volume: fc.integer({ min: 1, max: CELL }) }), { selector: ({ cell, time }) => `${cell} ${time}`, maxLength: 12 })
-    .map((items) => items.map(({ cell, time, volume }) => sliceAt(cell, time * 10, `p${time}`, volume)))
-  const marksOf = (all: readonly LotTest[]) =>
-    all.filter((test) => test.outcome === 'fail' || test.outcome === 'suspect').map((test) => ({ testId: test.testId, kind: test.outcome === 'fail' ? ('fail' as const) : ('suspect' as const), cells: [test.cell] }))
-  const settings = { seed: 20261201, numRuns: 300 }
-
-  it('the answer does not depend on the order in which the records arrived', () => {
-    fc.assert(
-      fc.property(slices, tests, (fill, taken) => {
-        const one = derive({ slices: fill, tests: taken, marks: marksOf(taken) })
-        const other = derive({ slices: [...fill].reverse(), tests: [...taken].reverse(), marks: [...marksOf(taken)].reverse() })
-        expect(other).toEqual(one)
-      }),
-      settings,
-    )
-  })
-
-  it('ground meets spec only where passes hold all of it, and never where a live failure marks it', () => {
-    fc.assert(
-      fc.property(slices, tests, (fill, taken) => {
-        const lot = derive({ slices: fill, tests: taken, marks: marksOf(taken) })
-        const failed = new Set(taken.filter((test) => test.outcome === 'fail' && !test.superseded).map((test) => test.cell))
-        for (const cell of lot.cells) {
-          expect(cell.spokenCm3).toBeLessThanOrEqual(cell.volumeCm3)
-          if (cell.state === 'meets-spec') expect([cell.spokenCm3, failed.has(cell.cell)]).toEqual([cell.volumeCm3, false])
-          if (cell.volumeCm3 > 0 && failed.has(cell.cell)) expect(cell.state).toBe('rework')
-        }
-      }),
-      settings,
-    )
-  })
-
-  it('with passes only, a lot owes nothing exactly when all its fill meets spec', () => {
-    fc.assert(
-      fc.property(slices, fc.array(fc.integer({ min: 0, max: 5 }), { maxLength: 4 }), (fill, cells) => {
-        const lot = derive({ slices: fill, tests: cells.map((cell, i) => testAt(`t${i + 1}`, cell)) })
-        expect(lot.cells.every((cell) => cell.state === 'meets-spec' || cell.state === 'not-placed')).toBe(lot.owed === 0)
-      }),
-      settings,
-    )
-  })
-
-  it('releasing what meets spec changes nothing else', () => {
-    fc.assert(
-      fc.property(slices, tests, (fill, taken) => {
-        const before = derive({ slices: fill, tests: taken, marks: marksOf(taken) })
-        const releases = before.cells
-          .filter((cell) => cell.state === 'meets-spec')
-          .map(({ cell, volumeCm3 }) => ({ cell, status: 'released' as const, volumeCm3, pairs: before.pairs.filter((pair) => pair.cell === cell).map(({ testId, cm3 }) => ({ testId, cell, cm3 })) }))
-        const after = derive({ slices: fill, tests: taken, marks: marksOf(taken), releases })
-        expect(after.brokenReleases).toEqual([])
-        expect(after.cells.map((cell) => cell.spokenCm3)).toEqual(before.cells.map((cell) => cell.spokenCm3))
-        expect(after.cells.map((cell) => cell.state)).toEqual(before.cells.map((cell) => (cell.state === 'meets-spec' ? 'released' : cell.state)))
-        expect([after.required, after.owed]).toEqual([before.required, before.owed])
-      }),
-      settings,
-    )
   })
 })
