@@ -13,8 +13,7 @@ export type NavItem = {
 export function NavCount({ count, countOf = 'waiting' }: { count: number; countOf?: string | undefined }) {
   return (
     <span className="num ml-[6px] inline-block rounded-[2px] bg-rework px-[5px] pt-[3px] pb-px text-cap leading-none font-bold text-[#1c0b02]">
-      {count}
-      <span className="sr-only"> {countOf}</span>
+      {count} <span className="sr-only">{countOf}</span>
     </span>
   )
 }
@@ -28,12 +27,12 @@ export function ShellNav({ items }: { items: readonly NavItem[] }) {
           to={to}
           className={({ isActive }) =>
             classNames(
-              'relative top-[2px] flex h-[calc(100%+2px)] items-center border-b-3 px-3 pt-[2px] font-semibold whitespace-nowrap no-underline -outline-offset-3',
+              'flex h-full items-center border-b-3 px-3 pt-[5px] font-semibold whitespace-nowrap no-underline -outline-offset-3',
               isActive ? 'border-ink text-ink' : 'border-transparent text-ink-2 hover:text-ink',
             )
           }
         >
-          {label}
+          {`${label} `}
           {count !== undefined && count > 0 && <NavCount count={count} countOf={countOf} />}
         </NavLink>
       ))}

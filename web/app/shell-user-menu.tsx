@@ -28,8 +28,7 @@ export function UserMenu({ user, nav, onSignOut }: { user: ShellUser; nav: reado
         {initialsOf(user.name)}
       </span>
       <span className="leading-[1.15] max-xl:sr-only">
-        <span className="sr-only">Menu, </span>
-        <b className="block font-semibold">{user.name}</b>
+        <span className="sr-only">Menu,</span> <b className="block font-semibold">{user.name}</b>{' '}
         {user.role !== undefined && <span className="block text-[12px] text-ink-2">{user.role}</span>}
       </span>
     </button>
@@ -46,7 +45,7 @@ export function UserMenu({ user, nav, onSignOut }: { user: ShellUser; nav: reado
           {nav.map(({ label, to, count, countOf }) => (
             <MenuLink key={to}>
               <Link to={to}>
-                {label}
+                {`${label} `}
                 {count !== undefined && count > 0 && <NavCount count={count} countOf={countOf} />}
               </Link>
             </MenuLink>

@@ -30,7 +30,7 @@ export function Shell({ site, nav, connection, user, onSignOut, banner, children
         Skip to the page
       </a>
       <header className="flex h-14 shrink-0 items-center gap-x-3 border-b-2 border-ink bg-raised px-3 sm:gap-x-[26px] sm:px-5">
-        <Link to={paths.home()} aria-label="Hardpan, to my sites" className="no-underline">
+        <Link to={paths.home()} aria-label="Hardpan, to my sites" className="flex no-underline">
           <Wordmark className="max-[480px]:[&>span]:sr-only" />
         </Link>
         {site !== undefined && (

@@ -1,6 +1,7 @@
 import { AlertDialog, Dialog as RadixDialog } from 'radix-ui'
 import type { ReactNode } from 'react'
 import { classNames } from '#web/lib/class-names.ts'
+import { useFocusReturn } from './use-focus-return.ts'
 
 const VEIL = 'fixed inset-0 z-40 bg-[#14212a]/40'
 const FRAME =
@@ -26,11 +27,12 @@ type QuestionProps = {
  * everything as it was.
  */
 export function Question({ open, onOpenChange, title, consequence, children, actions }: QuestionProps) {
+  const focusReturn = useFocusReturn()
   return (
     <AlertDialog.Root open={open} onOpenChange={onOpenChange}>
       <AlertDialog.Portal>
         <AlertDialog.Overlay className={VEIL} />
-        <AlertDialog.Content className={classNames(FRAME, 'max-w-[430px]')}>
+        <AlertDialog.Content {...focusReturn} className={classNames(FRAME, 'max-w-[430px]')}>
           <AlertDialog.Title className={TITLE}>{title}</AlertDialog.Title>
           <AlertDialog.Description asChild>
             <div className="text-ink-2">{consequence}</div>
@@ -56,11 +58,13 @@ type DialogProps = {
 
 /** A short task over the page: place fill, write a reason. */
 export function Dialog({ open, onOpenChange, title, description, children, actions, wide = false }: DialogProps) {
+  const focusReturn = useFocusReturn()
   return (
     <RadixDialog.Root open={open} onOpenChange={onOpenChange}>
       <RadixDialog.Portal>
         <RadixDialog.Overlay className={VEIL} />
         <RadixDialog.Content
+          {...focusReturn}
           className={classNames(FRAME, wide ? 'max-w-[680px]' : 'max-w-[460px]')}
           {...(description === undefined ? { 'aria-describedby': undefined } : {})}
         >
