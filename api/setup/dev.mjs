@@ -20,7 +20,7 @@ await runLifetime(async (lifetime) => {
   lifetime.check()
   const database = await openDatabase(lifetime, process.env)
   const apiPort = await freePort()
-  const api = runNode(['--watch', '--watch-preserve-output', 'api/main.ts'], {
+  const api = runNode([inRoot('api/setup/watch-server.mjs'), 'api/main.ts'], {
     ...process.env,
     NODE_ENV: 'development',
     DATABASE_URL: database.url,
