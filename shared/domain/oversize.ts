@@ -13,7 +13,7 @@ export const OVERSIZE_THRESHOLD = 5
 const GREATEST_SHARE = { 'no-4': 40, '3/8-in': 30, '3/4-in': 30 } as const
 
 export type OversizeSieve = CoarsePart['sieve']
-export type CurveMethod = 'D698' | 'D1557' | 'T99' | 'T180'
+export type CurveMethod = 'D698' | 'D1557' | 'T 99' | 'T 180'
 export type CurveLetter = 'A' | 'B' | 'C' | 'D'
 
 /**
@@ -21,7 +21,7 @@ export type CurveLetter = 'A' | 'B' | 'C' | 'D'
  * and T 180 methods A, B the No. 4 and C, D the 3/4 in.
  */
 export function oversizeSieve(method: CurveMethod, letter: CurveLetter): OversizeSieve {
-  if (method === 'T99' || method === 'T180') return letter === 'A' || letter === 'B' ? 'no-4' : '3/4-in'
+  if (method === 'T 99' || method === 'T 180') return letter === 'A' || letter === 'B' ? 'no-4' : '3/4-in'
   return letter === 'A' ? 'no-4' : letter === 'B' ? '3/8-in' : '3/4-in'
 }
 

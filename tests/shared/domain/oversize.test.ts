@@ -77,6 +77,6 @@ describe('oversize correction', () => {
 
   test('the sieve follows the method (checks 1.1: D698-07, T 99/T 180)', () => {
     expect(['A', 'B', 'C'].map((l) => oversizeSieve('D698', l as 'A'))).toEqual(['no-4', '3/8-in', '3/4-in'])
-    expect(['A', 'B', 'C', 'D'].map((l) => oversizeSieve('T180', l as 'A'))).toEqual(['no-4', 'no-4', '3/4-in', '3/4-in'])
+    expect(['A', 'B', 'C', 'D'].map((l) => oversizeSieve('T 180', l as 'A'))).toEqual(['no-4', 'no-4', '3/4-in', '3/4-in'])
   })
 })
