@@ -1,10 +1,10 @@
 /** A test's place in its chain: the first, a retest after rework, or a re-run of a doubtful reading. */
-export type ChainKind = 'retest' | 'rerun'
+export type ChainKind = 'retest' | 're-run'
 
 /** One test of a chain; `isVoid` once it has been voided, with its reason kept elsewhere. */
 export type ChainEntry = { readonly name: string; readonly isVoid: boolean }
 
-const LETTER: Record<ChainKind, string> = { retest: 'R', rerun: 'C' }
+const LETTER: Record<ChainKind, string> = { retest: 'R', 're-run': 'C' }
 const NAME = /^T-(\d{4,9})(?:-([RC])([1-9]\d{0,3}))?$/
 
 /**
@@ -26,7 +26,7 @@ export function parseTestName(name: string): ParsedTestName | null {
   const match = NAME.exec(name)
   if (!match) return null
   const [, number, letter, sequence] = match
-  const follow = letter ? ({ kind: letter === 'R' ? 'retest' : 'rerun', sequence: Number(sequence) } as const) : null
+  const follow = letter ? ({ kind: letter === 'R' ? 'retest' : 're-run', sequence: Number(sequence) } as const) : null
   return { number: Number(number), follow }
 }
 

@@ -14,8 +14,8 @@ describe('names of a chain', () => {
   test('retests count R1, R2; re-runs of a doubtful reading C1; apart from each other', () => {
     expect(nextChainName(chain('T-0142'), 'retest')).toBe('T-0142-R1')
     expect(nextChainName(chain('T-0142', 'T-0142-R1'), 'retest')).toBe('T-0142-R2')
-    expect(nextChainName(chain('T-0218'), 'rerun')).toBe('T-0218-C1')
-    expect(nextChainName(chain('T-0142', 'T-0142-R1'), 'rerun')).toBe('T-0142-C1')
+    expect(nextChainName(chain('T-0218'), 're-run')).toBe('T-0218-C1')
+    expect(nextChainName(chain('T-0142', 'T-0142-R1'), 're-run')).toBe('T-0142-C1')
     expect(nextChainName(chain('T-0142', 'T-0142-C1'), 'retest')).toBe('T-0142-R1')
   })
 
@@ -31,7 +31,7 @@ describe('names of a chain', () => {
 
   test('names are read back as they were made', () => {
     expect(parseTestName('T-0142-R2')).toEqual({ number: 142, follow: { kind: 'retest', sequence: 2 } })
-    expect(parseTestName('T-0218-C1')).toEqual({ number: 218, follow: { kind: 'rerun', sequence: 1 } })
+    expect(parseTestName('T-0218-C1')).toEqual({ number: 218, follow: { kind: 're-run', sequence: 1 } })
     for (const name of ['T-142', 'T-0142-R0', 'T-0142-X1', 't-0142', 'T-0142-R1-C1']) expect(parseTestName(name)).toBeNull()
     fc.assert(
       fc.property(fc.integer({ min: 1, max: 999_999_999 }), (n) => {
