@@ -30,7 +30,7 @@ function SheetOfWords({ title, kept, reference, reload }: Words & { reload: bool
   return (
     <main className="flex min-h-dvh flex-col bg-sheet">
       <div className="flex h-14 items-center border-b-2 border-ink bg-raised px-5">
-        <Link to={paths.home()} className="no-underline" aria-label="Hardpan, to the start">
+        <Link to={paths.home()} className="flex no-underline" aria-label="Hardpan, to the start">
           <Wordmark />
         </Link>
       </div>

@@ -12,7 +12,7 @@ type PlotAxesProps = {
   xLabel: string
 }
 
-/** Two axes with their figures; the last figure at the right is drawn inwards so that it is never cut off. */
+/** Two axes with their figures. The drawing keeps half a figure's width free at the right, so that the last is never cut off. */
 export function PlotAxes({ x, y, left, right, top, bottom, fontSize, grid, xLabel }: PlotAxesProps) {
   const xTicks = x.ticks(Math.min(8, Math.max(2, Math.floor((right - left) / (fontSize * 2.6)))))
   const yTicks = y.ticks(Math.max(2, Math.floor((bottom - top) / (fontSize * 5))))
@@ -31,7 +31,7 @@ export function PlotAxes({ x, y, left, right, top, bottom, fontSize, grid, xLabe
       )}
       <g fontFamily="var(--font-mono)">
         {xTicks.map((tick) => (
-          <text key={tick} x={x(tick)} y={bottom + fontSize * 1.3} textAnchor={x(tick) > right - fontSize ? 'end' : 'middle'}>
+          <text key={tick} x={x(tick)} y={bottom + fontSize * 1.3} textAnchor="middle">
             {tick}
           </text>
         ))}
