@@ -1,9 +1,15 @@
 import type { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
+import { dispositionRoutes } from '#api/features/dispositions/dispositions.routes.ts'
 import { eventRoutes } from '#api/features/events/events.routes.ts'
+import { groundRoutes } from '#api/features/ground/ground.routes.ts'
+import { inspectionRoutes } from '#api/features/inspections/inspections.routes.ts'
 import { labRoutes } from '#api/features/lab/lab.routes.ts'
 import { lotRoutes } from '#api/features/lots/lots.routes.ts'
 import { memberRoutes } from '#api/features/members/members.routes.ts'
+import { placementRoutes } from '#api/features/placements/placements.routes.ts'
+import { releaseRoutes } from '#api/features/releases/releases.routes.ts'
+import { reworkRoutes } from '#api/features/rework/rework.routes.ts'
 import { siteRoutes, sitesRoutes } from '#api/features/sites/sites.routes.ts'
 import { stakeRoutes } from '#api/features/stakes/stakes.routes.ts'
 import { testRoutes } from '#api/features/tests/tests.routes.ts'
@@ -12,4 +18,18 @@ import { testRoutes } from '#api/features/tests/tests.routes.ts'
 export const apiFeatures: readonly ((deps: Deps) => Router)[] = [sitesRoutes]
 
 /** Routers mounted at /api/sites/:siteId (mergeParams), behind the check that the person belongs to the site. */
-export const siteFeatures: readonly ((deps: Deps) => Router)[] = [siteRoutes, labRoutes, memberRoutes, eventRoutes, testRoutes, stakeRoutes, lotRoutes]
+export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
+  siteRoutes,
+  labRoutes,
+  memberRoutes,
+  eventRoutes,
+  groundRoutes,
+  placementRoutes,
+  inspectionRoutes,
+  testRoutes,
+  stakeRoutes,
+  lotRoutes,
+  reworkRoutes,
+  releaseRoutes,
+  dispositionRoutes,
+]

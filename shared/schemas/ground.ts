@@ -32,7 +32,7 @@ export const readyGroupSchema = z.object({
 
 /** Cells that may not, by the lowest unresolved layer's reason. */
 export const notYetGroupSchema = z.object({
-  reason: z.enum(['awaiting-inspection', 'awaiting-test', 'rework', 'awaiting-retest', 'suspect', 'recheck', 'hold', 'doubt', 'awaiting-release', 'awaiting-acceptance', 'partial', 'at-grade']),
+  reason: z.enum(['awaiting-inspection', 'awaiting-test', 'rework', 'awaiting-retest', 'suspect', 'recheck', 'hold', 'awaiting-release', 'awaiting-acceptance', 'partial', 'not-placed', 'at-grade']),
   zoneId: z.string(),
   lift: z.number(),
   cells: z.array(z.number()),
@@ -41,6 +41,10 @@ export const notYetGroupSchema = z.object({
   stakes: z.array(z.string()),
   orderId: z.string().nullable(),
   orderNumber: z.string().nullable(),
+  orderState: z.string().nullable(),
+  workingSince: instantSchema.nullable(),
+  lotId: z.string().nullable(),
+  lotName: z.string().nullable(),
   testNumber: z.string().nullable(),
   testId: z.string().nullable(),
   headline: z.string(),
@@ -59,7 +63,7 @@ export const boardSchema = z.object({
   ),
   /** current results that cannot be right and want a re-run */
   doubtful: z.array(z.object({ testId: z.string(), number: z.string(), cell: z.number(), lift: z.number(), headline: z.string() })),
-  exceptions: z.array(z.object({ kind: z.enum(['covered-early', 'suspect', 'retest-without-rework', 'override', 'volume-difference', 'hold']), text: z.string(), detail: z.string(), cells: z.array(z.number()), lift: z.number().nullable() })),
+  exceptions: z.array(z.object({ kind: z.enum(['covered-early', 'retest-without-rework', 'voided-failure', 'override', 'volume-difference', 'hold']), text: z.string(), detail: z.string(), cells: z.array(z.number()), lift: z.number().nullable(), testId: z.string().nullable() })),
   verification: z.object({ tests: z.number(), failing: z.number() }),
 })
 export type Board = z.infer<typeof boardSchema>
@@ -96,3 +100,7 @@ export const columnSchema = z.object({
   ),
 })
 export type Column = z.infer<typeof columnSchema>
+
+/** Patches after a revision; `reset` says: read the sheet again. */
+export const patchesSchema = z.object({ reset: z.boolean(), revision: z.number(), patches: z.array(z.base64()) })
+export type Patches = z.infer<typeof patchesSchema>

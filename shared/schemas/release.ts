@@ -47,3 +47,4 @@ export const releaseSchema = z.object({
 export type Release = z.infer<typeof releaseSchema>
 export const releaseListSchema = z.object({ releases: z.array(releaseSchema) })
 export const declineReleaseSchema = z.object({ reason: reasonSchema })
+export const issueReleaseSchema = z.object({ overrideReason: reasonSchema.nullable() })

@@ -13,6 +13,7 @@ export const createOrderSchema = z.object({
   actions: z.array(reworkActionSchema).min(1, 'Say what is wrong'),
   remarks: reasonSchema,
 })
+export const withdrawOrderSchema = z.object({ reason: reasonSchema })
 export const editOrderSchema = z.object({ cells: z.array(z.number().int().min(0)).min(1).max(20_000), reason: reasonSchema })
 
 export const orderStepInputSchema = z.discriminatedUnion('kind', [
@@ -29,6 +30,7 @@ export const orderStepInputSchema = z.discriminatedUnion('kind', [
   }),
   z.object({ id: idSchema, kind: z.literal('help'), happenedAt: instantSchema, remarks: remarksSchema }),
 ])
+export type CreateOrder = z.infer<typeof createOrderSchema>
 export type OrderStepInput = z.infer<typeof orderStepInputSchema>
 
 export const orderStepSchema = z.object({
@@ -36,6 +38,8 @@ export const orderStepSchema = z.object({
   at: instantSchema,
   by: z.string(),
   text: z.string(),
+  /** what was reported done */
+  done: z.object({ passes: z.number().nullable(), waterLitres: z.number().nullable(), depthUm: z.number().nullable() }).nullable(),
 })
 
 export const orderSchema = z.object({
@@ -53,7 +57,9 @@ export const orderSchema = z.object({
   /** positive adds, negative dries; null where moisture is not the trouble */
   waterLitres: z.number().nullable(),
   depthUm: z.number(),
+  /** passes and machine of the fill's own placement, as it was rolled */
   passesWanted: z.number().nullable(),
+  machine: z.string(),
   assignedTo: z.string().nullable(),
   openedAt: instantSchema,
   workingSince: instantSchema.nullable(),
@@ -70,3 +76,5 @@ export const orderSchema = z.object({
 })
 export type Order = z.infer<typeof orderSchema>
 export const orderListSchema = z.object({ orders: z.array(orderSchema) })
+
+export const stepAnswerSchema = z.object({ id: z.string(), number: z.string(), revision: z.number() })
