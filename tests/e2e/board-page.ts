@@ -18,13 +18,22 @@ export async function openBoard(browser: Browser, url: string, reducedMotion: 'r
   page.on('pageerror', (error) => printed.push(error.message))
   await page.goto(url)
   await page.waitForFunction(() => (window as unknown as { boardPage?: BoardPage }).boardPage?.handle.current?.projectCellCenter(0) !== undefined)
+  // a board that has not begun to draw stands still too
+  for (let round = 0; round < 100 && !isDrawn(await takePicture(page)); round++) await page.waitForTimeout(200)
   await settle(page)
   return { page, printed }
 }
 
-/** Lets layers, images and running changes come to rest. */
+/** Waits until the page has stopped changing: two pictures in a row are the same. */
 export async function settle(page: Page): Promise<void> {
-  await page.waitForTimeout(1200)
+  let before = await page.screenshot()
+  for (let round = 0; round < 60; round++) {
+    await page.waitForTimeout(150)
+    const after = await page.screenshot()
+    if (after.equals(before)) return
+    before = after
+  }
+  throw new Error('The board does not come to rest')
 }
 
 export interface Picture {
@@ -56,6 +65,12 @@ export interface Box {
   readonly top: number
   readonly right: number
   readonly bottom: number
+}
+
+/** True once cells are on the page: no other thing is large and not the colour of the sheet. */
+function isDrawn(picture: Picture): boolean {
+  const middle = pixelsIn(picture, { left: picture.width / 2 - 40, top: picture.height / 2 - 40, right: picture.width / 2 + 40, bottom: picture.height / 2 + 40 })
+  return middle.filter((pixel) => pixel[0] < 200).length > middle.length / 2
 }
 
 /** Pixels of a box, edges rounded inwards. */

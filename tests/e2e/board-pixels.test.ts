@@ -268,7 +268,7 @@ test('the ink spreads from the test outward and comes to rest as the sheet is', 
   }
   const setClock = async (ms: number): Promise<void> => {
     await page.evaluate((ms) => (window as unknown as { setClock: (ms: number) => void }).setClock(ms), ms)
-    await page.waitForTimeout(300)
+    await settle(page)
   }
   await setClock(200)
   expect(await shareAt(cells[0]!)).toBeGreaterThan(0.95)
@@ -288,8 +288,7 @@ test('the board comes back as it was after the graphics context is lost', async 
     await new Promise((resolve) => setTimeout(resolve, 200))
     lose.restoreContext()
   })
-  await settle(page)
-  expect(differenceBox(before, await takePicture(page))).toBeUndefined()
+  await expect.poll(async () => differenceBox(before, await takePicture(page)), { timeout: 30_000 }).toBeUndefined()
 })
 
 test('nothing is refused by the strict content policy and nothing goes wrong on the way', () => {

@@ -92,6 +92,7 @@ export function createBoardMap(options: BoardMapOptions): BoardMap {
   let theme = options.theme
   let marks: readonly BoardMark[] = []
   let shown: GroundSheet['cut'] | undefined
+  let styled = false
   const layer = createBoardLayer({
     id: LAYER.cells,
     projection,
@@ -109,14 +110,19 @@ export function createBoardMap(options: BoardMapOptions): BoardMap {
   createZoneLabels(map, projection, cellPixels)(site.zones)
 
   const fillMarks = (): void => {
-    map.getSource<GeoJSONSource>('marks')?.setData(marksData(projection, marks))
+    if (styled) void map.getSource<GeoJSONSource>('marks')?.setData(marksData(projection, marks))
   }
   const paint = (): void => {
+    if (!styled) return
     for (const [id, property, colour] of themePaint(theme)) map.setPaintProperty(id, property as 'line-color', colour)
   }
   // comes at the start, and again when a lost graphics context has been given back: the map restores its own
   // layers then, but not custom ones
+  map.on('webglcontextlost', () => {
+    styled = false
+  })
   map.on('style.load', () => {
+    styled = true
     for (const { name, image, pixelRatio } of drawMarkImages(devicePixelRatio)) {
       if (!map.hasImage(name)) map.addImage(name, image, { pixelRatio })
     }
@@ -150,7 +156,7 @@ export function createBoardMap(options: BoardMapOptions): BoardMap {
     patchCells: (sheet, cells, from) => layer.patchCells(sheet, cells, place(from)),
     setMarks(next) {
       marks = next
-      if (map.isStyleLoaded() === true || map.getSource('marks') !== undefined) fillMarks()
+      fillMarks()
     },
     setStakes,
     setChosen: layer.setChosen,
@@ -159,7 +165,7 @@ export function createBoardMap(options: BoardMapOptions): BoardMap {
       if (next === theme) return
       theme = next
       layer.setTheme(next)
-      if (map.getLayer(LAYER.background) !== undefined) paint()
+      paint()
     },
     fit() {
       const { clientWidth: width, clientHeight: height } = map.getContainer()

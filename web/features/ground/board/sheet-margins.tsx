@@ -1,6 +1,6 @@
 import { useEffect, useRef } from 'react'
 import { columnLetters } from '#shared/domain/cell-label.ts'
-import { MARGIN, sheetFrame } from './board-camera.ts'
+import { MARGIN, sheetFrame, type SheetFrame } from './board-camera.ts'
 import type { BoardMap } from './board-map.ts'
 
 export interface SheetMarginsProps {
@@ -16,10 +16,13 @@ export interface MarginLabel {
   readonly at: number
 }
 
-interface MarginRange {
-  /** pixel of the first line, and pixels from one to the next */
+/** Pixel of the first line, and pixels from one to the next. */
+interface MarginScale {
   readonly origin: number
   readonly step: number
+}
+
+interface MarginRange extends MarginScale {
   readonly count: number
   readonly length: number
   readonly gap: number
@@ -43,6 +46,16 @@ export function marginLabels({ origin, step, count, length, gap, selected }: Mar
     if (inside && (chosen || (regular && !crowded))) labels.push({ index, at: at(index) })
   }
   return labels
+}
+
+/** Where the column lines meet the upper margin: web maps shear a turned grid by up to a thousandth. */
+function columnScale({ x, y, columnX, columnY, rowX, rowY }: SheetFrame): MarginScale {
+  return { origin: x + (rowX * (MARGIN - y)) / rowY, step: columnX - (rowX * columnY) / rowY }
+}
+
+/** Where the row lines meet the left margin. */
+function rowScale({ x, y, columnX, columnY, rowX, rowY }: SheetFrame): MarginScale {
+  return { origin: y + (columnY * (MARGIN - x)) / columnX, step: rowY - (columnY * rowX) / columnX }
 }
 
 /** Sets the texts of a group, using again the elements that are there. */
@@ -90,8 +103,8 @@ export function SheetMargins({ board, selectedCell }: SheetMarginsProps) {
       const key = `${Object.values(frame).join()} ${width} ${height}`
       if (key === drawn) return
       drawn = key
-      const across: MarginRange = { origin: frame.x, step: frame.columnX, count: site.grid.columns, length: width, gap: 20, selected: column }
-      const down: MarginRange = { origin: frame.y, step: frame.rowY, count: site.grid.rows, length: height, gap: 17, selected: row }
+      const across: MarginRange = { ...columnScale(frame), count: site.grid.columns, length: width, gap: 20, selected: column }
+      const down: MarginRange = { ...rowScale(frame), count: site.grid.rows, length: height, gap: 17, selected: row }
       if (top !== undefined) writeLabels(top, marginLabels(across), 'top', column)
       if (left !== undefined) writeLabels(left, marginLabels(down), 'left', row)
       marks?.setAttribute('d', ticks(across, 'top') + ticks(down, 'left'))
