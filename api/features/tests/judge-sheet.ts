@@ -2,7 +2,7 @@ import type { EntityManager } from 'typeorm'
 import { ReferenceCurveEntity } from '#api/entities/reference-curve.entity.ts'
 import type { SpecificationEntity } from '#api/entities/specification.entity.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
-import { refusal } from '#api/http/refuse-input.ts'
+import { refusal, refuseIf } from '#api/http/refuse-input.ts'
 import type { ReducedSheet } from '#shared/domain/field-sheets.ts'
 import { reduceSheet } from '#shared/domain/reduce-sheet.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
@@ -38,6 +38,14 @@ export function judgeSheet({ sheet, oversizePercent }: Sheet, plan: SitePlan, cu
   )
   if (!judgement.ok) return { ok: false, problems: judgement.problems.map((problem) => ({ ...problem, field: requestField(problem.field) })) }
   return { ok: true, reduced, verdict: judgement.verdict }
+}
+
+/** As judgeSheet; what keeps a sheet from being judged is refused, each field named. */
+export function judgeOrRefuse(...sheet: Parameters<typeof judgeSheet>): Extract<JudgedSheet, { ok: true }> {
+  const judged = judgeSheet(...sheet)
+  if (judged.ok) return judged
+  refuseIf(judged.problems.map(({ field, message }) => ({ path: `body.${field}`, message })))
+  throw new Error('A sheet was refused without a reason')
 }
 
 function requestField(field: string): string {

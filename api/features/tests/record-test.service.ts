@@ -10,7 +10,7 @@ import { loadLotsOfCells } from '#api/features/lots/lots-of-cells.queries.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
 import { retireIdleStakes, retireStakes } from '#api/features/stakes/retire-stakes.ts'
 import { continueOrder, findOpenOrder, issueOrder, orderCells, withdrawOrder } from '#api/features/tests/failure-order.ts'
-import { curveFlags, judgeSheet, loadCurve } from '#api/features/tests/judge-sheet.ts'
+import { curveFlags, judgeOrRefuse, loadCurve } from '#api/features/tests/judge-sheet.ts'
 import { checkLift, placeTest } from '#api/features/tests/locate-test.ts'
 import { failedCells, marksOf } from '#api/features/tests/mark-ground.ts'
 import type { GroundMark } from '#api/features/tests/mark-ground.ts'
@@ -19,7 +19,6 @@ import { checkFollowing, loadChain, wasReworkReported } from '#api/features/test
 import type { Chain } from '#api/features/tests/test-chain.ts'
 import { authorizeRecording } from '#api/features/tests/test-rights.ts'
 import { checkStakes } from '#api/features/tests/test-stakes.ts'
-import { refuseIf } from '#api/http/refuse-input.ts'
 import type { Reason } from '#shared/domain/result.ts'
 import { formatTestNumber, nextChainName } from '#shared/domain/retest-chain.ts'
 import type { CreateTest, RecordTestAnswer } from '#shared/schemas/field-test.ts'
@@ -29,66 +28,20 @@ import type { CreateTest, RecordTestAnswer } from '#shared/schemas/field-test.ts
  * its rework order, retires the stake it was taken at, and derives the lots it touches again.
  */
 export async function recordTest(write: SiteWrite, input: CreateTest): Promise<RecordTestAnswer> {
-  const { manager, siteId, role, now } = write
-  authorizeRecording(role, input.purpose)
-  const plan = await loadSitePlan(manager, siteId)
-  const sampledAt = notInFuture(new Date(input.sampledAt), now)
-  const { cell, zone, at } = placeTest(plan, input)
-  const curve = await loadCurve(manager, siteId, input.curveId)
-  const [lotId] = await loadLotsOfCells(manager, siteId, input.lift, [cell])
-  const lot = lotId === undefined ? undefined : await deriveLotNow(manager, plan, lotId)
-  const specification = lot?.specification ?? zone.specification
-  const judged = judgeSheet(input, plan, curve, specification)
-  if (!judged.ok) {
-    refuseIf(judged.problems.map(({ field, message }) => ({ path: `body.${field}`, message })))
-    throw new Error('A sheet was refused without a reason')
-  }
-  const { reduced, verdict } = judged
-
-  const liftFlags = checkLift(plan, cell, input)
-  const chain = await loadChain(manager, siteId, input.follows)
-  const reworkReported = chain !== null && (await wasReworkReported(manager, siteId, chain.id, sampledAt))
-  const chainFlags = chain ? checkFollowing(chain, { ...input, zoneId: zone.id, at, sampledAt, reworkReported }) : []
-  const stakes = await checkStakes(manager, siteId, { ...input, at, zone, lotId, rules: specification.body })
-  const order = chain ? await findOpenOrder(write, chain.tests) : null
-  const refuted = order && chain ? refutes(chain, { ...input, verdict, elsewhere: chainFlags.length > 0 }) : null
-  const flags: Reason[] = [
-    ...reduced.flags,
-    ...liftFlags,
-    ...chainFlags,
-    ...stakes.flags,
-    ...curveFlags(curve, lot?.lot.materialId ?? null),
-    ...(refuted === 'cause-missing' ? [{ code: 'cause-not-recorded', message: 'The cause of the doubted reading is not recorded, so its order stays.' }] : []),
-  ]
-  const test = await insertTest(write, input, { cell, at, zoneId: zone.id, sampledAt, chain, flags, reduced, verdict })
-
+  authorizeRecording(write.role, input.purpose)
+  const plan = await loadSitePlan(write.manager, write.siteId)
+  const assessed = await assessTest(write, plan, input)
+  const { cell, at, verdict, chain, order, stakes, lot } = assessed
+  const test = await insertTest(write, input, assessed)
   const marks = marksOf({ verdict, purpose: input.purpose, cell, at, replacesId: chain?.current?.id ?? null, lot })
   await storeMarks(write, test, marks)
-  const standing = await settleOrder(write, plan, { test, chain, order, marks, refuted: refuted === 'refuted' })
-  await retireStakes(write, stakes.retires, test.number)
-  write.record(
-    'test.recorded',
-    { type: 'test', id: test.id },
-    {
-      ...input,
-      number: test.number,
-      seq: test.seq,
-      cell: plan.label(cell),
-      lotId: lotId ?? null,
-      specificationId: specification.id,
-      verdict: { outcome: verdict.outcome, treatedAsFail: verdict.treatedAsFail, near: verdict.near, headline: verdict.headline, rc: verdict.rc, moistureDeviation: verdict.moistureDeviation, reasons: verdict.reasons },
-      marks: marks.map(({ kind, cells }) => ({ kind, cells: cells.map((marked) => plan.label(marked)) })),
-      flags: flags.map((flag) => flag.code),
-      orderNumber: standing ? orderNumber(standing.seq) : null,
-      retiredStakes: stakes.retires.map((stake) => stake.label),
-    },
-    sampledAt,
-  )
-  write.changed('test', test.id)
+  const standing = await settleOrder(write, plan, { test, order, marks, refuted: assessed.refuted === 'refuted' })
+  await retireStakes(write, stakes, test.number)
+  tellRecorded(write, plan, input, { test, assessed, marks, standing })
 
   const inOrder = order ? await orderCells(write, order.id) : []
   const touched = [cell, ...marks.flatMap((mark) => mark.cells), ...(chain?.tests.map((other) => other.cell) ?? []), ...inOrder]
-  const lots = await loadLotsOfCells(manager, siteId, input.lift, touched)
+  const lots = await loadLotsOfCells(write.manager, write.siteId, input.lift, touched)
   const change = await changeGround(write, plan, { lots, from: input.at })
   await retireIdleStakes(write, change.lots.values())
   return {
@@ -103,16 +56,68 @@ export async function recordTest(write: SiteWrite, input: CreateTest): Promise<R
   }
 }
 
-type Judged = Extract<ReturnType<typeof judgeSheet>, { ok: true }>
+type Assessed = Awaited<ReturnType<typeof assessTest>>
 
-interface Details extends Pick<Judged, 'reduced' | 'verdict'>, Pick<FieldTestEntity, 'cell' | 'zoneId' | 'sampledAt' | 'flags'> {
-  readonly at: { readonly u: number; readonly v: number }
-  readonly chain: Chain | null
+/** Everything a test is before it is stored: its place, verdict, chain, stake and what is to be told about it. */
+async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, input: CreateTest) {
+  const sampledAt = notInFuture(new Date(input.sampledAt), now)
+  const { cell, zone, at } = placeTest(plan, input)
+  const curve = await loadCurve(manager, siteId, input.curveId)
+  const [lotId] = await loadLotsOfCells(manager, siteId, input.lift, [cell])
+  const lot = lotId === undefined ? undefined : await deriveLotNow(manager, plan, lotId)
+  const specification = lot?.specification ?? zone.specification
+  const { reduced, verdict } = judgeOrRefuse(input, plan, curve, specification)
+  const liftFlags = checkLift(plan, cell, input)
+  const chain = await loadChain(manager, siteId, input.follows)
+  const reworkReported = chain !== null && (await wasReworkReported(manager, siteId, chain.id, sampledAt))
+  const chainFlags = chain ? checkFollowing(chain, { ...input, zoneId: zone.id, at, sampledAt, reworkReported }) : []
+  const stakes = await checkStakes(manager, siteId, { ...input, at, zone, lotId, rules: specification.body })
+  const order = chain ? await findOpenOrder({ manager, siteId }, chain.tests) : null
+  const refuted = order && chain ? refutes(chain, { ...input, verdict, elsewhere: chainFlags.length > 0 }) : null
+  const flags: Reason[] = [
+    ...reduced.flags,
+    ...liftFlags,
+    ...chainFlags,
+    ...stakes.flags,
+    ...curveFlags(curve, lot?.lot.materialId ?? null),
+    ...(refuted === 'cause-missing' ? [{ code: 'cause-not-recorded', message: 'The cause of the doubted reading is not recorded, so its order stays.' }] : []),
+  ]
+  return { sampledAt, cell, zoneId: zone.id, at, lot, specification, reduced, verdict, chain, order, refuted, stakes: stakes.retires, flags }
 }
 
-async function insertTest(write: SiteWrite, input: CreateTest, details: Details): Promise<FieldTestEntity> {
+interface Recorded {
+  readonly test: FieldTestEntity
+  readonly assessed: Assessed
+  readonly marks: readonly GroundMark[]
+  readonly standing: ReworkOrderEntity | null
+}
+
+function tellRecorded(write: SiteWrite, plan: SitePlan, input: CreateTest, { test, assessed, marks, standing }: Recorded): void {
+  const { outcome, treatedAsFail, near, headline, rc, moistureDeviation, reasons } = assessed.verdict
+  write.record(
+    'test.recorded',
+    { type: 'test', id: test.id },
+    {
+      ...input,
+      number: test.number,
+      seq: test.seq,
+      cell: plan.label(test.cell),
+      lotId: assessed.lot?.lot.id ?? null,
+      specificationId: assessed.specification.id,
+      verdict: { outcome, treatedAsFail, near, headline, rc, moistureDeviation, reasons },
+      marks: marks.map(({ kind, cells }) => ({ kind, cells: cells.map((cell) => plan.label(cell)) })),
+      flags: test.flags.map((flag) => flag.code),
+      orderNumber: standing ? orderNumber(standing.seq) : null,
+      retiredStakes: assessed.stakes.map((stake) => stake.label),
+    },
+    test.sampledAt,
+  )
+  write.changed('test', test.id)
+}
+
+async function insertTest(write: SiteWrite, input: CreateTest, assessed: Assessed): Promise<FieldTestEntity> {
   const { manager, siteId, user, now } = write
-  const { at, chain, reduced, verdict, cell, zoneId, sampledAt, flags } = details
+  const { at, chain, reduced, verdict, cell, zoneId, sampledAt, flags } = assessed
   const [{ last }]: [{ last: number | null }] = await manager.query('SELECT MAX(`seq`) AS `last` FROM `field_test` WHERE `site_id` = ?', [siteId])
   const test: FieldTestEntity = {
     siteId,
@@ -177,7 +182,6 @@ async function storeMarks({ manager, siteId }: SiteWrite, test: FieldTestEntity,
 
 interface Settling {
   readonly test: FieldTestEntity
-  readonly chain: Chain | null
   readonly order: ReworkOrderEntity | null
   readonly marks: readonly GroundMark[]
   readonly refuted: boolean
