@@ -77,3 +77,4 @@ export type CreateDisposition = z.infer<typeof createDispositionSchema>
 
 /** What a write to the Ground answers: the revision it made and what it touched. */
 export const groundWriteSchema = z.object({ id: z.string(), number: z.string().nullable(), revision: z.number(), cells: z.number(), volume: finiteSchema })
+export type GroundWrite = z.infer<typeof groundWriteSchema>

@@ -31,6 +31,7 @@ export const orderStepInputSchema = z.discriminatedUnion('kind', [
   z.object({ id: idSchema, kind: z.literal('help'), happenedAt: instantSchema, remarks: remarksSchema }),
 ])
 export type CreateOrder = z.infer<typeof createOrderSchema>
+export type EditOrder = z.infer<typeof editOrderSchema>
 export type OrderStepInput = z.infer<typeof orderStepInputSchema>
 
 export const orderStepSchema = z.object({
@@ -78,3 +79,4 @@ export type Order = z.infer<typeof orderSchema>
 export const orderListSchema = z.object({ orders: z.array(orderSchema) })
 
 export const stepAnswerSchema = z.object({ id: z.string(), number: z.string(), revision: z.number() })
+export type StepAnswer = z.infer<typeof stepAnswerSchema>

@@ -1,0 +1,10 @@
+import type { QueryClient } from '@tanstack/react-query'
+import { groundChanged } from '#web/data/board/cache-effects.ts'
+import { eventQueries } from '#web/data/event/queries.ts'
+import { refresh, type Change } from '#web/data/refresh.ts'
+
+/** Ground was inspected. */
+export function inspectionChanged(client: QueryClient, siteId: string, change: Change): void {
+  refresh(client, eventQueries.all(siteId), change)
+  groundChanged(client, siteId, change)
+}

@@ -1,0 +1,12 @@
+import type { QueryClient } from '@tanstack/react-query'
+import { groundChanged } from '#web/data/board/cache-effects.ts'
+import { eventQueries } from '#web/data/event/queries.ts'
+import { orderQueries } from '#web/data/order/queries.ts'
+import { refresh, type Change } from '#web/data/refresh.ts'
+
+/** A rework order was issued, went on, or ended. */
+export function orderChanged(client: QueryClient, siteId: string, change: Change): void {
+  refresh(client, orderQueries.all(siteId), change)
+  refresh(client, eventQueries.all(siteId), change)
+  groundChanged(client, siteId, change)
+}
