@@ -28,6 +28,9 @@ export class ReferenceCurveEntity extends SiteOwned {
   @BooleanColumn('gs_measured')
   gsMeasured!: boolean
 
+  @JsonColumn('coarse', { nullable: true })
+  coarse!: CreateCurve['coarse']
+
   @JsonColumn('reported', { nullable: true })
   reported!: CreateCurve['reported']
 

@@ -1,5 +1,13 @@
 import { CreateSitePlan1796083200006 } from '#api/migrations/1796083200006-create-site-plan.ts'
 import { CreateDerivedGround1796083200007 } from '#api/migrations/1796083200007-create-derived-ground.ts'
 import { CreateGroundFacts1796083200008 } from '#api/migrations/1796083200008-create-ground-facts.ts'
+import { CreateTestsAndStakes1796083200009 } from '#api/migrations/1796083200009-create-tests-and-stakes.ts'
+import { AddCoarsePartToCurves1796083200010 } from '#api/migrations/1796083200010-add-coarse-part-to-curves.ts'
 
-export const groundMigrations = [CreateSitePlan1796083200006, CreateDerivedGround1796083200007, CreateGroundFacts1796083200008]
+export const groundMigrations = [
+  CreateSitePlan1796083200006,
+  CreateDerivedGround1796083200007,
+  CreateGroundFacts1796083200008,
+  CreateTestsAndStakes1796083200009,
+  AddCoarsePartToCurves1796083200010,
+]

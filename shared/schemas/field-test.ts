@@ -120,7 +120,13 @@ export const verdictSchema = z.object({
     rounding: roundingSchema,
     repeatability: z.object({ rc: z.number(), moisture: z.number() }),
     waterDensity: z.number(),
-    curve: z.object({ maxDryDensity: z.number(), optimumMoisture: z.number(), gs: z.number(), gsMeasured: z.boolean() }),
+    curve: z.object({
+      maxDryDensity: z.number(),
+      optimumMoisture: z.number(),
+      gs: z.number(),
+      gsMeasured: z.boolean(),
+      coarse: z.object({ bulkGravity: z.number(), moisture: z.number(), sieve: z.enum(['no-4', '3/8-in', '3/4-in']) }).optional(),
+    }),
   }),
 })
 

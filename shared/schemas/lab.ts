@@ -26,6 +26,15 @@ export const curvePointSchema = z.object({
   moisture: finiteSchema.min(0, 'Moisture is not below 0 %').max(200),
   dryDensity: finiteSchema.positive('Dry density is above 0').max(5_000),
 })
+/** The stones that the mould left out, for the correction of D4718; the sieve follows the curve's method and letter. */
+export const coarsePartSchema = z.object({
+  /** bulk specific gravity, Gm */
+  bulkGravity: finiteSchema.min(1.5, 'Bulk specific gravity is between 1.5 and 6').max(6, 'Bulk specific gravity is between 1.5 and 6'),
+  /** moisture of the stones, %; 0 where it is not known */
+  moisture: percentSchema,
+})
+export type CoarsePart = z.infer<typeof coarsePartSchema>
+
 export const createCurveSchema = z.object({
   id: idSchema,
   code: nameSchema,
@@ -35,6 +44,8 @@ export const createCurveSchema = z.object({
   points: z.array(curvePointSchema).max(40),
   gs: specificGravitySchema,
   gsMeasured: z.boolean(),
+  /** null where the stones are not known: a test with oversize is then refused */
+  coarse: coarsePartSchema.nullable().default(null),
   /** the pair the laboratory reported; used only with a reason */
   reported: z
     .object({ maxDryDensity: finiteSchema.positive().max(5_000), optimumMoisture: percentSchema, reason: reasonSchema })

@@ -24,6 +24,7 @@ export function curveInput(overrides: Partial<CreateCurve> & { readonly material
     ]),
     gs: 2.7,
     gsMeasured: true,
+    coarse: null,
     reported: null,
     sampledAt: '2026-03-02T15:00:00.000Z',
     ...overrides,

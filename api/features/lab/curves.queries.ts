@@ -29,7 +29,7 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
   const userNames = new Map(users.map(({ id, name }) => [id, name]))
   const judged = await countTests(manager, siteId, curves.map((curve) => curve.id))
   return curves.map((curve): Curve => {
-    const { id, code, materialId, method, procedure, points, gs, gsMeasured, reported, status, maxDryDensity, optimumMoisture } = curve
+    const { id, code, materialId, method, procedure, points, gs, gsMeasured, coarse, reported, status, maxDryDensity, optimumMoisture } = curve
     return {
       id,
       code,
@@ -40,6 +40,7 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
       points,
       gs,
       gsMeasured,
+      coarse,
       reported,
       sampledAt: curve.sampledAt.toISOString(),
       status,

@@ -4,10 +4,11 @@ import type { SpecificationEntity } from '#api/entities/specification.entity.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
 import { refusal, refuseIf } from '#api/http/refuse-input.ts'
 import type { ReducedSheet } from '#shared/domain/field-sheets.ts'
+import { oversizeSieve } from '#shared/domain/oversize.ts'
 import { reduceSheet } from '#shared/domain/reduce-sheet.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
 import { judge } from '#shared/domain/verdict.ts'
-import type { Verdict } from '#shared/domain/verdict-types.ts'
+import type { CoarsePart, Verdict } from '#shared/domain/verdict-types.ts'
 import type { CreateTest } from '#shared/schemas/field-test.ts'
 
 export type JudgedSheet =
@@ -34,10 +35,14 @@ export function judgeSheet({ sheet, oversizePercent }: Sheet, plan: SitePlan, cu
   const { criteria, rounding, repeatability } = specification.body
   const judgement = judge(
     { dryDensity: reduced.dryDensity, moisture: reduced.moisture, oversizeShare: oversizePercent ?? undefined },
-    { curve: { maxDryDensity, optimumMoisture, gs, gsMeasured }, criteria, rounding, repeatability, waterDensity: plan.site.waterDensity },
+    { curve: { maxDryDensity, optimumMoisture, gs, gsMeasured, coarse: coarseOf(curve) }, criteria, rounding, repeatability, waterDensity: plan.site.waterDensity },
   )
   if (!judgement.ok) return { ok: false, problems: judgement.problems.map((problem) => ({ ...problem, field: requestField(problem.field) })) }
   return { ok: true, reduced, verdict: judgement.verdict }
+}
+
+function coarseOf({ coarse, method, procedure }: ReferenceCurveEntity): CoarsePart | undefined {
+  return coarse ? { ...coarse, sieve: oversizeSieve(method, procedure) } : undefined
 }
 
 /** As judgeSheet; what keeps a sheet from being judged is refused, each field named. */
