@@ -57,3 +57,13 @@ export type DrawStakes = z.infer<typeof drawStakesSchema>
 /** POST /api/sites/:siteId/stakes/draw: the stakes it drew. */
 export const drawStakesAnswerSchema = z.object({ id: z.string(), revision: z.number(), stakes: z.array(stakeSchema) })
 export type DrawStakesAnswer = z.infer<typeof drawStakesAnswerSchema>
+
+/** GET /api/sites/:siteId/frequency/series: of all zones, or of one. */
+export const seriesQuerySchema = z.object({ zoneId: z.string().max(36).optional() })
+export type SeriesQuery = z.infer<typeof seriesQuerySchema>
+
+/** Volume placed and volume spoken for, summed up to and with each working day on which either grew; oldest first. */
+export const frequencySeriesSchema = z.object({
+  days: z.array(z.object({ day: z.iso.date(), placedCm3: z.number().int(), spokenCm3: z.number().int() })),
+})
+export type FrequencySeries = z.infer<typeof frequencySeriesSchema>
