@@ -79,6 +79,13 @@ export function formatArea(mm2: number, system: UnitSystem): string {
     : formatQuantity(convertArea(mm2, 'mm2', 'm2'), 0, 'm²')
 }
 
+/** The area of a whole site from mm²: acres or hectares to 0.1. */
+export function formatSiteArea(mm2: number, system: UnitSystem): string {
+  return system === 'us'
+    ? formatQuantity(convertArea(mm2, 'mm2', 'ac'), 1, 'ac')
+    : formatQuantity(convertArea(mm2, 'mm2', 'ha'), 1, 'ha')
+}
+
 /** An elevation from µm: international feet to 0.01, metres to 0.001. */
 export function formatElevation(micrometres: number, system: UnitSystem): string {
   return system === 'us'

@@ -1,18 +1,30 @@
 import type { ComponentType } from 'react'
+import type { Verb } from '#shared/policies/policy.ts'
 import { PATTERNS } from '#web/app/paths.ts'
 
 export type Page = {
   readonly path: string
   /** The tab's title until the page knows a better one (usePageTitle). */
   readonly title: string
-  /** Who may come here: `anyone`, or only somebody signed in (others are sent to sign in and come back). */
-  readonly open: 'anyone' | 'signed-in'
+  /**
+   * Who may come here: `anyone`, only somebody signed in (others are sent to sign in and come back), or only a member
+   * of the site in its address; those find useSite() and the site's shell around them.
+   */
+  readonly open: 'anyone' | 'signed-in' | 'site'
+  /** For a page of a site: the act one must be allowed to come here; others are told so, and their menu leaves it out. */
+  readonly verb?: Verb
   /** The page's component, fetched when it is first needed. */
   readonly load: () => Promise<ComponentType>
 }
 
 /** Every page. A new one is one entry here and one address in paths.ts. */
 export const PAGES: readonly Page[] = [
+  {
+    path: PATTERNS.home,
+    title: 'My sites',
+    open: 'signed-in',
+    load: async () => (await import('#web/features/sites/sites-page.tsx')).SitesPage,
+  },
   {
     path: PATTERNS.signIn,
     title: 'Sign in',

@@ -1,6 +1,7 @@
 /** Addresses of the pages: patterns for the router, functions for links. */
 export const PATTERNS = {
   home: '/',
+  site: '/sites/:siteId',
   signIn: '/sign-in',
   ground: '/sites/:siteId/ground',
   frequency: '/sites/:siteId/frequency',
@@ -19,6 +20,8 @@ export const paths = {
   home: () => PATTERNS.home,
   /** @param next where to go on to afterwards; an address of this site. */
   signIn: (next?: string) => (next === undefined || next === '/' ? PATTERNS.signIn : `${PATTERNS.signIn}?next=${encodeURIComponent(next)}`),
+  /** Where every address of a site begins; by itself it leads to the Ground. */
+  site,
   ground: (siteId: string) => `${site(siteId)}/ground`,
   frequency: (siteId: string) => `${site(siteId)}/frequency`,
   tests: (siteId: string) => `${site(siteId)}/tests`,

@@ -11,7 +11,8 @@ type ShellProps = {
   site?: { readonly name: string; readonly subtitle: string } | undefined
   /** Only what works for this person. */
   nav: readonly NavItem[]
-  connection: Connection
+  /** Left out where nothing live is shown. */
+  connection?: Connection | undefined
   user: ShellUser
   onSignOut: () => void
   /** Notices over the page: offline, read-only. */
@@ -40,8 +41,10 @@ export function Shell({ site, nav, connection, user, onSignOut, banner, children
           </div>
         )}
         <ShellNav items={nav} />
-        <LiveMark connection={connection} />
-        <UserMenu user={user} nav={nav} onSignOut={onSignOut} />
+        <div className="ml-auto flex items-center gap-x-3 sm:gap-x-[26px]">
+          {connection !== undefined && <LiveMark connection={connection} />}
+          <UserMenu user={user} nav={nav} onSignOut={onSignOut} />
+        </div>
       </header>
       {banner}
       <main id="main" tabIndex={-1} className="relative flex min-h-0 flex-1 flex-col outline-none">

@@ -8,6 +8,7 @@ import {
   formatMoistureDeviation,
   formatNumber,
   formatPercent,
+  formatSiteArea,
   formatThickness,
   formatUnitWeight,
   formatWaterVolume,
@@ -70,6 +71,8 @@ export function makeUnits(system: UnitSystem, timeZone: string) {
     /** the same, without its unit, for tables whose head names it */
     volumeNumber: (cm3: number) => formatNumber(convertVolume(cm3, 'cm3', base.volume), 0),
     area: (mm2: number) => formatArea(mm2, system),
+    /** area of a whole site, mm², in acres or hectares */
+    siteArea: (mm2: number) => formatSiteArea(mm2, system),
     elevation: (um: number) => formatElevation(um, system),
     elevationNumber: (um: number) => formatNumber(fromMicrometres(um, base.elevation), system === 'us' ? 2 : 3),
     thickness: (um: number) => formatThickness(um, system),

@@ -1,10 +1,17 @@
-import { queryOptions } from '@tanstack/react-query'
-import { siteCellsSchema, siteListSchema, siteSchema } from '#shared/schemas/site.ts'
+import { queryOptions, type QueryKey } from '@tanstack/react-query'
+import { siteCellsSchema, siteListSchema, siteSchema, type SiteCells } from '#shared/schemas/site.ts'
 import { apiJson } from '#web/lib/api-client.ts'
 
 /** Where a site's resources are asked for. */
 export function siteAddress(siteId: string): string {
   return `/api/sites/${encodeURIComponent(siteId)}`
+}
+
+const hashOf = (cells: unknown): string | undefined => (cells as SiteCells | undefined)?.hash
+
+/** The cells of a site are large and known by their hash, so that they are not read again without need. */
+export function isSiteCells(key: QueryKey): boolean {
+  return key[0] === 'site' && key[2] === 'cells'
 }
 
 export const siteQueries = {
@@ -27,5 +34,6 @@ export const siteQueries = {
       queryKey: [...siteQueries.one(siteId), 'cells'] as const,
       queryFn: ({ signal }) => apiJson(`${siteAddress(siteId)}/cells`, siteCellsSchema, { signal }),
       staleTime: Infinity,
+      structuralSharing: (known, read) => (hashOf(known) === hashOf(read) ? known : read),
     }),
 }
