@@ -1,6 +1,7 @@
 import type { Theme } from '#shared/look/theme.ts'
 import type { BoardMesh } from './board-mesh.ts'
-import { FRAGMENT_SHADER, VERTEX_SHADER, boardPalette } from './board-shader.ts'
+import { boardPalette } from './board-palette.ts'
+import { SHADER_PART, VERTEX_SHADER, fragmentShader } from './board-shader.ts'
 import type { BoardTexture, TexelBox } from './board-texture.ts'
 
 /** What changes from frame to frame. */
@@ -14,6 +15,7 @@ export interface BoardFrame {
   readonly theme: Theme
   /** for each slot: column, row and reach of the ink's front, and 1 while it runs */
   readonly fronts: Float32Array
+  readonly running: boolean
 }
 
 export interface BoardGpu {
@@ -29,10 +31,10 @@ function compile(gl: WebGL2RenderingContext, kind: number, source: string): WebG
   return shader
 }
 
-function link(gl: WebGL2RenderingContext): WebGLProgram {
+function link(gl: WebGL2RenderingContext, parts: number): WebGLProgram {
   const program = gl.createProgram()
   const vertex = compile(gl, gl.VERTEX_SHADER, VERTEX_SHADER)
-  const fragment = compile(gl, gl.FRAGMENT_SHADER, FRAGMENT_SHADER)
+  const fragment = compile(gl, gl.FRAGMENT_SHADER, fragmentShader(parts))
   gl.attachShader(program, vertex)
   gl.attachShader(program, fragment)
   gl.linkProgram(program)
@@ -52,6 +54,16 @@ export function shiftMatrix(matrix: ArrayLike<number>, x: number, y: number): Fl
   const shifted = Array.from(matrix)
   for (let row = 0; row < 4; row++) shifted[12 + row] = matrix[row]! * x + matrix[4 + row]! * y + matrix[12 + row]!
   return new Float32Array(shifted)
+}
+
+/** CSS pixels of a cell's sides in the middle of the sheet; they differ across a site by less than a thousandth. */
+function cellPixels(matrix: Float32Array, { columnStep, rowStep }: BoardMesh, frame: BoardFrame): [number, number] {
+  const length = ({ x, y }: { x: number; y: number }): number => {
+    const across = (matrix[0]! * x + matrix[4]! * y) * frame.width
+    const down = (matrix[1]! * x + matrix[5]! * y) * frame.height
+    return Math.hypot(across, down) / (2 * matrix[15]! * frame.pixelRatio)
+  }
+  return [length(columnStep), length(rowStep)]
 }
 
 function createVertexArray(gl: WebGL2RenderingContext, mesh: BoardMesh): () => void {
@@ -86,40 +98,68 @@ function upload(gl: WebGL2RenderingContext, texture: BoardTexture, box: TexelBox
   gl.pixelStorei(gl.UNPACK_SKIP_ROWS, 0)
 }
 
-/** Program, mesh and texture on one graphics context. */
-export function createBoardGpu(gl: WebGL2RenderingContext, mesh: BoardMesh, texture: BoardTexture): BoardGpu {
-  const program = link(gl)
-  const bindVertices = createVertexArray(gl, mesh)
+interface BoardProgram {
+  readonly program: WebGLProgram
+  readonly at: (name: string) => WebGLUniformLocation | null
+  /** uploads the palette when the program has another one */
+  readonly setTheme: (theme: Theme) => void
+}
+
+function createProgram(gl: WebGL2RenderingContext, parts: number): BoardProgram {
+  const program = link(gl, parts)
+  const places = new Map<string, WebGLUniformLocation | null>()
+  const at = (name: string): WebGLUniformLocation | null => {
+    if (!places.has(name)) places.set(name, gl.getUniformLocation(program, name))
+    return places.get(name) ?? null
+  }
+  let drawn: Theme | undefined
+  const setTheme = (theme: Theme): void => {
+    if (theme === drawn) return
+    const palette = boardPalette(theme)
+    for (const name of ['fill', 'lines', 'cross', 'line'] as const) gl.uniform4fv(at(`u_${name}`), palette[name])
+    for (const name of ['mark', 'near', 'ink', 'sheetInk', 'preview'] as const) gl.uniform3fv(at(`u_${name}`), palette[name])
+    gl.uniform2fv(at('u_shift'), palette.shift)
+    gl.uniform1fv(at('u_lineWidth'), palette.lineWidth)
+    drawn = theme
+  }
+  return { program, at, setTheme }
+}
+
+function createCellTexture(gl: WebGL2RenderingContext, texture: BoardTexture): WebGLTexture {
   const cells = gl.createTexture()
   gl.bindTexture(gl.TEXTURE_2D, cells)
   gl.texStorage2D(gl.TEXTURE_2D, 1, gl.RGBA8UI, texture.columns, texture.rows)
   for (const filter of [gl.TEXTURE_MIN_FILTER, gl.TEXTURE_MAG_FILTER]) gl.texParameteri(gl.TEXTURE_2D, filter, gl.NEAREST)
   for (const wrap of [gl.TEXTURE_WRAP_S, gl.TEXTURE_WRAP_T]) gl.texParameteri(gl.TEXTURE_2D, wrap, gl.CLAMP_TO_EDGE)
   upload(gl, texture, { column: 0, row: 0, columns: texture.columns, rows: texture.rows })
-  const places = new Map<string, WebGLUniformLocation | null>()
-  const at = (name: string): WebGLUniformLocation | null => {
-    if (!places.has(name)) places.set(name, gl.getUniformLocation(program, name))
-    return places.get(name) ?? null
-  }
-  let drawnTheme: Theme | undefined
+  return cells
+}
 
-  const setTheme = (theme: Theme): void => {
-    if (theme === drawnTheme) return
-    const palette = boardPalette(theme)
-    gl.uniform3fv(at('u_fill'), palette.fill)
-    gl.uniform3fv(at('u_mark'), palette.mark)
-    gl.uniform3fv(at('u_near'), palette.near)
-    gl.uniform4fv(at('u_line'), palette.line)
-    gl.uniform1fv(at('u_lineWidth'), palette.lineWidth)
-    gl.uniform3fv(at('u_ink'), palette.ink)
-    gl.uniform3fv(at('u_sheetInk'), palette.sheetInk)
-    gl.uniform3fv(at('u_preview'), palette.preview)
-    drawnTheme = theme
+/** The parts of the shader that the sheet asks for now. A change brings the marks, which may be what it takes away. */
+function neededParts(texture: BoardTexture, running: boolean): number {
+  const { marks, regions } = texture.counts()
+  return (marks > 0 || running ? SHADER_PART.marks : 0) | (running ? SHADER_PART.change : 0) | (regions > 0 ? SHADER_PART.regions : 0)
+}
+
+const ramp = (from: number, to: number, value: number): number => Math.min(1, Math.max(0, (value - from) / (to - from)))
+
+/** Programs, mesh and texture on one graphics context. */
+export function createBoardGpu(gl: WebGL2RenderingContext, mesh: BoardMesh, texture: BoardTexture): BoardGpu {
+  const programs = new Map<number, BoardProgram>()
+  const programOf = (parts: number): BoardProgram => {
+    const made = programs.get(parts) ?? createProgram(gl, parts)
+    programs.set(parts, made)
+    return made
   }
+  programOf(0)
+  const bindVertices = createVertexArray(gl, mesh)
+  const cells = createCellTexture(gl, texture)
 
   return {
     draw(frame) {
       const matrix = shiftMatrix(frame.matrix, mesh.centre.x, mesh.centre.y)
+      const [across, down] = cellPixels(matrix, mesh, frame)
+      const { program, at, setTheme } = programOf(neededParts(texture, frame.running))
       gl.useProgram(program)
       gl.activeTexture(gl.TEXTURE0)
       gl.bindTexture(gl.TEXTURE_2D, cells)
@@ -129,7 +169,10 @@ export function createBoardGpu(gl: WebGL2RenderingContext, mesh: BoardMesh, text
       gl.uniformMatrix4fv(at('u_matrix'), false, matrix)
       gl.uniform1i(at('u_cells'), 0)
       gl.uniform2i(at('u_size'), texture.columns, texture.rows)
+      gl.uniform2f(at('u_cellPx'), across, down)
       gl.uniform1f(at('u_ratio'), frame.pixelRatio)
+      // lines between small cells would be all there is to see
+      gl.uniform2f(at('u_fade'), ramp(3, 9, Math.min(across, down)), ramp(9, 15, Math.min(across, down)))
       // on whole device pixels, so that hatch lines stay crisp while the map glides
       gl.uniform2f(
         at('u_anchor'),
@@ -147,7 +190,7 @@ export function createBoardGpu(gl: WebGL2RenderingContext, mesh: BoardMesh, text
       gl.bindVertexArray(null)
     },
     dispose() {
-      gl.deleteProgram(program)
+      for (const { program } of programs.values()) gl.deleteProgram(program)
       gl.deleteTexture(cells)
     },
   }

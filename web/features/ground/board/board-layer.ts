@@ -140,6 +140,7 @@ export function createBoardLayer(options: BoardLayerOptions): BoardLayer {
         pixelRatio: canvas.width / Math.max(1, canvas.clientWidth),
         theme,
         fronts,
+        running,
       }
       gpu.draw(frame)
       if (running) map.triggerRepaint()

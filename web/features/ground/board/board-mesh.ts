@@ -3,6 +3,9 @@ import type { MercatorPoint } from './board-projection.ts'
 /** Mesh of the sheet: x, y from the centre in Mercator and column, row, interleaved; triangles by index. */
 export interface BoardMesh {
   readonly centre: MercatorPoint
+  /** from one column, and from one row, to the next, at the centre */
+  readonly columnStep: MercatorPoint
+  readonly rowStep: MercatorPoint
   readonly vertices: Float32Array
   readonly indices: Uint16Array
   /** quads along the columns and along the rows */
@@ -89,5 +92,9 @@ export function createBoardMesh(
       at += 6
     }
   }
-  return { centre, vertices, indices, quads }
+  const difference = (a: MercatorPoint, b: MercatorPoint): MercatorPoint => ({ x: (b.x - a.x) / 2, y: (b.y - a.y) / 2 })
+  const [middleColumn, middleRow] = [size.columns / 2, size.rows / 2]
+  const columnStep = difference(toMercator(middleColumn - 1, middleRow), toMercator(middleColumn + 1, middleRow))
+  const rowStep = difference(toMercator(middleColumn, middleRow - 1), toMercator(middleColumn, middleRow + 1))
+  return { centre, columnStep, rowStep, vertices, indices, quads }
 }

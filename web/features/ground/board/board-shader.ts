@@ -1,7 +1,5 @@
 import { GROUND_FLAGS, GROUND_STATES } from '#shared/domain/ground-state.ts'
-import { OVERLAY_MARKS, STEP_EDGE, STIPPLE_DOTS, stateLook, type Hatch } from '#shared/look/ground-look.ts'
-import { SHEET_COLOURS, type Theme } from '#shared/look/theme.ts'
-import type { Rgb } from '#shared/look/colour.ts'
+import { OVERLAY_MARKS, STEP_EDGE, STIPPLE_DOTS, stateLook } from '#shared/look/ground-look.ts'
 import { CHANGE_SLOTS, HIGHLIGHT_BIT, SELECTED_BIT } from './board-texture.ts'
 
 export const VERTEX_SHADER = `#version 300 es
@@ -16,41 +14,12 @@ void main() {
 
 const number = (value: number): string => (Number.isInteger(value) ? `${value}.0` : String(value))
 
-/** Lines repeat every `spacing` along an axis; slanted ones lie nearer to each other by √2. */
-function hatchBody(hatch: Hatch): string {
-  const spacing = number(hatch.spacing)
-  const slanted = number(hatch.spacing / Math.SQRT2)
-  const half = number(hatch.stroke / 2)
-  const line = (place: string, every: string): string => `band(${place}, ${every}, ${half})`
-  const rising = line('(h.x + h.y) * 0.70710678', slanted)
-  switch (hatch.kind) {
-    case 'none':
-      return '0.0'
-    case 'stipple':
-      return `stipple(h, ${spacing})`
-    case 'diagonals':
-    case 'sparse-diagonals':
-      return rising
-    case 'horizontals':
-      return line(`h.y + ${number(hatch.spacing / 2)}`, spacing)
-    case 'thin-verticals':
-    case 'verticals':
-      return line(`h.x + ${number(hatch.spacing / 2)}`, spacing)
-    case 'cross-hatch':
-      return `max(${rising}, ${line('(h.x - h.y) * 0.70710678', slanted)})`
-  }
-}
-
-function hatchSwitch(): string {
-  const cases = GROUND_STATES.map((state, code) => `case ${code}: return ${hatchBody(stateLook(state).hatch)};`)
-  return `float hatch(int state, vec2 h) {\n  switch (state) {\n    ${cases.join('\n    ')}\n  }\n  return 0.0;\n}`
-}
-
-function stippleFunction(): string {
-  const dots = STIPPLE_DOTS.map(
-    ([x, y, radius]) => `c = max(c, cover(distance(p, vec2(${number(x)}, ${number(y)}) * size), ${number(radius)} * size));`,
-  )
-  return `float stipple(vec2 h, float size) {\n  vec2 p = mod(h, size);\n  float c = 0.0;\n  ${dots.join('\n  ')}\n  return c;\n}`
+/** How deep a point lies in a dot, for a tile of side 1; near the rim (r² − d²) / 2r is r − d without a root. */
+function stippleBody(): string {
+  return STIPPLE_DOTS.map(([x, y, radius], index) => {
+    const away = `p - vec2(${number(x)}, ${number(y)})`
+    return `vec2 a${index} = ${away};\n  depth = max(depth, (${number(radius * radius)} - dot(a${index}, a${index})) * ${number(0.5 / radius)});`
+  }).join('\n  ')
 }
 
 const nearHatch = stateLook('meets-spec').nearHatch
@@ -64,21 +33,41 @@ const WAITING = { inset: 3.5, side: 7, line: 1.3 }
 const OUTLINE = { chosen: 2.2, casing: 1.8, preview: 2.4 }
 
 /**
+ * What a frame has to draw beside ground and step edges. Renderers without a card run both sides of every `if`, so
+ * what is not on the sheet is left out of the program: panning is twice as fast there.
+ */
+export const SHADER_PART = { marks: 1, change: 2, regions: 4 } as const
+
+const PART_NAMES = Object.entries(SHADER_PART).map(([name, bit]) => ({ define: name.toUpperCase(), bit }))
+
+/**
  * All lengths are CSS pixels; `cover` turns a distance into how much of the device pixel a stroke fills.
  * h runs right and down from the projected centre of the site, so that hatches ride with the ground while panning
- * and stay upright and of one size otherwise.
+ * and stay upright and of one size otherwise. A hatch is up to two families of lines, each a unit vector across
+ * them, the distance from one to the next and half the stroke, or a stipple. The near overlay takes the place of
+ * the second family.
  */
-export const FRAGMENT_SHADER = `#version 300 es
+export function fragmentShader(parts: number): string {
+  const defines = PART_NAMES.filter(({ bit }) => (parts & bit) !== 0).map(({ define }) => `#define ${define}`)
+  return `#version 300 es\n${defines.join('\n')}${FRAGMENT_BODY}`
+}
+
+const FRAGMENT_BODY = `
 precision highp float;
 precision highp int;
 precision highp usampler2D;
 uniform usampler2D u_cells;
 uniform ivec2 u_size;
+uniform vec2 u_cellPx;
 uniform vec2 u_anchor;
 uniform float u_ratio;
-uniform vec3 u_fill[${GROUND_STATES.length}];
+uniform vec2 u_fade;
+uniform vec4 u_fill[${GROUND_STATES.length}];
 uniform vec3 u_mark[${GROUND_STATES.length}];
 uniform vec3 u_near[${GROUND_STATES.length}];
+uniform vec4 u_lines[${GROUND_STATES.length}];
+uniform vec4 u_cross[${GROUND_STATES.length}];
+uniform vec2 u_shift[${GROUND_STATES.length}];
 uniform vec4 u_line[${GROUND_STATES.length}];
 uniform float u_lineWidth[${GROUND_STATES.length}];
 uniform vec3 u_ink;
@@ -89,83 +78,89 @@ in vec2 v_place;
 out vec4 result;
 
 float cover(float d, float reach) { return clamp((reach - d) * u_ratio + 0.5, 0.0, 1.0); }
-float band(float x, float spacing, float halfWidth) {
-  return cover(abs(mod(x + 0.5 * spacing, spacing) - 0.5 * spacing), halfWidth);
+float band(float x, vec4 family) {
+  return family.w > 0.0 ? cover(abs(mod(x + 0.5 * family.z, family.z) - 0.5 * family.z), family.w) : 0.0;
 }
-${stippleFunction()}
-${hatchSwitch()}
+float stipple(vec2 h, float size) {
+  vec2 p = fract(h / max(size, 1.0));
+  float depth = -1.0;
+  ${stippleBody()}
+  return size > 0.0 ? clamp(depth * size * u_ratio + 0.5, 0.0, 1.0) : 0.0;
+}
 void lay(inout vec4 under, vec3 colour, float share) { under = under * (1.0 - share) + vec4(colour, 1.0) * share; }
 bool bare(int state) { return state <= 1; }
-int texel(ivec2 cell, int channel) {
-  if (any(lessThan(cell, ivec2(0))) || any(greaterThanEqual(cell, u_size))) return 0;
-  return int(texelFetch(u_cells, cell, 0)[channel]);
-}
 
-// fill, hatch and the lines between cells of one state, p from the top left, q from the bottom right corner
-vec4 ground(int state, int flags, vec2 h, vec2 p, vec2 q, vec2 cellPx) {
-  vec4 c = vec4(0.0);
-  bool quarterOut = (flags & ${GROUND_FLAGS.partial}) != 0 && p.x > q.x && p.y > q.y;
-  int shown = quarterOut ? 1 : state;
-  if (!bare(shown)) {
-    lay(c, u_fill[shown], 1.0);
-    lay(c, u_mark[shown], hatch(shown, h));
-    if ((flags & ${GROUND_FLAGS.near}) != 0)
-      lay(c, u_near[shown], band(h.y + ${number(nearHatch.spacing / 2)}, ${number(nearHatch.spacing)}, ${number(nearHatch.stroke / 2)}));
-  }
+// fill, hatch and the lines between cells of one state; p from the top left, q from the bottom right corner
+vec4 ground(int state, int flags, vec2 h, vec2 p, vec2 q) {
+  int shown = state;
   vec2 d = min(p, q);
+#ifdef MARKS
   if ((flags & ${GROUND_FLAGS.partial}) != 0) {
     vec2 m = abs(p - q) * 0.5;
-    if (p.x > q.x && p.y > q.y) d = min(d, m);
-    else if (p.y > q.y) d.x = min(d.x, m.x);
+    if (p.x > q.x && p.y > q.y) {
+      shown = 1;
+      d = min(d, m);
+    } else if (p.y > q.y) d.x = min(d.x, m.x);
     else if (p.x > q.x) d.y = min(d.y, m.y);
   }
-  float fade = smoothstep(3.0, 9.0, min(cellPx.x, cellPx.y));
-  float dotted = shown == 1 ? 1.0 : 0.0;
-  vec2 on = mix(vec2(1.0), vec2(step(mod(p.y, ${dashEvery}), ${dashOn}), step(mod(p.x, ${dashEvery}), ${dashOn})), dotted);
+#endif
+  vec4 c = u_fill[shown];
+  vec2 shift = u_shift[shown];
+  vec4 first = u_lines[shown];
+  vec4 second = u_cross[shown];
+  bool near = (flags & ${GROUND_FLAGS.near}) != 0 && second.w == 0.0 && !bare(shown);
+  if (near) second = vec4(0.0, 1.0, ${number(nearHatch.spacing)}, ${number(nearHatch.stroke / 2)});
+  lay(c, u_mark[shown], max(band(dot(h, first.xy) + shift.x, first), stipple(h, shift.y)));
+  lay(c, near ? u_near[shown] : u_mark[shown], band(dot(h, second.xy) + (near ? ${number(nearHatch.spacing / 2)} : 0.0), second));
+  vec2 on = shown == 1 ? vec2(step(mod(p.y, ${dashEvery}), ${dashOn}), step(mod(p.x, ${dashEvery}), ${dashOn})) : vec2(1.0);
   float width = u_lineWidth[shown] * 0.5;
-  float line = max(cover(d.x, width) * on.x, cover(d.y, width) * on.y);
-  lay(c, u_line[shown].rgb, line * u_line[shown].a * fade);
+  vec4 line = u_line[shown];
+  lay(c, line.rgb, max(cover(d.x, width) * on.x, cover(d.y, width) * on.y) * line.a * u_fade.x);
   return c;
 }
 
 // one side of a cell: d away from it, a along it, side its length, code as in board-texture
 float stepEdge(int code, float d, float a, float side) {
-  if (code == 0) return 0.0;
-  float c = cover(d, ${number(STEP_EDGE.line / 2)});
-  if (code == 2) {
-    float parts = max(2.0, floor(side / ${number(STEP_EDGE.pitch)} + 0.5));
-    float i = floor(a / side * parts + 0.5);
-    float reach = mod(i, 2.0) > 0.5 ? ${number(STEP_EDGE.longLength)} : ${number(STEP_EDGE.shortLength)};
-    float across = abs(a - i * side / parts);
-    float inner = step(0.5, i) * step(i, parts - 0.5) * smoothstep(9.0, 15.0, side);
-    c = max(c, cover(across, ${number(STEP_EDGE.hachure / 2)}) * cover(d, reach) * inner);
-  }
-  return c;
+  float parts = max(2.0, floor(side / ${number(STEP_EDGE.pitch)} + 0.5));
+  float i = floor(a / side * parts + 0.5);
+  float reach = mod(i, 2.0) > 0.5 ? ${number(STEP_EDGE.longLength)} : ${number(STEP_EDGE.shortLength)};
+  float across = abs(a - i * side / parts);
+  float inner = code == 2 && i > 0.5 && i < parts - 0.5 ? u_fade.y : 0.0;
+  float hachure = cover(across, ${number(STEP_EDGE.hachure / 2)}) * cover(d, reach) * inner;
+  return code == 0 ? 0.0 : max(cover(d, ${number(STEP_EDGE.line / 2)}), hachure);
+}
+
+#ifdef REGIONS
+int flagsAt(ivec2 cell) {
+  if (any(lessThan(cell, ivec2(0))) || any(greaterThanEqual(cell, u_size))) return 0;
+  return int(texelFetch(u_cells, cell, 0).g);
 }
 
 // distance from the nearest side across which the bit is not set
 float regionEdge(ivec2 cell, int bit, vec2 p, vec2 q) {
   float d = 1e6;
-  if ((texel(cell + ivec2(0, -1), 1) & bit) == 0) d = min(d, p.y);
-  if ((texel(cell + ivec2(1, 0), 1) & bit) == 0) d = min(d, q.x);
-  if ((texel(cell + ivec2(0, 1), 1) & bit) == 0) d = min(d, q.y);
-  if ((texel(cell + ivec2(-1, 0), 1) & bit) == 0) d = min(d, p.x);
+  if ((flagsAt(cell + ivec2(0, -1)) & bit) == 0) d = min(d, p.y);
+  if ((flagsAt(cell + ivec2(1, 0)) & bit) == 0) d = min(d, q.x);
+  if ((flagsAt(cell + ivec2(0, 1)) & bit) == 0) d = min(d, q.y);
+  if ((flagsAt(cell + ivec2(-1, 0)) & bit) == 0) d = min(d, p.x);
   // across a corner, so that the line turns inward without a gap
-  if ((texel(cell + ivec2(-1, -1), 1) & bit) == 0) d = min(d, max(p.x, p.y));
-  if ((texel(cell + ivec2(1, -1), 1) & bit) == 0) d = min(d, max(q.x, p.y));
-  if ((texel(cell + ivec2(1, 1), 1) & bit) == 0) d = min(d, max(q.x, q.y));
-  if ((texel(cell + ivec2(-1, 1), 1) & bit) == 0) d = min(d, max(p.x, q.y));
+  if ((flagsAt(cell + ivec2(-1, -1)) & bit) == 0) d = min(d, max(p.x, p.y));
+  if ((flagsAt(cell + ivec2(1, -1)) & bit) == 0) d = min(d, max(q.x, p.y));
+  if ((flagsAt(cell + ivec2(1, 1)) & bit) == 0) d = min(d, max(q.x, q.y));
+  if ((flagsAt(cell + ivec2(-1, 1)) & bit) == 0) d = min(d, max(p.x, q.y));
   return d;
 }
+#endif
 
-void marks(inout vec4 c, int state, int flags, vec2 p, vec2 q, vec2 cellPx) {
-  float side = min(cellPx.x, cellPx.y);
+#ifdef MARKS
+void marks(inout vec4 c, int state, int flags, vec2 p, vec2 q) {
+  float side = min(u_cellPx.x, u_cellPx.y);
   float edge = min(min(p.x, p.y), min(q.x, q.y));
   vec3 ink = bare(state) ? u_sheetInk : u_ink;
   if ((flags & ${GROUND_FLAGS.doubt}) != 0) {
     float along = edge == p.x || edge == q.x ? p.y : p.x;
     float on = step(mod(along, ${number(doubtOn + doubtOff)}), ${number(doubtOn)});
-    lay(c, ink, on * cover(abs(edge - 2.6), ${number(OVERLAY_MARKS.doubt.edge / 2)}) * smoothstep(9.0, 15.0, side));
+    lay(c, ink, on * cover(abs(edge - 2.6), ${number(OVERLAY_MARKS.doubt.edge / 2)}) * u_fade.y);
   }
   if ((flags & ${GROUND_FLAGS.covered}) != 0) {
     float wedge = min(side * ${number(OVERLAY_MARKS.covered.wedgeShare)}, ${number(OVERLAY_MARKS.covered.wedgeMax)});
@@ -186,82 +181,45 @@ void marks(inout vec4 c, int state, int flags, vec2 p, vec2 q, vec2 cellPx) {
     lay(c, u_ink, cover(abs(box - ${number(WAITING.side / 2 - WAITING.line / 2)}), ${number(WAITING.line / 2)}));
   }
 }
+#endif
+
+vec4 cellLook(int state, int flags, vec2 h, vec2 p, vec2 q) {
+  vec4 c = ground(state, flags, h, p, q);
+#ifdef MARKS
+  marks(c, state, flags, p, q);
+#endif
+  return c;
+}
 
 void main() {
-  ivec2 cell = ivec2(floor(v_place));
-  vec2 perPx = vec2(length(vec2(dFdx(v_place.x), dFdy(v_place.x))), length(vec2(dFdx(v_place.y), dFdy(v_place.y)))) * u_ratio;
-  if (any(lessThan(cell, ivec2(0))) || any(greaterThanEqual(cell, u_size))) discard;
+  ivec2 cell = clamp(ivec2(floor(v_place)), ivec2(0), u_size - 1);
   uvec4 t = texelFetch(u_cells, cell, 0);
   int state = int(t.r & 15u);
   int flags = int(t.g);
-  vec2 cellPx = 1.0 / max(perPx, vec2(1e-9));
   vec2 f = v_place - vec2(cell);
-  vec2 p = f * cellPx;
-  vec2 q = (1.0 - f) * cellPx;
+  vec2 p = f * u_cellPx;
+  vec2 q = (1.0 - f) * u_cellPx;
   vec2 h = vec2(gl_FragCoord.x - u_anchor.x, u_anchor.y - gl_FragCoord.y) / u_ratio;
-
-  vec4 c = ground(state, flags, h, p, q, cellPx);
-  marks(c, state, flags, p, q, cellPx);
-  int slot = int(t.a & 3u);
-  if (slot > 0) {
-    vec4 front = u_front[slot];
-    float ahead = distance(v_place / perPx, front.xy / perPx) - front.z / max(perPx.x, perPx.y);
-    float old = clamp(ahead / 5.0 + 0.5, 0.0, 1.0) * front.w;
-    if (old > 0.0) {
-      int oldState = int(t.r >> 4);
-      int oldFlags = int(t.a >> 2);
-      vec4 before = ground(oldState, oldFlags, h, p, q, cellPx);
-      marks(before, oldState, oldFlags, p, q, cellPx);
-      c = mix(c, before, old);
-    }
-  }
-
+  vec4 c = cellLook(state, flags, h, p, q);
+#ifdef CHANGE
+  vec4 front = u_front[int(t.a & 3u)];
+  float ahead = distance(v_place * u_cellPx, front.xy * u_cellPx) - front.z * min(u_cellPx.x, u_cellPx.y);
+  float old = clamp(ahead / 5.0 + 0.5, 0.0, 1.0) * front.w;
+  c = mix(c, cellLook(int(t.r >> 4), int(t.a >> 2), h, p, q), old);
+#endif
   int edges = int(t.b);
-  vec3 ink = bare(state) ? u_sheetInk : u_ink;
-  float e = max(max(stepEdge(edges & 3, p.y, p.x, cellPx.x), stepEdge((edges >> 2) & 3, q.x, p.y, cellPx.y)),
-    max(stepEdge((edges >> 4) & 3, q.y, p.x, cellPx.x), stepEdge((edges >> 6) & 3, p.x, p.y, cellPx.y)));
-  lay(c, ink, e);
-
-  if ((flags & ${HIGHLIGHT_BIT}) != 0) {
-    float d = regionEdge(cell, ${HIGHLIGHT_BIT}, p, q);
-    lay(c, vec3(1.0), cover(d, ${number(OUTLINE.preview + 1.2)}));
-    lay(c, u_preview, cover(d, ${number(OUTLINE.preview)}));
-  }
-  if ((flags & ${SELECTED_BIT}) != 0) {
-    float d = regionEdge(cell, ${SELECTED_BIT}, p, q);
-    lay(c, vec3(1.0), cover(d, ${number(OUTLINE.chosen + OUTLINE.casing)}));
-    lay(c, u_ink, cover(d, ${number(OUTLINE.chosen)}));
-  }
+  bool upper = p.y < q.y;
+  bool leftward = p.x < q.x;
+  float level = stepEdge((upper ? edges : edges >> 4) & 3, min(p.y, q.y), p.x, u_cellPx.x);
+  float upright = stepEdge((leftward ? edges >> 6 : edges >> 2) & 3, min(p.x, q.x), p.y, u_cellPx.y);
+  lay(c, bare(state) ? u_sheetInk : u_ink, max(level, upright));
+#ifdef REGIONS
+  float preview = (flags & ${HIGHLIGHT_BIT}) != 0 ? regionEdge(cell, ${HIGHLIGHT_BIT}, p, q) : 1e6;
+  lay(c, vec3(1.0), cover(preview, ${number(OUTLINE.preview + 1.2)}));
+  lay(c, u_preview, cover(preview, ${number(OUTLINE.preview)}));
+  float chosen = (flags & ${SELECTED_BIT}) != 0 ? regionEdge(cell, ${SELECTED_BIT}, p, q) : 1e6;
+  lay(c, vec3(1.0), cover(chosen, ${number(OUTLINE.chosen + OUTLINE.casing)}));
+  lay(c, u_ink, cover(chosen, ${number(OUTLINE.chosen)}));
+#endif
   result = c;
 }`
-
-const flat = (colours: readonly Rgb[]): Float32Array => new Float32Array(colours.flat().map((channel) => channel / 255))
-
-export interface BoardPalette {
-  readonly fill: Float32Array
-  readonly mark: Float32Array
-  readonly near: Float32Array
-  readonly line: Float32Array
-  readonly lineWidth: Float32Array
-  readonly ink: Float32Array
-  readonly sheetInk: Float32Array
-  readonly preview: Float32Array
-}
-
-/** The shared look of every state as the arrays the shader takes. */
-export function boardPalette(theme: Theme): BoardPalette {
-  const looks = GROUND_STATES.map((state) => stateLook(state, theme))
-  return {
-    fill: flat(looks.map((look) => look.fill.rgb)),
-    mark: flat(looks.map((look) => look.hatch.mark.rgb)),
-    near: flat(looks.map((look) => look.nearHatch.mark.rgb)),
-    line: new Float32Array(
-      looks.flatMap(({ cellLine }) => [...cellLine.colour.rgb.map((channel) => channel / 255), cellLine.opacity]),
-    ),
-    lineWidth: new Float32Array(looks.map((look) => look.cellLine.width)),
-    // ground keeps its hues in both themes, so what is drawn on it keeps the dark ink
-    ink: flat([SHEET_COLOURS.light.ink.rgb]),
-    sheetInk: flat([SHEET_COLOURS[theme].ink.rgb]),
-    preview: flat([stateLook('rework').hatch.mark.rgb]),
-  }
-}

@@ -1,3 +1,4 @@
+import { GROUND_FLAGS } from '#shared/domain/ground-state.ts'
 import type { GroundSheet } from '#shared/ground-codec.ts'
 import type { BoardCells } from './board-types.ts'
 
@@ -14,6 +15,8 @@ export const CHANGE_SLOTS = 3
 export const SELECTED_BIT = 64
 export const HIGHLIGHT_BIT = 128
 const OVERLAY_BITS = 63
+/** Every overlay but near, which is a hatch of the ground itself. */
+const MARK_BITS = OVERLAY_BITS & ~GROUND_FLAGS.near
 
 /** Bit pair of a side: 0 level, 1 this cell stands higher, 2 this cell lies lower. */
 export const EDGE_SIDES = [
@@ -44,6 +47,8 @@ export interface BoardTexture {
   readonly settle: (slot: number) => void
   /** sets a bit on exactly these cells */
   readonly mark: (bit: typeof SELECTED_BIT | typeof HIGHLIGHT_BIT, cells: readonly number[]) => void
+  /** how many cells carry an overlay that is drawn as a mark, and how many a selection or preview */
+  readonly counts: () => { readonly marks: number; readonly regions: number }
   /** the texels written since the last call */
   readonly takeDirty: () => TexelBox | undefined
 }
@@ -70,6 +75,7 @@ export function createBoardTexture(size: { readonly columns: number; readonly ro
   for (let cell = 0; cell < count; cell++) cellAt[cells.row[cell]! * columns + cells.column[cell]!] = cell
   const running: number[][] = Array.from({ length: CHANGE_SLOTS + 1 }, () => [])
   const marked = new Map<number, readonly number[]>()
+  let marks = 0
   let dirty: { left: number; top: number; right: number; bottom: number } | undefined
 
   const placeOf = (cell: number): number => cells.row[cell]! * columns + cells.column[cell]!
@@ -106,6 +112,7 @@ export function createBoardTexture(size: { readonly columns: number; readonly ro
     const state = sheet.state[cell]!
     const flags = sheet.flags[cell]! & OVERLAY_BITS
     if (before === state && beforeFlags === flags) return false
+    marks += Number((flags & MARK_BITS) !== 0) - Number((beforeFlags & MARK_BITS) !== 0)
     bytes[at] = state | (before << 4)
     bytes[at + 1] = flags | (bytes[at + 1]! & ~OVERLAY_BITS)
     bytes[at + 3] = slot | (beforeFlags << 2)
@@ -154,6 +161,7 @@ export function createBoardTexture(size: { readonly columns: number; readonly ro
       }
       marked.set(bit, present)
     },
+    counts: () => ({ marks, regions: (marked.get(SELECTED_BIT)?.length ?? 0) + (marked.get(HIGHLIGHT_BIT)?.length ?? 0) }),
     takeDirty() {
       if (dirty === undefined) return undefined
       const { left, top, right, bottom } = dirty
