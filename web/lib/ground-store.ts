@@ -86,7 +86,7 @@ export class GroundStore {
   start(): void {
     this.#leave ??= this.#deps.watch({
       joined: (answer) => (answer.ok ? this.#joined(answer.revision) : this.#lost()),
-      patch: ({ patches }) => this.#take(() => patches.map((binary) => decodePatch(bytesOf(binary)))),
+      patch: ({ revision, patches }) => this.#take(revision, () => patches.map((binary) => decodePatch(bytesOf(binary)))),
       head: ({ revision }) => this.#hearHead(revision),
       lost: () => this.#lost(),
     })
@@ -186,11 +186,12 @@ export class GroundStore {
   }
 
   #confirm(): void {
-    if (this.#connected && this.#loaded().length > 0) this.#asOf = this.#deps.now()
+    if (this.#connected && this.#loaded().length > 0 && this.#have() >= this.#head) this.#asOf = this.#deps.now()
   }
 
   /** Takes patches in, however they came; bytes that cannot be read are asked for again. */
-  #take(decode: () => GroundPatch[]): void {
+  #take(revision: number, decode: () => GroundPatch[]): void {
+    this.#head = Math.max(this.#head, revision)
     try {
       this.#hold(decode())
     } catch {
