@@ -29,15 +29,16 @@ export function SiteRow({ site }: { site: SiteListItem }) {
   const ground = useGround(id)
   const totals = ground.totals ?? site.totals
   return (
-    <li className="border-b border-rule-2">
-      <Link
-        to={paths.ground(id)}
-        aria-label={`${name}, open the Ground`}
-        className="grid items-center gap-x-7 gap-y-4 py-5 text-ink no-underline -outline-offset-3 hover:bg-film sm:grid-cols-[168px_minmax(0,1fr)] lg:grid-cols-[168px_minmax(0,1fr)_minmax(0,500px)]"
-      >
+    <li className="relative border-b border-rule-2 hover:bg-film">
+      <div className="grid items-center gap-x-7 gap-y-4 py-5 sm:grid-cols-[168px_minmax(0,1fr)] lg:grid-cols-[168px_minmax(0,1fr)_minmax(0,500px)]">
         <SitePlan siteId={id} columns={columns} rows={rows} />
         <div className="min-w-0">
-          <h2 className="m-0 text-head font-bold">{name}</h2>
+          <h2 className="m-0 text-head font-bold">
+            {/* the link covers the row, so that a touch anywhere opens the site */}
+            <Link to={paths.ground(id)} className="text-ink no-underline after:absolute after:inset-0">
+              {name}
+            </Link>
+          </h2>
           <p className="m-0 mt-1 text-ink-2">{[subtitle, formatSiteArea(areaMm2, unitSystem)].filter((words) => words !== '').join(' · ')}</p>
           <p className="m-0 mt-1 text-small text-ink-2">You are here as {ROLE_LABELS[role].toLowerCase().replace('qc', 'QC')}</p>
         </div>
@@ -51,7 +52,7 @@ export function SiteRow({ site }: { site: SiteListItem }) {
           />
           <SiteFact label="Ready for fill" value={formatEarthVolume(totals.readyCm3, unitSystem)} of={counted(totals.readyCells, 'cell', 'cells')} />
         </dl>
-      </Link>
+      </div>
     </li>
   )
 }
