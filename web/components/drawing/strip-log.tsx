@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react'
 import { hasFlag, type GroundState } from '#shared/domain/ground-state.ts'
 import { stateLook } from '#shared/look/ground-look.ts'
 import { StateSwatch } from '#web/components/ui/state-swatch.tsx'
@@ -7,13 +8,15 @@ export type StripLogRow = {
   readonly state: GroundState
   /** Overlay bits of GROUND_FLAGS. */
   readonly flags: number
-  /** The result in a few words: "97.2 %", "Awaiting test". */
-  readonly title: string
+  /** The state's word where it is not the usual one: a foundation awaits its inspection. */
+  readonly word?: string | undefined
+  /** The result in a few words: "97.2 %", "Awaiting test"; or a link over the row that says them. */
+  readonly title: ReactNode
   readonly note?: string | undefined
 }
 
-function stateWords({ state, flags }: StripLogRow): string {
-  const words = [stateLook(state).word]
+function stateWords({ state, flags, word = stateLook(state).word }: StripLogRow): string {
+  const words = [word]
   if (hasFlag(flags, 'near')) words.push('near a limit')
   if (hasFlag(flags, 'covered')) words.push('covered too early')
   if (hasFlag(flags, 'hold')) words.push('on hold')
@@ -25,7 +28,7 @@ export function StripLog({ label, rows }: { label: string; rows: readonly StripL
   return (
     <ol aria-label={label} className="m-0 list-none p-0">
       {rows.map((row) => (
-        <li key={row.lift} className="mb-[2px] grid min-h-[32px] grid-cols-[16px_34px_1fr] items-start gap-x-2 leading-[1.2]">
+        <li key={row.lift} className="relative mb-[2px] grid min-h-[32px] grid-cols-[16px_34px_1fr] items-start gap-x-2 leading-[1.2]">
           <span className="num pt-[8px] text-right text-cap text-ink-2">{row.lift}</span>
           <StateSwatch
             state={row.state}

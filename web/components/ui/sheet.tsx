@@ -1,4 +1,4 @@
-import { useId, useState, type ReactNode } from 'react'
+import { useId, useRef, useState, type MouseEvent, type PointerEvent, type ReactNode } from 'react'
 import { classNames } from '#web/lib/class-names.ts'
 
 type SheetProps = {
@@ -8,13 +8,36 @@ type SheetProps = {
   peek: ReactNode
   children: ReactNode
   startOpen?: boolean
+  /** Given, the page draws the sheet up and down. */
+  open?: boolean
+  onOpenChange?: (open: boolean) => void
   className?: string
 }
 
+/** A pull on the sheet's first line that is longer than this draws it, CSS pixels. */
+const PULL = 24
+
 /** The panel at the right; narrower than a tablet it lies over the map from below and is drawn up by its first line. */
-export function Sheet({ label, peek, children, startOpen = false, className }: SheetProps) {
-  const [open, setOpen] = useState(startOpen)
+export function Sheet({ label, peek, children, startOpen = false, open: given, onOpenChange, className }: SheetProps) {
+  const [own, setOwn] = useState(startOpen)
+  const open = given ?? own
+  const pulledFrom = useRef<number | null>(null)
   const bodyId = useId()
+  const setOpen = (next: boolean): void => {
+    setOwn(next)
+    onOpenChange?.(next)
+  }
+  const handlePull = (event: PointerEvent): void => {
+    const from = pulledFrom.current
+    if (from === null || Math.abs(event.clientY - from) <= PULL) return
+    setOpen(event.clientY < from)
+    pulledFrom.current = null
+  }
+  const handleClick = (event: MouseEvent): void => {
+    // the click that ends a pull is not a tap; a key press has no pointer down before it
+    if (event.detail > 0 && pulledFrom.current === null) return
+    setOpen(!open)
+  }
   return (
     <aside
       aria-label={label}
@@ -29,8 +52,13 @@ export function Sheet({ label, peek, children, startOpen = false, className }: S
         type="button"
         aria-expanded={open}
         aria-controls={bodyId}
-        onClick={() => setOpen(!open)}
-        className="flex min-h-12 w-full shrink-0 items-center gap-3 px-[22px] text-left font-semibold -outline-offset-3 lg:hidden"
+        onClick={handleClick}
+        onPointerDown={(event) => {
+          pulledFrom.current = event.clientY
+          event.currentTarget.setPointerCapture(event.pointerId)
+        }}
+        onPointerUp={handlePull}
+        className="flex min-h-12 touch-none w-full shrink-0 items-center gap-3 px-[22px] text-left font-semibold -outline-offset-3 lg:hidden"
       >
         <span className="min-w-0 flex-1">{peek}</span>
         <span className="link-ink text-small">{open ? 'Draw down' : 'Draw up'}</span>
