@@ -32,6 +32,13 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/session/sign-in-page.tsx')).SignInPage,
   },
   {
+    path: PATTERNS.ground,
+    title: 'Ground',
+    open: 'site',
+    verb: 'site.see',
+    load: async () => (await import('#web/features/ground/ground-page.tsx')).GroundPage,
+  },
+  {
     path: PATTERNS.parts,
     title: 'Parts',
     open: 'anyone',
