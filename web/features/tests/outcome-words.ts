@@ -1,0 +1,52 @@
+import type { GroundState } from '#shared/domain/ground-state.ts'
+import type { MoistureMethod } from '#shared/domain/field-sheets.ts'
+import type { Purpose, TestSummary } from '#shared/schemas/field-test.ts'
+import type { TestOutcome } from '#web/components/ui/test-mark.tsx'
+
+type Judged = Pick<TestSummary, 'outcome' | 'near' | 'treatedAsFail'>
+
+/** The mark that a result is drawn with. */
+export function markOf({ outcome, near }: Pick<Judged, 'outcome' | 'near'>): TestOutcome {
+  if (outcome === 'fail') return 'fails'
+  if (outcome === 'suspect') return 'suspect'
+  return near ? 'near' : 'passes'
+}
+
+/** The state a result puts its ground into. */
+export function groundOf({ outcome, treatedAsFail }: Pick<Judged, 'outcome' | 'treatedAsFail'>): GroundState {
+  if (outcome === 'fail' || treatedAsFail) return 'rework'
+  return outcome === 'suspect' ? 'suspect' : 'meets-spec'
+}
+
+export const METHOD_WORDS: Readonly<Record<TestSummary['method'], { readonly name: string; readonly standard: string }>> = {
+  'sand-cone': { name: 'Sand cone', standard: 'ASTM D1556' },
+  'nuclear-gauge': { name: 'Nuclear gauge', standard: 'ASTM D6938' },
+  plain: { name: 'Density and moisture', standard: 'as the report states them' },
+}
+
+export const MOISTURE_WORDS: Readonly<Record<MoistureMethod, { readonly name: string; readonly standard: string }>> = {
+  oven: { name: 'Oven', standard: 'ASTM D2216' },
+  microwave: { name: 'Microwave', standard: 'ASTM D4643' },
+  carbide: { name: 'Carbide', standard: 'ASTM D4944' },
+  gauge: { name: 'Gauge', standard: 'ASTM D6938' },
+  stated: { name: 'Stated', standard: 'as the report states it' },
+}
+
+export const PURPOSE_WORDS: Readonly<Record<Purpose, { readonly name: string; readonly meaning: string }>> = {
+  required: { name: 'Required', meaning: 'Counts toward the frequency, whichever way it comes out.' },
+  judgement: { name: 'Judgement', meaning: 'Taken at a doubtful spot: a failure counts against the fill, a pass does not count toward the minimum.' },
+  verification: { name: 'Verification', meaning: 'The owner’s own test: it never counts toward the contractor’s frequency.' },
+  referee: { name: 'Referee', meaning: 'By the agreed method, to decide a dispute.' },
+}
+
+/** "1 cell", "9 cells". */
+export function countOf(n: number, word: string): string {
+  return `${n.toLocaleString('en-US')} ${word}${n === 1 ? '' : 's'}`
+}
+
+/** The word of a register's last column. */
+export function resultWord({ outcome, near, treatedAsFail, headline }: Judged & { readonly headline: string }): string {
+  if (outcome === 'suspect') return treatedAsFail ? 'Suspect, below limit' : 'Suspect'
+  if (outcome === 'pass') return near ? 'Meets spec, near' : 'Meets spec'
+  return headline.split(',')[0] ?? headline
+}

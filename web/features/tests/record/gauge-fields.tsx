@@ -1,0 +1,49 @@
+import { Controller, useFormContext, useWatch } from 'react-hook-form'
+import { DENSITY_UNIT_LABEL } from '#shared/units/density.ts'
+import { SectionHead } from '#web/components/ui/section-head.tsx'
+import { Segmented } from '#web/components/ui/segmented.tsx'
+import { METHOD_WORDS } from '#web/features/tests/outcome-words.ts'
+import { FieldGrid, ReadingField } from './reading-field.tsx'
+import type { TestForm } from './test-form.ts'
+import { UnitChoice } from './unit-choice.tsx'
+
+const MODES = [
+  { value: 'direct-transmission', label: 'Direct transmission' },
+  { value: 'backscatter', label: 'Backscatter' },
+] as const
+
+export function GaugeFields() {
+  const { control } = useFormContext<TestForm>()
+  const { densityUnit, lengthUnit, mode } = useWatch({ control, name: 'gauge' })
+  const density = DENSITY_UNIT_LABEL[densityUnit]
+  const aside = (
+    <>
+      {METHOD_WORDS['nuclear-gauge'].standard}, <UnitChoice name="gauge.densityUnit" of="density" /> <UnitChoice name="gauge.lengthUnit" of="length" />
+    </>
+  )
+  return (
+    <>
+      <section>
+        <SectionHead aside={aside}>Gauge readings</SectionHead>
+        <div className="mb-3">
+          <Controller control={control} name="gauge.mode" render={({ field }) => <Segmented label="Mode" options={MODES} value={field.value} onChange={field.onChange} />} />
+        </div>
+        <FieldGrid>
+          {mode === 'direct-transmission' && <ReadingField name="gauge.rodDepth" label="Rod depth" unit={lengthUnit} />}
+          <ReadingField name="gauge.wetDensity" label="Wet density" unit={density} />
+          <ReadingField name="gauge.secondWetDensity" label="Turned, if read again" unit={density} />
+        </FieldGrid>
+      </section>
+      <section>
+        <SectionHead aside="may be left out">Standard counts today</SectionHead>
+        <FieldGrid>
+          <ReadingField name="gauge.standardCounts.density" label="Density count" />
+          <ReadingField name="gauge.standardCounts.referenceDensity" label="Its reference" />
+          <span className="max-sm:hidden" />
+          <ReadingField name="gauge.standardCounts.moisture" label="Moisture count" />
+          <ReadingField name="gauge.standardCounts.referenceMoisture" label="Its reference" />
+        </FieldGrid>
+      </section>
+    </>
+  )
+}

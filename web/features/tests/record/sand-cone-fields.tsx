@@ -1,0 +1,37 @@
+import { useFormContext, useWatch } from 'react-hook-form'
+import { DENSITY_UNIT_LABEL } from '#shared/units/density.ts'
+import { formatHoleVolume } from '#shared/units/format.ts'
+import { SectionHead } from '#web/components/ui/section-head.tsx'
+import { CalculatedField } from '#web/components/ui/text-fields.tsx'
+import { METHOD_WORDS } from '#web/features/tests/outcome-words.ts'
+import { FieldGrid, ReadingField } from './reading-field.tsx'
+import { useRecord } from './record-context.tsx'
+import type { TestForm } from './test-form.ts'
+import { UnitChoice } from './unit-choice.tsx'
+
+export function SandConeFields() {
+  const { control } = useFormContext<TestForm>()
+  const { massUnit, densityUnit, lengthUnit } = useWatch({ control, name: 'sandCone' })
+  const { assessment, flagAt } = useRecord()
+  const customary = massUnit === 'lb'
+  const [value, unit] = assessment.holeVolumeCm3 === null ? [null, customary ? 'ft³' : 'cm³'] : formatHoleVolume(assessment.holeVolumeCm3, customary ? 'us' : 'si').split('\u2009')
+  const aside = (
+    <>
+      {METHOD_WORDS['sand-cone'].standard}, <UnitChoice name="sandCone.massUnit" of="mass" /> <UnitChoice name="sandCone.densityUnit" of="density" />
+    </>
+  )
+  return (
+    <section>
+      <SectionHead aside={aside}>Sand and hole</SectionHead>
+      <FieldGrid>
+        <ReadingField name="sandCone.apparatusBefore" label="Apparatus and sand before" unit={massUnit} />
+        <ReadingField name="sandCone.apparatusAfter" label="Apparatus and sand after" unit={massUnit} />
+        <ReadingField name="sandCone.coneAndPlate" label="Sand in cone and plate" unit={massUnit} />
+        <ReadingField name="sandCone.sandDensity" label="Bulk density of sand" unit={DENSITY_UNIT_LABEL[densityUnit]} />
+        <CalculatedField label="Hole volume" value={value ?? null} unit={unit} warning={flagAt('sandCone.hole')} />
+        <ReadingField name="sandCone.moistSoil" label="Moist soil from hole" unit={massUnit} />
+        <ReadingField name="sandCone.largestParticle" label="Largest particle, if seen" unit={<UnitChoice name="sandCone.lengthUnit" of="length" />} placeholder={lengthUnit === 'in' ? '¾ is 0.75' : undefined} />
+      </FieldGrid>
+    </section>
+  )
+}

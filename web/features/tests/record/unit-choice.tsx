@@ -1,0 +1,35 @@
+import { useFormContext, type FieldPath } from 'react-hook-form'
+import { DENSITY_UNIT_LABEL } from '#shared/units/density.ts'
+import type { TestForm } from './test-form.ts'
+
+const MASS = ['g', 'kg', 'lb'] as const
+const DENSITY = ['g/cm3', 'kg/m3', 'pcf', 'kN/m3', 'lb/yd3'] as const
+const LENGTH = ['in', 'mm', 'cm'] as const
+
+const CHOICES = {
+  mass: MASS.map((unit) => ({ unit, label: unit })),
+  density: DENSITY.map((unit) => ({ unit, label: DENSITY_UNIT_LABEL[unit] })),
+  length: LENGTH.map((unit) => ({ unit, label: unit })),
+} as const
+
+const NAMES = { mass: 'Masses in', density: 'Densities in', length: 'Lengths in' } as const
+
+/** The unit that a part of the sheet was read in; what is typed stays as it is. */
+export function UnitChoice({ name, of }: { name: FieldPath<TestForm>; of: keyof typeof CHOICES }) {
+  const { register } = useFormContext<TestForm>()
+  return (
+    <label className="inline-flex items-baseline gap-1 rounded-ctl has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink">
+      <span className="sr-only">{NAMES[of]}</span>
+      <select
+        {...register(name)}
+        className="min-h-6 cursor-pointer border-0 bg-transparent py-0 font-semibold text-ink underline decoration-1 underline-offset-3 outline-none pointer-coarse:min-h-12 [&>option]:bg-raised"
+      >
+        {CHOICES[of].map(({ unit, label }) => (
+          <option key={unit} value={unit}>
+            {label}
+          </option>
+        ))}
+      </select>
+    </label>
+  )
+}
