@@ -71,7 +71,7 @@ export function AcceptanceWindow(props: AcceptanceWindowProps) {
           ))}
         </g>
         {[...tests].sort((a, b) => Number(a.current ?? false) - Number(b.current ?? false)).map((test) => {
-          const edge = test.current === true && accepted !== undefined ? missedBy(test, accepted) : null
+          const edge = test.current === true && test.outcome === 'fails' && accepted !== undefined ? missedBy(test, accepted) : null
           return (
             <g key={test.id}>
               {edge !== null && (
