@@ -39,6 +39,27 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/ground/ground-page.tsx')).GroundPage,
   },
   {
+    path: PATTERNS.tests,
+    title: 'Results',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/tests/results-page.tsx')).ResultsPage,
+  },
+  {
+    path: PATTERNS.newTest,
+    title: 'Record a field test',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/tests/new-test-page.tsx')).NewTestPage,
+  },
+  {
+    path: PATTERNS.test,
+    title: 'Test',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/tests/test-page.tsx')).TestPage,
+  },
+  {
     path: PATTERNS.parts,
     title: 'Parts',
     open: 'anyone',
