@@ -1,4 +1,4 @@
-import { SHEET_COLOURS, WHITE } from '#shared/look/theme.ts'
+import { MARK_INK, WHITE } from '#shared/look/theme.ts'
 import { markImageName } from './board-style.ts'
 import type { MarkOutcome } from './board-types.ts'
 
@@ -77,7 +77,7 @@ export interface MarkImage {
 /** The test marks as images for the map, drawn at the screen's own density. */
 export function drawMarkImages(pixelRatio: number): MarkImage[] {
   const ratio = Math.max(2, Math.ceil(pixelRatio))
-  const ink = SHEET_COLOURS.light.ink.css
+  const ink = MARK_INK.css
   return OUTCOMES.flatMap((outcome) =>
     [false, true].map((verification) => {
       const canvas = new OffscreenCanvas(SIDE * ratio, SIDE * ratio)

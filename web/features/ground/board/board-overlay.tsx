@@ -24,7 +24,7 @@ export function BoardOverlay({ board, selectedCell, area, point }: BoardOverlayP
   const svg = useRef<SVGSVGElement>(null)
   useEffect(() => {
     const { map, projection, site } = board
-    const [casing, line, rectangle, cross] = Array.from(svg.current?.querySelectorAll('path') ?? [])
+    const [casing, line, rectangle, crossCasing, cross] = Array.from(svg.current?.querySelectorAll('path') ?? [])
     const draw = (): void => {
       const frame = sheetFrame(map, projection)
       const column = selectedCell === undefined ? undefined : site.cells.column[selectedCell]
@@ -37,7 +37,7 @@ export function BoardOverlay({ board, selectedCell, area, point }: BoardOverlayP
         area === undefined ? '' : rectanglePath(frame, area.from.column, area.from.row, area.to.column, area.to.row, 0),
       )
       const at = point === null ? undefined : map.project([...projection.siteToLonLat(point)])
-      cross?.setAttribute('d', at === undefined ? '' : `M${at.x - 9} ${at.y}h18M${at.x} ${at.y - 9}v18`)
+      for (const path of [crossCasing, cross]) path?.setAttribute('d', at === undefined ? '' : `M${at.x - 9} ${at.y}h18M${at.x} ${at.y - 9}v18`)
     }
     draw()
     map.on('render', draw)
@@ -50,6 +50,7 @@ export function BoardOverlay({ board, selectedCell, area, point }: BoardOverlayP
       <path className="board-cell-casing" />
       <path className="board-cell-line" />
       <path className="board-area" />
+      <path className="board-cross-casing" />
       <path className="board-cross" />
     </svg>
   )

@@ -1,7 +1,7 @@
 import { GROUND_STATES } from '#shared/domain/ground-state.ts'
 import type { Rgb } from '#shared/look/colour.ts'
 import { stateLook, type Hatch } from '#shared/look/ground-look.ts'
-import { SHEET_COLOURS, type Theme } from '#shared/look/theme.ts'
+import { MARK_INK, SHEET_COLOURS, type Theme } from '#shared/look/theme.ts'
 
 /** The shared look as the arrays the shader takes, one item a state. */
 export interface BoardPalette {
@@ -72,7 +72,7 @@ export function boardPalette(theme: Theme): BoardPalette {
     line: array(looks.map(({ cellLine }) => [...share(cellLine.colour.rgb), cellLine.opacity])),
     lineWidth: new Float32Array(looks.map((look) => look.cellLine.width)),
     // ground keeps its hues in both themes, so what is drawn on it keeps the dark ink
-    ink: array([share(SHEET_COLOURS.light.ink.rgb)]),
+    ink: array([share(MARK_INK.rgb)]),
     sheetInk: array([share(SHEET_COLOURS[theme].ink.rgb)]),
     preview: array([share(stateLook('rework').hatch.mark.rgb)]),
   }

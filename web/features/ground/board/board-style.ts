@@ -80,7 +80,8 @@ export function boardStyle(site: BoardSite, projection: BoardProjection, marks: 
     sources: {
       contours: source(collection([contoursOf(projection, site)])),
       mask: source(collection([maskOf(projection, boundary)])),
-      boundary: source(collection([{ type: 'LineString', coordinates: boundary }])),
+      // one leg more than a closed ring, so that the last corner is joined as the others are
+      boundary: source(collection([{ type: 'LineString', coordinates: [...boundary, ...boundary.slice(1, 2)] }])),
       zones: source(collection(site.zones.map((zone) => ({ type: 'LineString', coordinates: ringOf(projection, zone.ring) })))),
       marks: source(marksData(projection, marks)),
     },
