@@ -21,11 +21,11 @@ export function Figure({ value, unit, of }: { value: string; unit: string; of: R
 export type Fact = { readonly label: string; readonly value: string; readonly unit?: string; readonly tone?: 'bad' | 'good' | undefined }
 
 /** Figures side by side between rules, as in the title block and under a plot. */
-export function FactsRow({ facts, className }: { facts: readonly Fact[]; className?: string }) {
+export function FactsRow({ facts, columns, className }: { facts: readonly Fact[]; /** as many as fit by default */ columns?: number; className?: string }) {
   return (
     <dl
       className={classNames('m-0 grid overflow-hidden border-y border-rule-2', className)}
-      style={{ gridTemplateColumns: `repeat(auto-fit, minmax(min(100%, ${facts.length > 3 ? 96 : 120}px), 1fr))` }}
+      style={{ gridTemplateColumns: columns !== undefined ? `repeat(${columns}, minmax(0, 1fr))` : `repeat(auto-fit, minmax(min(100%, ${facts.length > 3 ? 96 : 120}px), 1fr))` }}
     >
       {facts.map(({ label, value, unit, tone }) => (
         <div key={label} className="-ml-px border-l border-rule px-3 pt-[10px] pb-2">

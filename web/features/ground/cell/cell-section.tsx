@@ -1,5 +1,4 @@
 import { useQuery } from '@tanstack/react-query'
-import { useEffect, useRef } from 'react'
 import { Link } from 'react-router-dom'
 import type { Column } from '#shared/schemas/ground.ts'
 import { paths } from '#web/app/paths.ts'
@@ -68,14 +67,12 @@ export function CellSection({ cell }: { cell: number }) {
   const { site, label, zoneOfCell, units } = useSite()
   const { go } = useGroundView()
   const column = useQuery(columnQueries.detail(site.id, cell))
-  const heading = useRef<HTMLHeadingElement>(null)
-  useEffect(() => heading.current?.parentElement?.scrollIntoView({ block: 'nearest' }), [cell, column.isSuccess])
   const side = units.number(site.grid.cellSize, Number.isInteger(site.grid.cellSize) ? 0 : 1)
   const size = `${side} × ${side} ${site.grid.unit === 'm' ? 'm' : 'ft'}`
   return (
-    <section aria-labelledby="cell-heading" className="flex-1 px-[22px] py-[18px]">
+    <section aria-labelledby="cell-heading" className="px-[22px] py-[18px]">
       <div className="flex items-baseline gap-2">
-        <h2 id="cell-heading" ref={heading} tabIndex={-1} className="m-0 min-w-0 flex-1 text-head font-bold">
+        <h2 id="cell-heading" tabIndex={-1} className="m-0 min-w-0 flex-1 text-head font-bold">
           Cell {label(cell)} <span className="font-medium text-ink-2">{[zoneOfCell(cell)?.name, size].filter((part) => part !== undefined).join(', ')}</span>
         </h2>
         <button type="button" aria-label={`Close cell ${label(cell)}`} className="link-ink text-[13px] pointer-coarse:min-h-11" onClick={() => go({ cell: undefined })}>

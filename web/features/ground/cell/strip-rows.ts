@@ -46,6 +46,7 @@ export function whyLine(column: Column): string {
   if (column.ready) return column.nextLift === null ? 'At design grade.' : `May receive lift ${column.nextLift}.`
   if (column.blockedBy === null) return ''
   const row = column.rows.find((each) => each.lift === column.blockedBy?.lift)
-  const why = row !== undefined && row.why !== '' && row.lift !== 0 ? `: ${row.why}` : ''
-  return `${column.blockedBy.reason}${why}.`
+  // the reason of a suspect says to run it again; what is left to say is which
+  const why = row?.state === 'suspect' ? (row.test?.number ?? '') : (row?.why ?? '')
+  return `${column.blockedBy.reason}${why === '' || row?.lift === 0 ? '' : `: ${why}`}.`
 }

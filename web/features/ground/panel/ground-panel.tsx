@@ -74,9 +74,16 @@ export function GroundPanel({ surface }: { surface: GroundSheet | undefined }) {
         <TaskPanel key={task.kind} task={task} surface={surface} />
       ) : (
         <>
-          <ChosenSection surface={surface} />
-          <BoardPart />
-          {address.cell !== undefined && <CellSection cell={address.cell} />}
+          <div className="min-h-0 lg:flex-1 lg:overflow-y-auto">
+            <ChosenSection surface={surface} />
+            <BoardPart />
+          </div>
+          {address.cell !== undefined && (
+            // the cell stays in sight under the board; narrow, it comes first, since a tap on it opens the panel
+            <div className="border-rule-2 max-lg:order-first max-lg:border-b lg:max-h-[52%] lg:shrink-0 lg:overflow-y-auto lg:border-t-2 lg:border-t-ink">
+              <CellSection cell={address.cell} />
+            </div>
+          )}
         </>
       )}
     </Sheet>

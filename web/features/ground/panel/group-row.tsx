@@ -6,7 +6,7 @@ import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 export function ShowButton({ cells, of, children = 'Show' }: { cells: readonly number[]; of: string; children?: ReactNode }) {
   const { shown, show } = useGroundView()
   return (
-    <button type="button" aria-pressed={shown === cells} aria-label={`Show ${of}`} onClick={() => show(cells)} className="pointer-coarse:min-h-11">
+    <button type="button" aria-pressed={shown === cells} aria-label={`Show ${of}`} onClick={() => show(cells)} className="pointer-coarse:-mt-[14px] pointer-coarse:min-h-12 pointer-coarse:min-w-12">
       {children}
     </button>
   )
@@ -27,7 +27,7 @@ export function GroupRow({ mark, title, detail, action, acts }: GroupRowProps) {
     <>
       {detail}
       {acts !== undefined && acts !== null && (
-        <span className="mt-1 flex flex-wrap gap-x-4 text-[13px] [&_a]:link-ink [&_a]:pointer-coarse:min-h-11 [&_button]:link-ink [&_button]:pointer-coarse:min-h-11">{acts}</span>
+        <span className="mt-1 flex flex-wrap gap-x-4 text-[13px] [&_a]:link-ink [&_a]:pointer-coarse:min-h-12 [&_button]:link-ink [&_button]:pointer-coarse:min-h-12">{acts}</span>
       )}
     </>
   )

@@ -1,18 +1,18 @@
 import { classNames } from '#web/lib/class-names.ts'
 import type { TitleFact } from './title-facts.ts'
 
-/** The title block along the bottom of the sheet. Narrow, the essential facts stay and the row scrolls. */
+/** The title block along the bottom of the sheet. Narrow, the row scrolls and the essential facts come first. */
 export function TitleBlock({ facts }: { facts: readonly TitleFact[] }) {
   return (
     <div role="region" aria-label="Title block" tabIndex={0} className="overflow-x-auto border-t-2 border-ink bg-raised -outline-offset-3">
-      <dl className="m-0 flex">
+      <dl className="m-0 flex lg:min-h-[72px]">
         {facts.map(({ key, label, value, of, bad, essential }, index) => (
           <div
             key={key}
             className={classNames(
-              'shrink-0 px-[18px] pt-3 pb-[10px] whitespace-nowrap max-lg:px-3 max-lg:pt-2 max-lg:pb-1',
+              'shrink-0 px-[18px] pt-3 pb-[10px] whitespace-nowrap max-xl:border-r max-xl:border-rule-2 max-xl:px-3 max-lg:pt-2 max-lg:pb-1',
               index < facts.length - 1 && 'border-r border-rule-2',
-              !essential && 'max-sm:hidden',
+              !essential && 'max-xl:order-last',
             )}
           >
             <dt className="cap">{label}</dt>

@@ -12,7 +12,7 @@ export interface TitleFact {
   /** what the value is of */
   readonly of?: string
   readonly bad?: boolean
-  /** stays in sight on a narrow screen */
+  /** comes first on a narrow screen */
   readonly essential: boolean
 }
 

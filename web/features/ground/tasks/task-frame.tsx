@@ -23,7 +23,9 @@ type TaskFrameProps = {
 export function TaskFrame({ title, error, saving, saveLabel, saveKind = 'primary', canSave, onSave, more, children }: TaskFrameProps) {
   const { end } = useGroundView()
   const heading = useRef<HTMLHeadingElement>(null)
-  useEffect(() => heading.current?.focus(), [title])
+  useEffect(() => {
+    heading.current?.focus()
+  }, [title])
   const handleSubmit = (event: FormEvent): void => {
     event.preventDefault()
     if (canSave && !saving) onSave()

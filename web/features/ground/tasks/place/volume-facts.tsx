@@ -22,7 +22,7 @@ export function VolumeFacts({ volume }: { volume: PlacementVolumeResult | null }
   ]
   return (
     <div role="group" aria-label="Compacted volume">
-      <FactsRow facts={facts} />
+      <FactsRow facts={facts} columns={3} />
       <p className="m-0 mt-2 text-small text-ink-2">
         {units.volume(drivingCm3)} compacted counts, {drivenBy === 'loads' ? 'from the loads' : 'from area and thickness'}.
       </p>
