@@ -1,5 +1,5 @@
-import { queryOptions } from '@tanstack/react-query'
-import { lotListSchema, lotSchema, type LotQuery } from '#shared/schemas/lot.ts'
+import { keepPreviousData, queryOptions } from '@tanstack/react-query'
+import { frequencySeriesSchema, lotListSchema, lotSchema, type LotQuery, type SeriesQuery } from '#shared/schemas/lot.ts'
 import { siteAddress, siteQueries } from '#web/data/site/queries.ts'
 import { apiJson } from '#web/lib/api-client.ts'
 
@@ -14,5 +14,12 @@ export const lotQueries = {
     queryOptions({
       queryKey: [...lotQueries.all(siteId), 'detail', id] as const,
       queryFn: ({ signal }) => apiJson(`${siteAddress(siteId)}/lots/${encodeURIComponent(id)}`, lotSchema, { signal }),
+    }),
+  /** Volume placed and spoken for by working day, of all zones or one. */
+  series: (siteId: string, filter: SeriesQuery = {}) =>
+    queryOptions({
+      queryKey: [...lotQueries.all(siteId), 'series', filter] as const,
+      queryFn: async ({ signal }) => (await apiJson(`${siteAddress(siteId)}/frequency/series`, frequencySeriesSchema, { query: filter, signal })).days,
+      placeholderData: keepPreviousData,
     }),
 }
