@@ -39,6 +39,13 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/ground/ground-page.tsx')).GroundPage,
   },
   {
+    path: PATTERNS.frequency,
+    title: 'Frequency',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/frequency/frequency-page.tsx')).FrequencyPage,
+  },
+  {
     path: PATTERNS.tests,
     title: 'Results',
     open: 'site',
@@ -58,6 +65,27 @@ export const PAGES: readonly Page[] = [
     open: 'site',
     verb: 'registers.see',
     load: async () => (await import('#web/features/tests/test-page.tsx')).TestPage,
+  },
+  {
+    path: PATTERNS.rework,
+    title: 'Rework',
+    open: 'site',
+    verb: 'site.see',
+    load: async () => (await import('#web/features/rework/rework-page.tsx')).ReworkPage,
+  },
+  {
+    path: PATTERNS.reworkOrder,
+    title: 'Rework order',
+    open: 'site',
+    verb: 'site.see',
+    load: async () => (await import('#web/features/rework/order-page.tsx')).ReworkOrderPage,
+  },
+  {
+    path: PATTERNS.lab,
+    title: 'Lab',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/lab/lab-page.tsx')).LabPage,
   },
   {
     path: PATTERNS.parts,

@@ -1,0 +1,168 @@
+import { useQuery } from '@tanstack/react-query'
+import { useState } from 'react'
+import { useSearchParams } from 'react-router-dom'
+import type { Curve, Material } from '#shared/schemas/lab.ts'
+import { Banner } from '#web/components/ui/banner.tsx'
+import { Button } from '#web/components/ui/button.tsx'
+import { EmptyState } from '#web/components/ui/empty-state.tsx'
+import { SectionHead } from '#web/components/ui/section-head.tsx'
+import { Skeleton } from '#web/components/ui/skeleton.tsx'
+import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
+import { curveQueries } from '#web/data/curve/queries.ts'
+import { materialQueries } from '#web/data/material/queries.ts'
+import { isApiError } from '#web/lib/api-error.ts'
+import { useSite } from '#web/lib/site-context.tsx'
+import { CurveDialog } from './curve-dialog.tsx'
+import { CurveSheet } from './curve-sheet.tsx'
+import { pairWords, STATUS_WORDS } from './lab-words.ts'
+import { MaterialDialog } from './material-dialog.tsx'
+
+function MaterialsTable({ materials }: { materials: readonly Material[] }) {
+  const { units } = useSite()
+  return (
+    <Table caption="Borrow materials">
+      <thead>
+        <tr>
+          <HeadCell className="pl-0">Material</HeadCell>
+          <HeadCell>Source</HeadCell>
+          <HeadCell>Classification</HeadCell>
+          <HeadCell numeric>Swell</HeadCell>
+          <HeadCell numeric>Shrink</HeadCell>
+          <HeadCell numeric>Loose to compacted</HeadCell>
+        </tr>
+      </thead>
+      <tbody>
+        {materials.map((material) => (
+          <Row key={material.id}>
+            <RowHead className="pl-0">{material.name}</RowHead>
+            <Cell>{material.source}</Cell>
+            <Cell>{material.classification}</Cell>
+            <Cell numeric>{units.percent(material.swellPercent)}</Cell>
+            <Cell numeric>{units.percent(material.shrinkPercent)}</Cell>
+            <Cell numeric>× {units.number(material.looseToCompacted, 3)}</Cell>
+          </Row>
+        ))}
+      </tbody>
+    </Table>
+  )
+}
+
+function CurvesTable({ curves, chosen, onChoose }: { curves: readonly Curve[]; chosen: string | undefined; onChoose: (id: string) => void }) {
+  const { units } = useSite()
+  return (
+    <Table caption="Reference curves">
+      <thead>
+        <tr>
+          <HeadCell className="pl-0">Curve</HeadCell>
+          <HeadCell>Material</HeadCell>
+          <HeadCell>Method</HeadCell>
+          <HeadCell numeric>Maximum and optimum</HeadCell>
+          <HeadCell>Status</HeadCell>
+          <HeadCell numeric>Tests judged</HeadCell>
+        </tr>
+      </thead>
+      <tbody>
+        {curves.map((curve) => (
+          <Row key={curve.id} selected={curve.id === chosen}>
+            <RowHead className="pl-0">
+              <button type="button" aria-pressed={curve.id === chosen} onClick={() => onChoose(curve.id)} className="link-ink pointer-coarse:min-h-11">
+                {curve.code}
+              </button>
+            </RowHead>
+            <Cell>{curve.materialName}</Cell>
+            <Cell className="whitespace-nowrap">
+              {curve.method} {curve.procedure}
+            </Cell>
+            <Cell numeric>{pairWords(curve.pair, units)}</Cell>
+            <Cell className={curve.status === 'draft' ? 'font-semibold text-warn' : ''}>{STATUS_WORDS[curve.status]}</Cell>
+            <Cell numeric>{curve.testsJudged}</Cell>
+          </Row>
+        ))}
+      </tbody>
+    </Table>
+  )
+}
+
+/** Borrow materials and their reference curves: what every field test is judged against. */
+export function LabPage() {
+  const { site, can } = useSite()
+  const [search, setSearch] = useSearchParams()
+  const [asked, setAsked] = useState<'material' | 'curve' | null>(null)
+  const materials = useQuery(materialQueries.list(site.id))
+  const curves = useQuery(curveQueries.list(site.id))
+  const choose = (id: string) => setSearch({ curve: id }, { replace: true })
+  const failed = materials.error ?? curves.error
+  const waiting = curves.data?.filter((curve) => curve.status === 'draft').length ?? 0
+  const chosen = curves.data?.find((curve) => curve.id === search.get('curve')) ?? curves.data?.[0]
+  const ready = materials.data !== undefined && curves.data !== undefined
+  return (
+    <div className="min-h-0 flex-1 overflow-y-auto bg-raised">
+      {failed !== null && (
+        <Banner tone="bad" title={isApiError(failed) ? failed.message : 'The laboratory’s sheets could not be read.'} action={<button type="button" onClick={() => void Promise.all([materials.refetch(), curves.refetch()])}>Try again</button>}>
+          Nothing is lost.
+        </Banner>
+      )}
+      <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3 px-4 pt-[22px] pb-4 sm:px-[26px]">
+        <div>
+          <h1 className="m-0 text-[19px] leading-[1.2] font-bold">Lab</h1>
+          {ready && (
+            <p className="m-0 mt-1 text-ink-2">
+              {materials.data.length} {materials.data.length === 1 ? 'material' : 'materials'}, {curves.data.length} {curves.data.length === 1 ? 'curve' : 'curves'}
+              {waiting > 0 && `, ${waiting} waiting for the lead’s approval`}
+            </p>
+          )}
+        </div>
+        <div className="flex flex-wrap gap-2">
+          {can('material.record') && <Button onClick={() => setAsked('material')}>New material</Button>}
+          {can('curve.record') && ready && materials.data.length > 0 && (
+            <Button kind="primary" onClick={() => setAsked('curve')}>
+              New curve
+            </Button>
+          )}
+        </div>
+      </div>
+      {!ready ? (
+        failed === null && (
+          <div className="px-4 sm:px-[26px]">
+            <Skeleton label="The laboratory’s sheets are on their way" lines={[60, 72, 66, 40]} />
+          </div>
+        )
+      ) : materials.data.length === 0 ? (
+        <div className="max-w-[640px] px-4 sm:px-[26px]">
+          <EmptyState title="No material yet" action={can('material.record') ? <Button onClick={() => setAsked('material')}>New material</Button> : undefined}>
+            Record the borrow material first, then its compaction curve. Fill can be placed and tests judged once both stand here.
+          </EmptyState>
+        </div>
+      ) : (
+        <div className="grid gap-x-10 gap-y-8 px-4 pb-10 sm:px-[26px] xl:grid-cols-[minmax(0,1fr)_minmax(440px,600px)]">
+          <div className="grid min-w-0 content-start gap-8">
+            <section>
+              <SectionHead>Reference curves</SectionHead>
+              {curves.data.length === 0 ? <p className="m-0 text-ink-2">No curve yet. A field test needs one to be judged by.</p> : <CurvesTable curves={curves.data} chosen={chosen?.id} onChoose={choose} />}
+            </section>
+            <section>
+              <SectionHead>Borrow materials</SectionHead>
+              <MaterialsTable materials={materials.data} />
+            </section>
+          </div>
+          {chosen !== undefined && (
+            <div className="min-w-0 xl:border-l xl:border-rule-2 xl:pl-10">
+              <CurveSheet key={chosen.id} curve={chosen} />
+            </div>
+          )}
+        </div>
+      )}
+      {asked === 'material' && <MaterialDialog onClose={() => setAsked(null)} />}
+      {asked === 'curve' && materials.data !== undefined && (
+        <CurveDialog
+          materials={materials.data}
+          onClose={() => setAsked(null)}
+          onSaved={(curve) => {
+            setAsked(null)
+            choose(curve.id)
+          }}
+        />
+      )}
+    </div>
+  )
+}
