@@ -18,7 +18,7 @@ export function GaugeFields() {
   const density = DENSITY_UNIT_LABEL[densityUnit]
   const aside = (
     <>
-      {METHOD_WORDS['nuclear-gauge'].standard}, <UnitChoice name="gauge.densityUnit" of="density" /> <UnitChoice name="gauge.lengthUnit" of="length" />
+      {METHOD_WORDS['nuclear-gauge'].standard}, <UnitChoice name="gauge.densityUnit" of="density" label="Gauge densities in" /> <UnitChoice name="gauge.lengthUnit" of="length" label="Rod depth in" />
     </>
   )
   return (

@@ -29,12 +29,12 @@ export function MoistureFields() {
             {name}, {standard}
             {(method === 'oven' || method === 'microwave') && (
               <>
-                , <UnitChoice name="moisture.massUnit" of="mass" />
+                , <UnitChoice name="moisture.massUnit" of="mass" label="Masses of the tin in" />
               </>
             )}
             {method === 'gauge' && (
               <>
-                , <UnitChoice name="moisture.densityUnit" of="density" />
+                , <UnitChoice name="moisture.densityUnit" of="density" label="Moisture density in" />
               </>
             )}
           </>

@@ -15,12 +15,12 @@ export function PlaceSection({ placed, unmoved }: { placed: boolean; unmoved: bo
   const [open, setOpen] = useState(!placed)
   const { register } = useFormContext<TestForm>()
   const { assessment, problemAt } = useRecord()
-  const { label, site } = useSite()
+  const { label, site, units } = useSite()
   const { place } = assessment
   const folded = !open && unmoved && place !== null
   return (
     <section>
-      <SectionHead aside={place === null ? undefined : `E ${place.at.easting.toFixed(1)}, N ${place.at.northing.toFixed(1)}`}>Place and purpose</SectionHead>
+      <SectionHead aside={place === null ? undefined : `E ${units.number(place.at.easting, 1)}, N ${units.number(place.at.northing, 1)}`}>Place and purpose</SectionHead>
       {folded ? (
         <p className="mt-0 mb-3 flex min-h-9 flex-wrap items-center gap-x-3 text-[16px] pointer-coarse:min-h-12">
           {place.stake !== null && <StakeFlag label={place.stake.label} />}
@@ -46,7 +46,7 @@ export function PlaceSection({ placed, unmoved }: { placed: boolean; unmoved: bo
               </option>
             ))}
           </SelectField>
-          <div className="sm:col-span-2">
+          <div className="max-sm:order-first col-span-2">
             <TextField label={`Sampled, ${site.timeZone.split('/').at(-1)?.replaceAll('_', ' ') ?? ''} time`} type="datetime-local" error={problemAt('sampledAt')} {...register('sampledAt')} />
           </div>
         </FieldGrid>

@@ -19,7 +19,7 @@ export function PlainFields() {
       <SectionHead
         aside={
           <>
-            as the report states it, <UnitChoice name="plain.densityUnit" of="density" />
+            as the report states it, <UnitChoice name="plain.densityUnit" of="density" label="Density in" />
           </>
         }
       >

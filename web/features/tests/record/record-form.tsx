@@ -1,13 +1,11 @@
 import { useEffect, useMemo, useState } from 'react'
 import { FormProvider, useForm, useWatch } from 'react-hook-form'
-import { Link } from 'react-router-dom'
+import { useLocation, useNavigate } from 'react-router-dom'
 import type { CreateTest, TestDetail } from '#shared/schemas/field-test.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 import type { Stake } from '#shared/schemas/lot.ts'
 import { paths } from '#web/app/paths.ts'
-import { buttonClasses } from '#web/components/ui/button-classes.ts'
 import { Button } from '#web/components/ui/button.tsx'
-import { classNames } from '#web/lib/class-names.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { assessTest } from './assess-test.ts'
 import { FormNotices } from './form-notices.tsx'
@@ -46,6 +44,8 @@ function useHeadWords({ place, lift }: RecordState['assessment'], followed: Test
 export function RecordForm({ userId, draft, start, restored, onStartAfresh, stakes, curves, follows, followed }: RecordFormProps) {
   const context = useSite()
   const { site } = context
+  const navigate = useNavigate()
+  const location = useLocation()
   const form = useForm<TestForm>({ defaultValues: start, mode: 'onTouched' })
   const values = useWatch({ control: form.control, compute: (all: TestForm) => all })
   const assessment = useMemo(() => assessTest(values, { context, stakes, curves, follows }), [values, context, stakes, curves, follows])
@@ -81,10 +81,16 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
     if (first === 'purpose') document.querySelector<HTMLInputElement>('#purpose-choice input')?.focus()
     else if (first !== undefined) form.setFocus(first as Parameters<typeof form.setFocus>[0])
   }
+  const handleCancel = (): void => {
+    keepDraft(draft, null)
+    // opened by its address alone there is nothing to go back to
+    if (location.key === 'default') void navigate(paths.tests(site.id))
+    else void navigate(-1)
+  }
   const leave = (
-    <Link to={paths.tests(site.id)} onClick={() => keepDraft(draft, null)} className={buttonClasses('plain', 'regular', 'max-lg:min-h-12 max-lg:px-5')}>
+    <Button onClick={handleCancel} className="max-lg:min-h-12 max-lg:px-5">
       Cancel
-    </Link>
+    </Button>
   )
   const save = (
     <Button type="submit" kind="primary" busyLabel={saving.busy && 'Saving'} className="max-lg:min-h-12 max-lg:flex-1">
@@ -103,9 +109,9 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
             saving.save(focusFirst)
           }}
         >
-          <header className="flex min-h-14 shrink-0 flex-wrap items-center gap-x-[18px] gap-y-0 border-b border-rule-2 bg-raised px-4 py-2 sm:px-[26px] lg:border-b-2 lg:border-ink">
-            <h1 className="m-0 text-[18px] font-bold">Record a field test</h1>
-            <span className="text-ink-2">{words}</span>
+          <header className="flex shrink-0 flex-wrap items-center gap-x-[18px] gap-y-0 border-b sm:min-h-14 border-rule-2 bg-raised px-4 py-2 sm:px-[26px] lg:border-b-2 lg:border-ink">
+            <h1 className="m-0 text-[18px] font-bold max-sm:sr-only">Record a field test</h1>
+            <span className="text-ink-2 max-sm:font-semibold max-sm:text-ink">{words}</span>
             <span className="ml-auto flex gap-[10px] max-lg:hidden">
               {leave}
               {save}
@@ -117,7 +123,7 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
               <FormNotices saving={saving} restored={restored} onStartAfresh={onStartAfresh} lotVersion={lotVersion} followed={followed} follows={follows} />
               <SheetFields placed={placedAtStart} unmoved={!isSet(dirtyFields, 'placeBy')} />
             </div>
-            <div className={classNames('bg-sheet px-4 pt-[22px] pb-8 sm:px-[26px] max-lg:border-t max-lg:border-rule-2 lg:overflow-y-auto')}>
+            <div className="bg-sheet px-4 pt-[22px] pb-8 sm:px-[26px] max-lg:border-t max-lg:border-rule-2 lg:overflow-y-auto">
               <VerdictSide previewed={previewed} />
             </div>
           </div>

@@ -11,13 +11,13 @@ import { UnitChoice } from './unit-choice.tsx'
 
 export function SandConeFields() {
   const { control } = useFormContext<TestForm>()
-  const { massUnit, densityUnit, lengthUnit } = useWatch({ control, name: 'sandCone' })
+  const { massUnit, densityUnit } = useWatch({ control, name: 'sandCone' })
   const { assessment, flagAt } = useRecord()
   const customary = massUnit === 'lb'
   const [value, unit] = assessment.holeVolumeCm3 === null ? [null, customary ? 'ft³' : 'cm³'] : formatHoleVolume(assessment.holeVolumeCm3, customary ? 'us' : 'si').split('\u2009')
   const aside = (
     <>
-      {METHOD_WORDS['sand-cone'].standard}, <UnitChoice name="sandCone.massUnit" of="mass" /> <UnitChoice name="sandCone.densityUnit" of="density" />
+      {METHOD_WORDS['sand-cone'].standard}, <UnitChoice name="sandCone.massUnit" of="mass" label="Masses at the hole in" /> <UnitChoice name="sandCone.densityUnit" of="density" label="Density of sand in" />
     </>
   )
   return (
@@ -30,7 +30,7 @@ export function SandConeFields() {
         <ReadingField name="sandCone.sandDensity" label="Bulk density of sand" unit={DENSITY_UNIT_LABEL[densityUnit]} />
         <CalculatedField label="Hole volume" value={value ?? null} unit={unit} warning={flagAt('sandCone.hole')} />
         <ReadingField name="sandCone.moistSoil" label="Moist soil from hole" unit={massUnit} />
-        <ReadingField name="sandCone.largestParticle" label="Largest particle, if seen" unit={<UnitChoice name="sandCone.lengthUnit" of="length" />} placeholder={lengthUnit === 'in' ? '¾ is 0.75' : undefined} />
+        <ReadingField name="sandCone.largestParticle" label="Largest particle, if seen" unit={<UnitChoice name="sandCone.lengthUnit" of="length" label="Particle size in" />} />
       </FieldGrid>
     </section>
   )

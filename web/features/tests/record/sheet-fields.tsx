@@ -33,7 +33,7 @@ export function SheetFields({ placed, unmoved }: { placed: boolean; unmoved: boo
     setValue('moisture.massUnit', massUnit)
   }
   return (
-    <div className="grid gap-[22px]">
+    <div className="grid gap-[22px] pointer-coarse:[&_[role=radiogroup]_label]:min-h-12">
       <PlaceSection placed={placed} unmoved={unmoved} />
       <fieldset disabled={purpose === ''} className="m-0 grid min-w-0 gap-[22px] border-0 p-0 disabled:opacity-55">
         <legend className="sr-only">Readings</legend>

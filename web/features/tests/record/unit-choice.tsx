@@ -12,14 +12,12 @@ const CHOICES = {
   length: LENGTH.map((unit) => ({ unit, label: unit })),
 } as const
 
-const NAMES = { mass: 'Masses in', density: 'Densities in', length: 'Lengths in' } as const
-
 /** The unit that a part of the sheet was read in; what is typed stays as it is. */
-export function UnitChoice({ name, of }: { name: FieldPath<TestForm>; of: keyof typeof CHOICES }) {
+export function UnitChoice({ name, of, label }: { name: FieldPath<TestForm>; of: keyof typeof CHOICES; label: string }) {
   const { register } = useFormContext<TestForm>()
   return (
     <label className="inline-flex items-baseline gap-1 rounded-ctl has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-ink">
-      <span className="sr-only">{NAMES[of]}</span>
+      <span className="sr-only">{label}</span>
       <select
         {...register(name)}
         className="min-h-6 cursor-pointer border-0 bg-transparent py-0 font-semibold text-ink underline decoration-1 underline-offset-3 outline-none pointer-coarse:min-h-12 [&>option]:bg-raised"

@@ -27,7 +27,7 @@ export function useSaving({ siteId, userId, draft, form, assessment }: SavingInp
   const send = (change: { readonly lift?: number; readonly liftConfirmed?: boolean } = {}): void => {
     const { input } = assessment
     if (input === null) return
-    const values = form.getValues()
+    const values = structuredClone(form.getValues())
     setSent(values)
     setQuestion(null)
     record.mutate(

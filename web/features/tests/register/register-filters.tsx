@@ -44,7 +44,7 @@ export function RegisterFilters({ address, onChange }: { address: RegisterAddres
           </option>
         ))}
       </SelectField>
-      <label className="col-span-2 flex min-h-[38px] items-center gap-2 font-medium pointer-coarse:min-h-12 sm:col-span-4 xl:col-span-1">
+      <label className="flex min-h-[38px] items-center gap-2 leading-[1.25] font-medium pointer-coarse:min-h-12 sm:col-span-4 xl:col-span-1">
         <input type="checkbox" className="size-[18px] accent-ink" checked={address.current} onChange={(event) => onChange({ current: event.target.checked })} />
         Only results that count
       </label>

@@ -12,7 +12,7 @@ export function ResultCell({ test }: { test: TestSummary }) {
   const off = test.voided || test.superseded || !test.current
   const standing = test.voided ? 'void' : test.superseded ? 'out of force' : test.current ? '' : 'retested'
   return (
-    <span className="inline-flex items-center gap-2 whitespace-nowrap">
+    <span className="flex items-center gap-2 leading-[1.4] whitespace-nowrap">
       <TestMark outcome={markOf(test)} verification={test.purpose === 'verification'} size={22} decorative className={classNames('-my-1', off && 'opacity-45')} />
       <span className={classNames(test.voided && 'line-through', off && 'text-ink-2')}>{resultWord(test)}</span>
       {standing !== '' && <span className="text-small text-ink-2">{standing}</span>}
@@ -57,7 +57,7 @@ export function RegisterTable({ tests }: { tests: readonly TestSummary[] }) {
             <Cell numeric>{units.number(test.rc, 1)}</Cell>
             <Cell numeric>{units.number(test.moisture, 1)}</Cell>
             <Cell numeric>{units.deviation(test.moistureDeviation)}</Cell>
-            <Cell>
+            <Cell className="align-middle">
               <ResultCell test={test} />
             </Cell>
             <Cell className="whitespace-nowrap">{units.dateTime(test.sampledAt)}</Cell>
