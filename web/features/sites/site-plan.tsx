@@ -26,12 +26,11 @@ function draw(canvas: HTMLCanvasElement, cells: SiteCells, sheet: GroundSheet, {
   context.scale(scale, scale)
   const side = Math.min(WIDTH / columns, HEIGHT / rows)
   const gap = side >= SMALLEST_WITH_LINES ? 0.7 : 0
-  const left = (WIDTH - columns * side) / 2
   const top = (HEIGHT - rows * side) / 2
   sheet.state.forEach((code, cell) => {
     const state = groundStateOf(code)
     const { fill, cellLine } = stateLook(state, theme)
-    const x = left + (cells.column[cell] ?? 0) * side
+    const x = (cells.column[cell] ?? 0) * side
     const y = top + (cells.row[cell] ?? 0) * side
     context.fillStyle = fill.css
     // a cell without a line reaches a little into the next, so that no seam shows between them
