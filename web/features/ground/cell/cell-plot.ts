@@ -61,7 +61,7 @@ function plotted(column: Column, density: (kgM3: number) => number): PlottedTest
 
 /** Everything the small plot of a cell draws; null where no curve is in force. */
 export function cellPlot(column: Column, curve: Curve | undefined, criteria: readonly Criterion[], system: UnitSystem, waterDensity: number): Omit<AcceptanceWindowProps, 'label'> | null {
-  if (curve?.pair == null || curve.fit.drawn.length === 0) return null
+  if (curve === undefined || curve.pair === null || curve.fit.drawn.length === 0) return null
   const density = (kgM3: number): number => convertDensity(kgM3, 'kg/m3', system === 'us' ? 'pcf' : 'kN/m3')
   const drawn = curve.fit.drawn.map(([moisture, dry]): PlotPoint => ({ moisture, density: density(dry) }))
   const range = acceptedRange(criteria, curve.pair)

@@ -48,7 +48,8 @@ function nextWords(board: Board | undefined, plan: GroundPlan, units: Units): Re
   for (const group of board?.ready ?? []) for (const cell of group.cells) words.set(cell, `Ready for ${liftWords(group.lift)}`)
   for (const group of board?.notYet ?? []) {
     const { title } = notYetWords(group, plan, units)
-    for (const cell of group.cells) words.set(cell, title)
+    const where = group.reason === 'at-grade' || group.reason === 'awaiting-inspection' ? '' : `, ${liftWords(group.lift)}`
+    for (const cell of group.cells) words.set(cell, `${title}${where}`)
   }
   return words
 }

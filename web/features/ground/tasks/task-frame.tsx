@@ -7,7 +7,7 @@ import { isApiError } from '#web/lib/api-error.ts'
 type TaskFrameProps = {
   title: string
   /** what the server said against it; everything typed is kept */
-  error?: Error | null
+  error: Error | null
   saving: boolean
   /** "Save placement" */
   saveLabel: string
@@ -38,7 +38,7 @@ export function TaskFrame({ title, error, saving, saveLabel, saveKind = 'primary
         </h2>
         <div className="grid gap-4">{children}</div>
       </div>
-      {error != null && (
+      {error !== null && (
         <Banner tone="bad" title={isApiError(error) ? error.message : 'Something went wrong on this page.'} className="mx-[22px] mb-3">
           {isApiError(error) && error.code === 'unreachable' ? 'What you entered is kept here. Save again when it does.' : 'What you entered is kept.'}
         </Banner>
