@@ -1,7 +1,8 @@
-import { applyPatch, decodePatch, type GroundCut, type GroundPatch, type GroundSheet, type GroundTotals } from '#shared/ground-codec.ts'
+import { decodePatch, type GroundCut, type GroundPatch, type GroundSheet, type GroundTotals } from '#shared/ground-codec.ts'
 import { bytesOf } from '#shared/realtime.ts'
 import type { Patches } from '#shared/schemas/ground.ts'
 import type { SitePoint } from '#shared/domain/site-geometry.ts'
+import { advanceLayer, endReading, layerName, newLayer, SURFACE, type GroundLayer } from './ground-layer.ts'
 import type { SiteWatcher } from './live/live-client.ts'
 
 export type GroundStatus = 'live' | 'catching-up' | 'offline'
@@ -44,27 +45,10 @@ export const RETRY_MS = 2_000
 /** While a sheet is being read this many patches are kept; older ones are asked for again. */
 const MOST_HELD = 1_000
 
-export const SURFACE: GroundCut = { kind: 'surface' }
-
-type Layer = {
-  readonly cut: GroundCut
-  sheet: GroundSheet | undefined
-  have: number
-  reading: AbortController | null
-  changedCells: readonly number[]
-  from: SitePoint | null
-  error: unknown
-  shown: number
-  cancelRetry: (() => void) | null
-}
-
-const nameOf = (cut: GroundCut): string => (cut.kind === 'surface' ? 'surface' : String(cut.um))
-const newLayer = (cut: GroundCut): Layer => ({ cut, sheet: undefined, have: 0, reading: null, changedCells: [], from: null, error: null, shown: 0, cancelRetry: null })
-
 /** The live sheets of one site: joins, buffers, reads, applies, and catches up by itself. Knows neither React nor the network. */
 export class GroundStore {
   readonly #deps: GroundDeps
-  readonly #layers = new Map<string, Layer>([['surface', newLayer(SURFACE)]])
+  readonly #layers = new Map<string, GroundLayer>([['surface', newLayer(SURFACE)]])
   readonly #listeners = new Set<() => void>()
   readonly #views = new Map<string, GroundView>()
   #leave: (() => void) | null = null
@@ -99,7 +83,7 @@ export class GroundStore {
     this.#connected = false
     this.#cancelCatchUp?.()
     this.#cancelCatchUp = null
-    for (const layer of this.#layers.values()) this.#endReading(layer)
+    for (const layer of this.#layers.values()) endReading(layer)
   }
 
   subscribe(listener: () => void): () => void {
@@ -109,7 +93,7 @@ export class GroundStore {
 
   /** Keeps the sheet of a cut live until the returned function is called. The surface always is. */
   show(cut: GroundCut): () => void {
-    const name = nameOf(cut)
+    const name = layerName(cut)
     const layer = this.#layers.get(name) ?? newLayer(cut)
     this.#layers.set(name, layer)
     layer.shown += 1
@@ -117,7 +101,7 @@ export class GroundStore {
     return () => {
       layer.shown -= 1
       if (layer.shown > 0 || cut.kind === 'surface') return
-      this.#endReading(layer)
+      endReading(layer)
       this.#layers.delete(name)
       this.#views.delete(name)
     }
@@ -125,7 +109,7 @@ export class GroundStore {
 
   /** The same object until something changes. */
   view(cut: GroundCut): GroundView {
-    const name = nameOf(cut)
+    const name = layerName(cut)
     const known = this.#views.get(name)
     if (known !== undefined) return known
     const made = this.#makeView(this.#layers.get(name) ?? newLayer(cut))
@@ -133,7 +117,7 @@ export class GroundStore {
     return made
   }
 
-  #makeView(layer: Layer): GroundView {
+  #makeView(layer: GroundLayer): GroundView {
     const busy = this.#behind || layer.sheet === undefined || layer.reading !== null
     const status = this.#offlineSince !== null ? 'offline' : busy || !this.#connected ? 'catching-up' : 'live'
     const { sheet, have, changedCells, from, error } = layer
@@ -146,7 +130,7 @@ export class GroundStore {
     for (const listener of this.#listeners) listener()
   }
 
-  #loaded(): Layer[] {
+  #loaded(): GroundLayer[] {
     return [...this.#layers.values()].filter(({ sheet, reading }) => sheet !== undefined && reading === null)
   }
 
@@ -217,34 +201,14 @@ export class GroundStore {
     return gap
   }
 
-  #advance(layer: Layer): boolean {
-    const cells = new Set<number>()
-    let from: SitePoint | null = null
-    let applied = false
-    for (const patch of this.#held) {
-      if (patch.revision <= layer.have || layer.sheet === undefined) continue
-      if (patch.base > layer.have) return this.#applied(layer, applied, cells, from, true)
-      const change = applyPatch(layer.sheet, patch)
-      layer.sheet = change.sheet
-      layer.have = patch.revision
-      change.cells.forEach((cell) => cells.add(cell))
-      from = patch.from ?? from
-      applied = true
-      if (patch.revision > (this.#totals?.revision ?? -1)) this.#totals = { totals: patch.totals, revision: patch.revision }
-    }
-    return this.#applied(layer, applied, cells, from, false)
-  }
-
-  #applied(layer: Layer, applied: boolean, cells: ReadonlySet<number>, from: SitePoint | null, gap: boolean): boolean {
-    if (applied) {
-      layer.changedCells = [...cells]
-      layer.from = from
-      this.#head = Math.max(this.#head, layer.have)
-    }
+  #advance(layer: GroundLayer): boolean {
+    const { last, gap } = advanceLayer(layer, this.#held)
+    this.#head = Math.max(this.#head, layer.have)
+    if (last !== null && last.revision > (this.#totals?.revision ?? -1)) this.#totals = { totals: last.totals, revision: last.revision }
     return gap
   }
 
-  #read(layer: Layer): void {
+  #read(layer: GroundLayer): void {
     if (layer.reading !== null || this.#leave === null) return
     layer.cancelRetry?.()
     layer.cancelRetry = null
@@ -264,13 +228,6 @@ export class GroundStore {
         this.#emit()
       },
     )
-  }
-
-  #endReading(layer: Layer): void {
-    layer.reading?.abort()
-    layer.reading = null
-    layer.cancelRetry?.()
-    layer.cancelRetry = null
   }
 
   #catchUp(wait: number): void {

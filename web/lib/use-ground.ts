@@ -3,7 +3,8 @@ import { decodeSheet, type GroundCut } from '#shared/ground-codec.ts'
 import { patchesSchema } from '#shared/schemas/ground.ts'
 import { apiBytes, apiJson } from './api-client.ts'
 import { isApiError } from './api-error.ts'
-import { GroundStore, SURFACE, type GroundView } from './ground-store.ts'
+import { SURFACE } from './ground-layer.ts'
+import { GroundStore, type GroundView } from './ground-store.ts'
 import { live } from './live/live-client.ts'
 
 /** A store that nobody looks at is kept this long, so that going from page to page reads nothing again. */

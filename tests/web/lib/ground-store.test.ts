@@ -3,7 +3,8 @@ import { groundStateCode } from '#shared/domain/ground-state.ts'
 import { encodePatch, type GroundCut, type GroundPatch, type GroundSheet } from '#shared/ground-codec.ts'
 import type { Patches } from '#shared/schemas/ground.ts'
 import { buildPatch } from '#tests/factories/ground-patch.ts'
-import { GAP_WAIT_MS, GroundStore, RETRY_MS, SURFACE } from '#web/lib/ground-store.ts'
+import { SURFACE } from '#web/lib/ground-layer.ts'
+import { GAP_WAIT_MS, GroundStore, RETRY_MS } from '#web/lib/ground-store.ts'
 import type { SiteWatcher } from '#web/lib/live/live-client.ts'
 
 const CELLS = 4
