@@ -33,8 +33,12 @@ type LotBlocksProps = {
 
 /** A lot as blocks of one test's volume. A long lot narrows its blocks; it never runs out of its column. */
 export function LotBlocks({ label, blocks, blockWidth = 72, maxWidth = 520 }: LotBlocksProps) {
-  const full = Math.min(blockWidth, Math.max(4, (maxWidth - 2) / Math.max(1, blocks.length) - GAP))
-  const width = Math.max(1, blocks.length) * (full + GAP) + 2
+  const shares = blocks.map((block) => Math.min(1, Math.max(0, block.share)))
+  const total = shares.reduce((sum, share) => sum + share, 0)
+  const full = Math.min(blockWidth, Math.max(4, (maxWidth - 2 - GAP * blocks.length) / Math.max(1, total)))
+  const widths = shares.map((share) => Math.max(1.5, full * share))
+  const left = (index: number) => 1 + widths.slice(0, index).reduce((sum, width) => sum + width + GAP, 0)
+  const width = Math.ceil(left(blocks.length)) + 1
   return (
     <svg
       role="img"
@@ -49,9 +53,9 @@ export function LotBlocks({ label, blocks, blockWidth = 72, maxWidth = 520 }: Lo
         return (
           <rect
             key={index}
-            x={1 + index * (full + GAP)}
+            x={left(index)}
             y={2}
-            width={Math.max(1.5, full * Math.min(1, Math.max(0, block.share)))}
+            width={widths[index]}
             height={HEIGHT - 4}
             fill={block.state === 'owed' ? 'var(--raised)' : stateFill(block.state, block.near)}
             stroke={owed ? 'var(--stake)' : 'var(--ink)'}
