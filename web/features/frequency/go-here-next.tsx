@@ -31,11 +31,7 @@ export function GoHereNext({ stakes, doubtful, owed }: { stakes: readonly Stake[
               key={stake.id}
               mark={<StakeFlag label={stake.label} />}
               title={`Cell ${label(stake.cell)}, ${zone(stake.zoneId)?.shortName ?? ''} lift ${stake.lift}`}
-              detail={
-                <>
-                  <span className="num">{`E ${units.number(stake.easting, 1)} N ${units.number(stake.northing, 1)}`}</span>, drawn {units.date(stake.drawnAt)}
-                </>
-              }
+              detail={`E ${units.number(stake.easting, 1)} N ${units.number(stake.northing, 1)}, drawn ${units.date(stake.drawnAt)}`}
               action={records && <RecordLink to={`${paths.newTest(site.id)}?stake=${stake.id}`} of={`the test at ${stake.label}`} />}
             />
           ))}

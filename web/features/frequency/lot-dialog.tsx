@@ -56,7 +56,7 @@ export function LotDialog({ lot, orders, stakes, onClose }: { lot: Lot; orders: 
         ]}
       />
       <p className="mt-3 mb-0">
-        Cells <span className="num">{cellRangeWords(lookup, lot.cells)}</span>. Specification version {lot.specificationVersion}, as it stood when the lot began.
+        Cells {cellRangeWords(lookup, lot.cells)}. Specification version {lot.specificationVersion}, as it stood when the lot began.
       </p>
       {orders.map((order) => (
         <p key={order.id} className="mt-2 mb-0">

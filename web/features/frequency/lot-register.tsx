@@ -1,4 +1,4 @@
-import { memo, useState } from 'react'
+import { memo, useMemo, useState } from 'react'
 import type { Lot } from '#shared/schemas/lot.ts'
 import type { Order } from '#shared/schemas/rework.ts'
 import { LotBlocks } from '#web/components/drawing/lot-blocks.tsx'
@@ -10,6 +10,9 @@ import { blocksOf, stakesToDraw, standingWords, TONE_CLASS } from './lot-words.t
 
 /** So many rows stand at once; the rest follow on request, so that a long job's register stays quick. */
 const AT_ONCE = 100
+/** Room for the longest lot's bar, px, and a full block at most; one scale for all, so that lots compare. */
+const BAR = 440
+const LARGEST_BLOCK = 72
 const STACKED = 'max-md:inline-block max-md:border-0 max-md:px-0 max-md:py-[2px] max-md:mr-4'
 
 type RegisterProps = {
@@ -21,11 +24,11 @@ type RegisterProps = {
   onOpen: (lot: Lot) => void
 }
 
-type LotRowProps = { lot: Lot; orders: readonly Order[]; units: Units; mayDraw: boolean; onOpen: (lot: Lot) => void }
+type LotRowProps = { lot: Lot; blockWidth: number; orders: readonly Order[]; units: Units; mayDraw: boolean; onOpen: (lot: Lot) => void }
 
 const Short = ({ children }: { children: string }) => <span className="mr-1 font-sans text-small text-ink-2 md:hidden">{children}</span>
 
-const LotRow = memo(function LotRow({ lot, orders, units, mayDraw, onOpen }: LotRowProps) {
+const LotRow = memo(function LotRow({ lot, blockWidth, orders, units, mayDraw, onOpen }: LotRowProps) {
   const { text, tone } = standingWords(lot, orders, units)
   return (
     <Row className="max-md:block max-md:border-b max-md:border-rule max-md:px-4 max-md:py-3">
@@ -34,14 +37,14 @@ const LotRow = memo(function LotRow({ lot, orders, units, mayDraw, onOpen }: Lot
           {lot.name}
         </button>
       </RowHead>
-      <Cell className={STACKED}>{lot.materialName}</Cell>
+      <Cell className={`${STACKED} whitespace-nowrap`}>{lot.materialName}</Cell>
       <Cell numeric className={STACKED}>
         <Short>Placed</Short>
         {units.volumeNumber(lot.volumeCm3)}
         <span className="md:hidden"> {units.marks.volume}</span>
       </Cell>
       <Cell className="max-md:block max-md:overflow-hidden max-md:border-0 max-md:px-0 max-md:py-1">
-        <LotBlocks label={lot.name} blocks={blocksOf(lot)} maxWidth={440} />
+        <LotBlocks label={lot.name} blocks={blocksOf(lot)} blockWidth={blockWidth} maxWidth={BAR} />
       </Cell>
       <Cell numeric className={STACKED}>
         <Short>Required</Short>
@@ -65,11 +68,18 @@ const LotRow = memo(function LotRow({ lot, orders, units, mayDraw, onOpen }: Lot
   )
 })
 
+function blockWidthFor(lots: readonly Lot[]): number {
+  const longest = Math.max(1, ...lots.map((lot) => blocksOf(lot).reduce((sum, block) => sum + block.share, 0)))
+  const most = Math.max(1, ...lots.map((lot) => lot.blocks.length))
+  return Math.min(LARGEST_BLOCK, Math.max(4, (BAR - 2 - 2 * most) / longest))
+}
+
 const NONE: readonly Order[] = []
 
 /** Every lot as blocks of one test's volume, with what it needs, has and where it stands. */
 export function LotRegister({ lots, ordersOf, blockHead, units, mayDraw, onOpen }: RegisterProps) {
   const [shown, setShown] = useState(AT_ONCE)
+  const blockWidth = useMemo(() => blockWidthFor(lots), [lots])
   return (
     <>
       <Table caption="Register of lots">
@@ -87,7 +97,7 @@ export function LotRegister({ lots, ordersOf, blockHead, units, mayDraw, onOpen 
         </thead>
         <tbody className="max-md:block">
           {lots.slice(0, shown).map((lot) => (
-            <LotRow key={lot.id} lot={lot} orders={ordersOf.get(lot.id) ?? NONE} units={units} mayDraw={mayDraw} onOpen={onOpen} />
+            <LotRow key={lot.id} lot={lot} blockWidth={blockWidth} orders={ordersOf.get(lot.id) ?? NONE} units={units} mayDraw={mayDraw} onOpen={onOpen} />
           ))}
         </tbody>
       </Table>

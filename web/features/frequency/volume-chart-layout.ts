@@ -24,7 +24,9 @@ function dayTicks(from: number, to: number, width: number): number[] {
   const most = Math.max(2, Math.floor(width / 92))
   const days = Math.max(1, Math.round((to - from) / DAY_MS))
   const step = [1, 2, 7, 14, 28, 56, 112, 224, 364].find((count) => days / count <= most - 1) ?? Math.ceil(days / most)
-  return Array.from({ length: Math.floor(days / step) + 1 }, (_, index) => from + index * step * DAY_MS)
+  const ticks = Array.from({ length: Math.floor(days / step) + 1 }, (_, index) => from + index * step * DAY_MS)
+  const room = ((to - (ticks.at(-1) ?? from)) / (to - from)) * width
+  return room > 60 ? [...ticks, to] : ticks
 }
 
 /** Lines, axis and labels of the chart; the last day's figures stand beside the lines, inside the frame. */

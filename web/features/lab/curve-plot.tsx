@@ -54,9 +54,9 @@ export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlo
       { id: 'axis', text: `Dry density, ${units.marks.density}`, fontSize: TEXT, places: [{ x: frame.left + 6, y: frame.top + TEXT }] },
       ...(peak === null || pair === null
         ? []
-        : [{ id: 'peak', text: `${units.density(pair.maxDryDensity)} at ${units.percent(pair.optimumMoisture)}`, fontSize: TEXT, places: [-14, 26, 44].map((down) => ({ x: x(peak.moisture) - 60, y: y(peak.density) + down })) }]),
+        : [{ id: 'peak', text: `${units.density(pair.maxDryDensity)} at ${units.percent(pair.optimumMoisture)}`, fontSize: TEXT, places: [{ x: x(peak.moisture) - 60, y: y(peak.density) - 14 }, { x: x(peak.moisture) - 132, y: y(peak.density) - 12 }, { x: x(peak.moisture) + 10, y: y(peak.density) + 30 }] }]),
       ...(own === null ? [] : [{ id: 'own', text: 'laboratory’s own', fontSize: TEXT, places: [{ x: x(own.moisture) + 12, y: y(own.density) + 22 }, { x: x(own.moisture) - 110, y: y(own.density) + 34 }] }]),
-      ...(zavAt === undefined ? [] : [{ id: 'zav', text: zavText, fontSize: TEXT, places: [{ x: x(zavAt.moisture) + 12, y: y(zavAt.density) }, { x: frame.right - 150, y: frame.top + 2 * TEXT }] }]),
+      ...(zavAt === undefined ? [] : [{ id: 'zav', text: zavText, fontSize: TEXT, places: [{ x: x(zavAt.moisture) + 12, y: y(zavAt.density) - 4 }, { x: frame.right - 150, y: frame.top + 2 * TEXT }] }]),
     ],
     [...marks.map(box), ...drawn.map(shown).map((point) => ({ ...box(point), y: y(point.density) - 3, height: 6 })), ...zav.map((point) => ({ x: x(point.moisture) - 5, y: y(point.density) - 3, width: 10, height: 6 }))],
     { x: frame.left + 4, y: frame.top, width: frame.right - frame.left - 4, height: frame.bottom - frame.top },

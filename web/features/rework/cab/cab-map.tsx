@@ -24,19 +24,18 @@ export function CabMap({ order, sheet }: { order: Order; sheet: GroundSheet | un
   const { site, lookup, units } = useSite()
   const { where, show, hide } = useWhereIAm()
   const you = where.state === 'on' ? { at: where.at, words: distanceWords(distanceToCells(where.at, order.cells, lookup, site.grid), units) } : null
+  const shown = where.state === 'on' || where.state === 'asking'
   return (
-    <div>
+    <div className="relative border-b border-rule">
       <OrderPlan order={order} sheet={sheet} you={you} />
-      <div className="flex min-h-12 items-center justify-between gap-3 border-y border-rule px-[18px] text-[13px] text-ink-2">
-        <span role="status">
-          {where.state === 'asking' && 'Asking the phone where it is'}
-          {where.state === 'failed' && where.words}
-          {you !== null && `${you.words}, ${accuracyWords(where, units)}`}
-        </span>
-        <button type="button" className="link-ink min-h-12 shrink-0 px-1" onClick={where.state === 'on' || where.state === 'asking' ? hide : show}>
-          {where.state === 'on' || where.state === 'asking' ? 'Hide me' : 'Show where I am'}
-        </button>
-      </div>
+      <button type="button" className="link-ink absolute top-[220px] right-0 min-h-12 bg-film/90 px-[18px] text-[13px]" onClick={shown ? hide : show}>
+        {shown ? 'Hide me' : 'Show where I am'}
+      </button>
+      <p role="status" className="m-0 px-[18px] text-[13px] text-ink-2 not-empty:py-2">
+        {where.state === 'asking' && 'Asking the phone where it is'}
+        {where.state === 'failed' && where.words}
+        {you !== null && `${you.words}, ${accuracyWords(where, units)}`}
+      </p>
     </div>
   )
 }

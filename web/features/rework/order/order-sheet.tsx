@@ -64,7 +64,7 @@ function OrderBody({ order }: { order: Order }) {
         {order.number}. {order.headline}
       </h1>
       <p className="m-0 mt-1 text-ink-2">
-        {zone(order.zoneId)?.name}, lift {order.lift}, cells <span className="num">{cellRangeWords(lookup, order.cells)}</span>. {standingWords(order, units, now())}.
+        {zone(order.zoneId)?.name}, lift {order.lift}, cells {cellRangeWords(lookup, order.cells)}. {standingWords(order, units, now())}.
         {order.assignedTo !== null && ` Assigned to ${order.assignedTo}.`}
       </p>
       <div className="mt-5 grid gap-x-10 gap-y-8 lg:grid-cols-[minmax(0,1fr)_380px]">

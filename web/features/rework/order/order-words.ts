@@ -38,13 +38,16 @@ export interface WorkStep {
   readonly figure: string | null
 }
 
+/** A whole figure without its nought: nobody scarifies to a tenth of an inch. */
+const plainly = (figure: string): string => figure.replace(/\.0(?=\D)/, '')
+
 const turnsSoil = (order: Order): boolean => order.actions.some((action) => action === 'too-dry' || action === 'too-wet' || action === 'too-dense')
 
 /** What to do to the ground, in the order it is done, each with its figure. */
 export function stepsToTake(order: Order, units: Units): WorkStep[] {
   const litres = order.waterLitres ?? 0
   const steps: WorkStep[] = []
-  if (turnsSoil(order)) steps.push({ what: 'Scarify full depth', figure: order.depthUm > 0 ? units.thickness(order.depthUm) : null })
+  if (turnsSoil(order)) steps.push({ what: 'Scarify full depth', figure: order.depthUm > 0 ? plainly(units.thickness(order.depthUm)) : null })
   if (order.actions.includes('too-dry') || (order.actions.includes('too-wet') && litres > 0)) {
     steps.push({ what: 'Add water, mix until even', figure: litres > 0 ? units.water(litres) : null })
   } else if (order.actions.includes('too-wet')) {

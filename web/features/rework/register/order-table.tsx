@@ -13,7 +13,7 @@ const STACKED = 'max-md:block max-md:border-0 max-md:px-4 max-md:py-0 max-md:tex
 
 function OrderRow({ order, now }: { order: Order; now: number }) {
   const { site, lookup, zone, units } = useSite()
-  const label = (text: string) => <span className="mr-1 text-small text-ink-2 md:hidden">{text}</span>
+  const label = (text: string) => <span className="mr-1 font-sans text-small text-ink-2 md:hidden">{text}</span>
   return (
     <Row className="max-md:block max-md:border-b max-md:border-rule max-md:py-3">
       <RowHead className={`${STACKED} md:pl-[26px]`}>
@@ -26,7 +26,7 @@ function OrderRow({ order, now }: { order: Order; now: number }) {
       </RowHead>
       <Cell className={`${STACKED} font-semibold`}>{order.headline}</Cell>
       <Cell className={STACKED}>
-        {zone(order.zoneId)?.name}, lift {order.lift}, <span className="num">{cellRangeWords(lookup, order.cells)}</span>
+        {zone(order.zoneId)?.name}, lift {order.lift}, {cellRangeWords(lookup, order.cells)}
       </Cell>
       <Cell numeric className={STACKED}>
         {label('Volume')}
