@@ -108,7 +108,7 @@ export function buildBoard(overrides: Partial<Board> = {}): Board {
       buildNotYet({ reason: 'at-grade', cells: [11] }),
     ],
     zones: [{ zoneId: ZONE_ID, designCm3: 1e9, placedCm3: 4.1299e8, releasedCm3: 2e8, lots: 3, owed: 2 }],
-    doubtful: [],
+    doubtful: [{ testId: 'test-218', number: 'T-0218', cell: 8, lift: 2, headline: 'Result can’t be right, run it again' }],
     exceptions: [{ kind: 'covered-early', text: '4 cells covered too early', detail: 'Building pad, lift 1', cells: [0], lift: 1, testId: null }],
     verification: { tests: 5, failing: 1 },
     ...overrides,

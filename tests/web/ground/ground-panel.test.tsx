@@ -55,7 +55,7 @@ describe('the superintendent’s panel', () => {
     renderGround(panel, { role: 'superintendent' })
     expect((await screen.findByText('123 cy', { exact: false, selector: 'span.text-figure' })).textContent).toBe('123\u00a0cy')
     // 123.457 cy by loads of 20 cy loose, half of it left
-    expect(await screen.findByText('2 cells, about 12 loads')).toBeDefined()
+    expect((await screen.findByText('2 cells, about 12 loads')).tagName).toBe('SPAN')
     const rows = within(screen.getByRole('list', { name: 'Not yet' })).getAllByRole('listitem')
     expect(rows.map((row) => row.querySelector('b')?.textContent)).toEqual([
       'Waiting for 2 tests',

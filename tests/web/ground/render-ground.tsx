@@ -30,6 +30,7 @@ interface Answers {
 export function answerGround(role: Role, { board = buildBoard(), stakes = [], lots = [], releases = [], orders = [buildOrder()] }: Answers = {}): void {
   keepCsrfToken('token')
   const open = [
+    http.get(GROUND_API, () => HttpResponse.json(buildTwoZoneSite({ role }))),
     http.get(`${GROUND_API}/board`, () => HttpResponse.json(board)),
     http.get(`${GROUND_API}/stakes`, () => HttpResponse.json({ stakes })),
     http.get(`${GROUND_API}/rework`, () => HttpResponse.json({ orders })),

@@ -7,7 +7,7 @@ import { surfaceRow } from './strip-rows.ts'
 
 export type CellAct =
   | { readonly label: string; readonly task: GroundTask }
-  | { readonly label: string; readonly record: { readonly lift: number; readonly purpose?: 'verification' } }
+  | { readonly label: string; readonly record: { readonly lift: number } }
 
 /** What a role may do on a cell as its column stands, the likeliest first. */
 export function cellActs(column: Column, role: Role): CellAct[] {
@@ -20,7 +20,7 @@ export function cellActs(column: Column, role: Role): CellAct[] {
   if (column.nextLift !== null && can(role, 'placement.record')) acts.push({ label: 'Place fill', task: { kind: 'place', lift: column.nextLift } })
   if (state === 'meets-spec' && can(role, 'release.issue')) acts.push({ label: 'Release', task: { kind: 'release', lift } })
   if (state === 'meets-spec' && can(role, 'release.ask')) acts.push({ label: 'Ask for release', task: { kind: 'release', lift } })
-  if (lift > 0 && can(role, 'test.record-qa')) acts.push({ label: 'Record verification test', record: { lift, purpose: 'verification' } })
+  if (lift > 0 && can(role, 'test.record-qa')) acts.push({ label: 'Record verification test', record: { lift } })
   const unresolved = column.rows.find((row) => row.lift === (column.blockedBy?.lift ?? lift))
   if (unresolved !== undefined && unresolved.lift > 0 && !mayBeCovered(unresolved.state) && unresolved.state !== 'not-placed' && can(role, 'disposition.accept-as-is')) {
     acts.push({ label: 'Accept as is', task: { kind: 'accept-as-is', lift: unresolved.lift } })

@@ -4,6 +4,7 @@ import { PanelSection } from '#web/components/ui/sheet.tsx'
 import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 import { countOf, type NotYetGroup } from '#web/features/ground/plan/ground-words.ts'
 import { useSite } from '#web/lib/site-context.tsx'
+import { DoubtfulSection } from './doubtful-section.tsx'
 import { firstStep } from './first-step.ts'
 import { LotsShortSection } from './lots-short-section.tsx'
 import { NotYetSection } from './not-yet-section.tsx'
@@ -26,12 +27,12 @@ export function QcPanel({ board }: { board: Board }) {
   return (
     <>
       <PanelSection title="Tests owed">
-        <Figure value={owed.toLocaleString('en-US')} unit={owed === 1 ? 'test' : 'tests'} of={owed === 0 ? 'every lot has its number' : `in ${countOf(short.length, 'lot')}`} />
+        <Figure value={owed.toLocaleString('en-US')} unit={owed === 1 ? 'test' : 'tests'} of={nothingPlaced ? 'nothing is placed' : owed === 0 ? 'every lot has its number' : `in ${countOf(short.length, 'lot')}`} />
         {nothingPlaced && <p className="m-0 mt-2 text-ink-2">{firstStep(board, plan, role)}</p>}
         <StakesList />
       </PanelSection>
       <LotsShortSection lots={short} />
-      <NotYetSection title="Run again" groups={of(board, 'suspect')} />
+      <DoubtfulSection board={board} />
       <NotYetSection title="Rework and retests" groups={of(board, 'rework', 'awaiting-retest')} />
       {role === 'qc-lead' && <ReleasesSection title="Asked for" releases={asked} />}
       <NotYetSection title="Waiting for release" groups={of(board, 'awaiting-release', 'awaiting-acceptance', 'hold', 'recheck')} />

@@ -3,7 +3,7 @@ import { paths } from '#web/app/paths.ts'
 type NewTest =
   | { readonly stake: string }
   | { readonly follows: string; readonly kind: 'retest' | 'rerun' }
-  | { readonly cell: string; readonly lift: number; readonly purpose?: 'verification' }
+  | { readonly cell: string; readonly lift: number }
 
 /** The recording sheet, started at a stake, at a cell, or after a test. */
 export function newTestLink(siteId: string, start?: NewTest): string {

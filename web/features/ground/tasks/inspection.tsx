@@ -4,6 +4,7 @@ import type { CreateInspection } from '#shared/schemas/placement.ts'
 import { Segmented } from '#web/components/ui/segmented.tsx'
 import { TextArea, TextField } from '#web/components/ui/text-fields.tsx'
 import { useRecordInspection } from '#web/data/inspection/mutations.ts'
+import { useSiteClock } from '#web/data/site/use-site-clock.ts'
 import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 import { countOf } from '#web/features/ground/plan/ground-words.ts'
 import { useSite } from '#web/lib/site-context.tsx'
@@ -25,7 +26,8 @@ export function Inspection() {
   const { plan, chosen, end } = useGroundView()
   const record = useRecordInspection(site.id, { saysOwnErrors: true })
   const [id] = useState(() => crypto.randomUUID())
-  const [happenedAt, setHappenedAt] = useState(() => units.field.instant(Date.now()))
+  const now = useSiteClock(site.id)
+  const [happenedAt, setHappenedAt] = useState(() => units.field.instant(now()))
   const [method, setMethod] = useState<CreateInspection['method']>('proof-roll')
   const [outcome, setOutcome] = useState<CreateInspection['outcome']>('accepted')
   const [remarks, setRemarks] = useState('')

@@ -4,6 +4,7 @@ import { WHOLE_CELL } from '#shared/domain/placement-volume.ts'
 import type { GroundSheet } from '#shared/ground-codec.ts'
 import { materialQueries } from '#web/data/material/queries.ts'
 import { placementQueries } from '#web/data/placement/queries.ts'
+import { useSiteClock } from '#web/data/site/use-site-clock.ts'
 import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
 import { readPlacement, type PlacementDraft } from './placement-draft.ts'
@@ -17,7 +18,8 @@ export function usePlacementDraft(surface: GroundSheet, lift: number | null) {
   const materials = useQuery(materialQueries.list(site.id)).data ?? NONE
   const last = useQuery(placementQueries.list(site.id)).data?.find((placement) => placement.voided === null)
   const [id] = useState(() => crypto.randomUUID())
-  const [openedAt] = useState(() => Date.now())
+  const now = useSiteClock(site.id)
+  const [openedAt] = useState(() => now())
   const [changes, setChanges] = useState<Partial<PlacementDraft>>({})
   const draft: PlacementDraft = {
     lift,

@@ -4,6 +4,7 @@ import { toast } from 'sonner'
 import { TextArea } from '#web/components/ui/text-fields.tsx'
 import { useCreateRelease } from '#web/data/release/mutations.ts'
 import { releaseQueries } from '#web/data/release/queries.ts'
+import { useSiteClock } from '#web/data/site/use-site-clock.ts'
 import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 import { countOf, liftWords } from '#web/features/ground/plan/ground-words.ts'
 import { CellsChoice } from '#web/features/ground/tasks/cells-choice.tsx'
@@ -17,6 +18,7 @@ export function ReleaseCells({ lift }: { lift: number }) {
   const { plan, chosen, end } = useGroundView()
   const issues = can('release.issue')
   const create = useCreateRelease(site.id, { saysOwnErrors: true })
+  const now = useSiteClock(site.id)
   const [id] = useState(() => crypto.randomUUID())
   const [reason, setReason] = useState('')
   const [remarks, setRemarks] = useState('')
@@ -30,7 +32,7 @@ export function ReleaseCells({ lift }: { lift: number }) {
   const handleSave = (): void => {
     if (zoneId === undefined) return
     create.mutate(
-      { id, zoneId, lift, cells: [...chosen], happenedAt: new Date().toISOString(), overrideReason: issues && standing === 'with-reason' ? reason.trim() : null, remarks: remarks.trim() },
+      { id, zoneId, lift, cells: [...chosen], happenedAt: new Date(now()).toISOString(), overrideReason: issues && standing === 'with-reason' ? reason.trim() : null, remarks: remarks.trim() },
       {
         onSuccess: ({ number, cells }) => {
           const what = !issues ? 'asked for' : check.data?.hold === true ? 'released, waits for the owner’s acceptance' : 'released'
