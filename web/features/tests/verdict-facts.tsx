@@ -15,7 +15,7 @@ export function VerdictFacts({ facts, units }: { facts: Facts | null; units: Uni
         { label: 'Dry unit wt', value: facts ? units.densityNumber(facts.dryDensity) : NO_VALUE, unit: units.marks.density, tone: facts ? missed(facts, 'too-loose', 'too-dense') : undefined },
         { label: 'Compaction', value: facts ? units.number(facts.rc, 1) : NO_VALUE, unit: '%', tone: facts ? missed(facts, 'too-loose', 'too-dense') : undefined },
         { label: 'Moisture', value: facts ? units.number(facts.moisture, 1) : NO_VALUE, unit: '%', tone: facts ? missed(facts, 'too-dry', 'too-wet') : undefined },
-        { label: 'Saturation', value: facts?.saturation == null ? NO_VALUE : units.number(facts.saturation, 0), unit: '%', tone: facts ? missed(facts, 'saturation-low', 'saturation-high') : undefined },
+        { label: 'Saturation', value: facts === null || facts.saturation === null ? NO_VALUE : units.number(facts.saturation, 0), unit: '%', tone: facts ? missed(facts, 'saturation-low', 'saturation-high') : undefined },
       ]}
     />
   )

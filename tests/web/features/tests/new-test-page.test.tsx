@@ -136,7 +136,7 @@ describe('recording a test', () => {
     await save()
     const question = await screen.findByRole('alertdialog', { name: 'This elevation lies in lift 9, not 10' })
     await userEvent.click(within(question).getByRole('button', { name: 'Use lift 9' }))
-    await waitFor(() => expect(sent.map(({ lift, liftConfirmed }) => ({ lift, liftConfirmed }))).toEqual([{ lift: 9, liftConfirmed: false }]))
+    await waitFor(() => expect(sent.map(({ lift, liftConfirmed, stakeId }) => ({ lift, liftConfirmed, stakeId }))).toEqual([{ lift: 9, liftConfirmed: false, stakeId: null }]))
   })
 
   it('confirms the lift that was chosen when the person keeps it', async () => {

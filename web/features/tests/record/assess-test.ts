@@ -102,7 +102,8 @@ export function assessTest(form: TestForm, { context, stakes, curves, follows }:
           id: form.id,
           purpose: form.purpose,
           follows,
-          stakeId: place.stake?.id ?? null,
+          // a stake stands for one lift; a test beneath or above it is taken at its point, not at it
+          stakeId: place.stake?.lift === lift ? place.stake.id : null,
           at: { ...place.at },
           lift,
           surfaceUm,

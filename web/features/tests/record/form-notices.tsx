@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react'
 import { Link } from 'react-router-dom'
 import type { CreateTest, TestDetail } from '#shared/schemas/field-test.ts'
 import { paths } from '#web/app/paths.ts'
@@ -22,11 +23,17 @@ export function FormNotices({ saving, restored, onStartAfresh, lotVersion, follo
   const { site } = useSite()
   const { assessment, attempted } = useRecord()
   const { place, problems } = assessment
+  const notices = useRef<HTMLDivElement>(null)
   const otherVersion = place !== null && lotVersion !== null && lotVersion !== place.zone.specification.version
   const stopped = attempted && problems.size > 0 && saving.server === null
+  const failure = saving.server?.sent
+  useEffect(() => {
+    // the button stands far from what it says
+    if (failure !== undefined) notices.current?.scrollIntoView({ block: 'nearest' })
+  }, [failure])
   if (!restored && saving.server === null && !stopped && !otherVersion && followed === null) return null
   return (
-    <div className="mb-[18px] grid gap-2">
+    <div ref={notices} className="mb-[18px] grid scroll-mt-24 gap-2">
       {saving.server !== null && (
         <Banner tone="bad" title="Not saved.">
           {saving.server.message}

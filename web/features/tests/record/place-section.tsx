@@ -10,6 +10,8 @@ import { FieldGrid } from './reading-field.tsx'
 import { useRecord } from './record-context.tsx'
 import type { TestForm } from './test-form.ts'
 
+const PLACE_FIELDS = ['stakeId', 'cell', 'easting', 'northing'] as const
+
 /** Where, when and what for. A place that the address already named is one line until it is to be changed. */
 export function PlaceSection({ placed, unmoved }: { placed: boolean; unmoved: boolean }) {
   const [open, setOpen] = useState(!placed)
@@ -17,7 +19,8 @@ export function PlaceSection({ placed, unmoved }: { placed: boolean; unmoved: bo
   const { assessment, problemAt } = useRecord()
   const { label, site, units } = useSite()
   const { place } = assessment
-  const folded = !open && unmoved && place !== null
+  const refused = PLACE_FIELDS.some((field) => problemAt(field) !== undefined)
+  const folded = !open && unmoved && place !== null && !refused
   return (
     <section>
       <SectionHead aside={place === null ? undefined : `E ${units.number(place.at.easting, 1)}, N ${units.number(place.at.northing, 1)}`}>Place and purpose</SectionHead>

@@ -30,8 +30,9 @@ export function useSaving({ siteId, userId, draft, form, assessment }: SavingInp
     const values = structuredClone(form.getValues())
     setSent(values)
     setQuestion(null)
+    const lift = change.lift ?? input.lift
     record.mutate(
-      { ...input, lift: change.lift ?? input.lift, liftConfirmed: change.liftConfirmed ?? false },
+      { ...input, lift, stakeId: lift === input.lift ? input.stakeId : null, liftConfirmed: change.liftConfirmed ?? false },
       {
         onSuccess: (answer) => {
           keepHabits(userId, values.method, habitsOf(values))
