@@ -1,4 +1,4 @@
-import { screen, within } from '@testing-library/react'
+import { cleanup, screen, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { http, HttpResponse } from 'msw'
 import { beforeEach, describe, expect, it } from 'vitest'
@@ -44,6 +44,17 @@ describe('the sheet of a saved test', () => {
     openTestsPage(PAGE)
     expect((await screen.findByRole('link', { name: 'Record a retest' })).getAttribute('href')).toBe(`/sites/${SITE_ID}/tests/new?follows=${buildDetail().id}&kind=retest`)
     expect(screen.queryByRole('button', { name: 'Void with reason' })).toBeNull()
+  })
+
+  it('offers a re-run of a reading in doubt, not of one that is only flagged for its place', async () => {
+    answer({ outcome: 'pass', headline: 'Meets spec', flags: [{ code: 'off-stake', message: 'A required test that is not at a drawn stake.' }] })
+    openTestsPage(PAGE)
+    await screen.findByText('A required test that is not at a drawn stake.')
+    expect(screen.queryByRole('link', { name: 'Run it again' })).toBeNull()
+    cleanup()
+    answer({ outcome: 'suspect', headline: "Result can't be right, run it again" })
+    openTestsPage(PAGE)
+    expect((await screen.findByRole('link', { name: 'Run it again' })).getAttribute('href')).toMatch(/kind=rerun$/)
   })
 
   it('voids only with a reason, says what follows, and gives the focus back', async () => {

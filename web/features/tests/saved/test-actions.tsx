@@ -1,5 +1,6 @@
 import { useState } from 'react'
 import { Link } from 'react-router-dom'
+import { reduceSheet } from '#shared/domain/reduce-sheet.ts'
 import type { TestDetail } from '#shared/schemas/field-test.ts'
 import type { Verb } from '#shared/policies/policy.ts'
 import { paths } from '#web/app/paths.ts'
@@ -17,12 +18,13 @@ export interface Offered {
 
 /** What this person may do about the test as it stands. */
 export function offeredActions(test: TestDetail, can: (verb: Verb) => boolean): Offered {
-  const { purpose, outcome, treatedAsFail, voided, verdict, flags } = test
+  const { purpose, outcome, treatedAsFail, voided, verdict } = test
   const records = purpose === 'referee' ? can('test.record-qc') || can('test.record-qa') : can(purpose === 'verification' ? 'test.record-qa' : 'test.record-qc')
   const voids = can(purpose === 'verification' || purpose === 'referee' ? 'test.void-qa' : 'test.void-qc')
   const counts = currentOfChain(test.chain)?.id === test.id
   const failed = outcome === 'fail' || treatedAsFail
-  const doubtful = outcome === 'suspect' || verdict.advice.length > 0 || flags.length > 0
+  const reduced = reduceSheet(test.sheet)
+  const doubtful = outcome === 'suspect' || verdict.advice.length > 0 || (reduced.ok && reduced.flags.length > 0)
   return { retest: records && counts && failed, rerun: records && (voided || (counts && doubtful)), voiding: voids && !voided }
 }
 
@@ -39,7 +41,7 @@ export function TestActions({ test }: { test: TestDetail }) {
         </Button>
       )}
       {rerun && (
-        <Link to={follow('rerun')} className={buttonClasses(retest ? 'plain' : 'primary', 'regular', 'pointer-coarse:min-h-12')}>
+        <Link to={follow('rerun')} className={buttonClasses(test.outcome === 'suspect' && !retest ? 'primary' : 'plain', 'regular', 'pointer-coarse:min-h-12')}>
           Run it again
         </Link>
       )}
