@@ -1,4 +1,5 @@
-import { screen, waitFor, within } from '@testing-library/react'
+import { onlineManager } from '@tanstack/react-query'
+import { act, screen, waitFor, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { http, HttpResponse } from 'msw'
 import { useEffect } from 'react'
@@ -134,5 +135,21 @@ describe('placing fill', () => {
     await save()
     expect((await screen.findByRole('alert')).textContent).toMatch(/A1 is already placed at lift 2\. What you entered is kept/)
     expect(screen.getByLabelText('Remarks')).toHaveProperty('value', 'Wet along the east edge')
+  })
+
+  it('waits without a signal, says so, and sends once it is back', async () => {
+    const sent = answerSaves()
+    open([0])
+    await ready()
+    onlineManager.setOnline(false)
+    try {
+      await save()
+      expect((await screen.findByRole('button', { name: 'Waiting for signal' })).getAttribute('aria-busy')).toBe('true')
+      expect(sent).toEqual([])
+    } finally {
+      act(() => onlineManager.setOnline(true))
+    }
+    await screen.findByText('0 chosen, no task')
+    expect(sent).toHaveLength(1)
   })
 })

@@ -6,7 +6,7 @@ import { useGroundView } from '#web/features/ground/plan/ground-view.tsx'
 export function ShowButton({ cells, of, children = 'Show' }: { cells: readonly number[]; of: string; children?: ReactNode }) {
   const { shown, show } = useGroundView()
   return (
-    <button type="button" aria-pressed={shown === cells} aria-label={`Show ${of}`} onClick={() => show(cells)} className="pointer-coarse:-mt-[14px] pointer-coarse:min-h-12 pointer-coarse:min-w-12">
+    <button type="button" aria-pressed={shown === cells} aria-label={`Show ${of}`} onClick={() => show(cells)} className="pointer-coarse:-mt-[14px] pointer-coarse:min-h-12 pointer-coarse:min-w-12 pointer-coarse:text-right">
       {children}
     </button>
   )

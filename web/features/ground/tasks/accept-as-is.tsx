@@ -29,7 +29,7 @@ export function AcceptAsIs({ lift }: { lift: number }) {
     })
   }
   return (
-    <TaskFrame title={`Accept ${liftWords(lift)} as is`} error={accept.error} saving={accept.isPending} saveLabel="Accept as is" canSave={read.success} onSave={handleSave}>
+    <TaskFrame title={`Accept ${liftWords(lift)} as is`} act={accept} saveLabel="Accept as is" canSave={read.success} onSave={handleSave}>
       <CellsChoice />
       <TextField label="Engineer" hint="The licensed engineer who disposes of it" value={engineer} maxLength={80} onChange={(event) => setEngineer(event.target.value)} />
       <TextField label="Document" hint="Letter, memo or report, with its date" value={document} maxLength={200} onChange={(event) => setDocument(event.target.value)} />

@@ -48,8 +48,7 @@ export function Inspection() {
   return (
     <TaskFrame
       title="Inspect the foundation"
-      error={record.error}
-      saving={record.isPending}
+      act={record}
       saveLabel="Save inspection"
       canSave={chosen.length > 0 && outside.length === 0 && instant !== null}
       onSave={handleSave}

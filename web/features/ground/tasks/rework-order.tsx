@@ -41,7 +41,7 @@ export function ReworkOrder({ lift }: { lift: number }) {
     })
   }
   return (
-    <TaskFrame title={`Rework order, ${liftWords(lift)}`} error={create.error} saving={create.isPending} saveLabel="Issue order" canSave={read.success && zones.size === 1} onSave={handleSave}>
+    <TaskFrame title={`Rework order, ${liftWords(lift)}`} act={create} saveLabel="Issue order" canSave={read.success && zones.size === 1} onSave={handleSave}>
       <CellsChoice error={zones.size > 1 ? 'These cells lie in more than one zone. Issue one order a zone.' : undefined} />
       <fieldset className="m-0 border-0 p-0">
         <legend className="mb-1 p-0 text-small font-medium text-ink-2">What is wrong</legend>

@@ -54,17 +54,18 @@ export function PlaceFill({ surface, lift }: { surface: GroundSheet; lift: numbe
     setCovered([])
     record.reset()
   }
+  const { isPending, isPaused } = record
   const error = record.error !== null && coveredCells(record.error) === null ? record.error : null
   return (
     <>
-      <TaskFrame title="Place fill" error={error} saving={record.isPending} saveLabel="Save placement" canSave={input !== null} onSave={handleSave}>
+      <TaskFrame title="Place fill" act={{ error, isPending, isPaused }} saveLabel="Save placement" canSave={input !== null} onSave={handleSave}>
         <PlacementFields {...form} />
       </TaskFrame>
       {covered.length > 0 && (
         <CoveredQuestion
           title={coveredTitle(covered)}
           consequence={coveredConsequence(plan, surface, covered)}
-          saving={record.isPending}
+          saving={isPending}
           onLeaveOut={handleLeaveOut}
           onPlaceAnyway={save}
           onClose={() => setCovered([])}

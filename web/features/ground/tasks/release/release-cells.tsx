@@ -45,8 +45,7 @@ export function ReleaseCells({ lift }: { lift: number }) {
   return (
     <TaskFrame
       title={`${issues ? 'Release' : 'Ask for release of'} ${liftWords(lift)}`}
-      error={create.error}
-      saving={create.isPending}
+      act={create}
       saveLabel={!issues ? 'Ask for release' : standing === 'with-reason' ? 'Release with reason' : 'Release'}
       saveKind={standing === 'with-reason' && issues ? 'danger' : 'primary'}
       canSave={canSave}

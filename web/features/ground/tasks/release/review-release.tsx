@@ -68,8 +68,7 @@ function ReviewForm({ release }: { release: Release }) {
   return (
     <TaskFrame
       title={`Review ${release.number}`}
-      error={issue.error ?? accept.error ?? decline.error}
-      saving={issue.isPending || accept.isPending || decline.isPending}
+      act={declining ? decline : asked ? issue : accept}
       saveLabel={declining ? 'Decline' : yes}
       saveKind={declining || standing === 'with-reason' ? 'danger' : 'primary'}
       canSave={canSave}
