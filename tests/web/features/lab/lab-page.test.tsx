@@ -1,0 +1,120 @@
+import { screen, waitFor, within } from '@testing-library/react'
+import userEvent from '@testing-library/user-event'
+import { http, HttpResponse } from 'msw'
+import { beforeEach, describe, expect, it } from 'vitest'
+import type { Role } from '#shared/policies/role.ts'
+import type { Curve, Material } from '#shared/schemas/lab.ts'
+import { buildCurve, CURVE_ID, MATERIAL, SHARP } from '#tests/factories/curve-view.ts'
+import { openSheet, SHEET_ADDRESS } from '#tests/factories/open-sheet.tsx'
+import { SITE_ID } from '#tests/factories/site-view.ts'
+import { apiStandIn } from '#tests/setup/api-stand-in.ts'
+import { LabPage } from '#web/features/lab/lab-page.tsx'
+import { keepCsrfToken } from '#web/lib/api-client.ts'
+
+function open(role: Role = 'qc-lead', curves: readonly Curve[] = [buildCurve()], materials: readonly Material[] = [MATERIAL]) {
+  return openSheet(LabPage, { site: { role }, pattern: '/sites/:siteId/lab', address: `/sites/${SITE_ID}/lab`, answers: { '/curves': { curves }, '/materials': { materials } } })
+}
+
+function takePosts(path: string, answer: () => Response): unknown[] {
+  const sent: unknown[] = []
+  apiStandIn.use(
+    http.post(`${SHEET_ADDRESS}${path}`, async ({ request }) => {
+      sent.push(await request.json())
+      return answer()
+    }),
+  )
+  return sent
+}
+
+beforeEach(() => keepCsrfToken('token'))
+
+describe('the Lab sheet', () => {
+  it('lists curves and materials, and shows the first curve with its fits', async () => {
+    open()
+    const curves = await screen.findByRole('table', { name: 'Reference curves' })
+    expect(within(curves).getByText('Waits for approval').textContent).toBe('Waits for approval')
+    expect(screen.getByRole('table', { name: 'Borrow materials' }).textContent).toContain('× 0.720')
+    const plot = screen.getByRole('img', { name: /Compaction curve RB-3/ })
+    expect(plot.getAttribute('aria-label')).toBe('Compaction curve RB-3, 5 points, 120.0\u2009pcf at 12.0\u2009%')
+    const fits = within(screen.getByRole('table', { name: 'Fits compared' })).getAllByRole('row').slice(1)
+    expect(fits[0]?.textContent).toBe('Smooth curve120.012.0this pair')
+  })
+
+  it('is read-only for those who neither record nor approve', async () => {
+    open('owner-rep')
+    await screen.findByRole('table', { name: 'Reference curves' })
+    for (const name of ['New curve', 'New material', 'Approve']) expect(screen.queryByRole('button', { name })).toBeNull()
+  })
+
+  it('lets a technician record, and leaves the approval to the lead', async () => {
+    open('technician')
+    await screen.findByRole('button', { name: 'New curve' })
+    expect(screen.queryByRole('button', { name: 'Approve' })).toBeNull()
+  })
+
+  it('says what to record first', async () => {
+    open('technician', [], [])
+    expect((await screen.findByText('No material yet')).textContent).toBe('No material yet')
+    expect(screen.queryByRole('button', { name: 'New curve' })).toBeNull()
+  })
+
+  it('approves the pair the lead chooses, knowingly where the fits differ', async () => {
+    const sent = takePosts(`/curves/${CURVE_ID}/approve`, () => HttpResponse.json(buildCurve({ status: 'approved', pairFrom: 'quadratic' })))
+    open('qc-lead', [buildCurve({ points: SHARP })])
+    await userEvent.click(await screen.findByRole('button', { name: 'Approve' }))
+    const dialog = await screen.findByRole('dialog', { name: 'Approve RB-3' })
+    await userEvent.click(within(dialog).getByRole('radio', { name: /Quadratic/ }))
+    await userEvent.click(within(dialog).getByRole('button', { name: 'Approve this pair' }))
+    expect(within(dialog).getByRole('alert').textContent).toBe('Confirm that you know it.')
+    expect(sent).toEqual([])
+    await userEvent.click(within(dialog).getByRole('checkbox'))
+    await userEvent.click(within(dialog).getByRole('button', { name: 'Approve this pair' }))
+    await waitFor(() => expect(sent).toEqual([{ use: 'quadratic' }]))
+  })
+
+  it('shows the fit while points are typed: too few, then a pair, then a point that cannot be', async () => {
+    open()
+    await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
+    const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
+    const first = within(dialog).getByLabelText('Point 1, moisture, percent')
+    await userEvent.click(first)
+    await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n')
+    expect(within(dialog).getByText('A curve needs at least 4 points; there are 3.').textContent).toContain('there are 3')
+    await userEvent.click(within(dialog).getByLabelText('Point 4, moisture, percent'))
+    await userEvent.paste('14\t117.8\n16\t112.8')
+    expect(within(dialog).getByRole('img', { name: /5 points, 120\.0/ }).getAttribute('aria-label')).toBe('5 points, 120.0\u2009pcf at 12.0\u2009%')
+    const last = within(dialog).getByLabelText('Point 5, dry unit weight, pcf')
+    await userEvent.clear(last)
+    await userEvent.type(last, '130')
+    expect(within(dialog).getByText(/Point 5 lies above the zero-air-voids line/).textContent).toContain('assumed Gs of 2.7')
+  })
+
+  it('keeps what was typed where the server refuses it, and says why', async () => {
+    const message = 'This site already has a curve called RB-3. Nothing was saved; give this one another name.'
+    const sent = takePosts('/curves', () => HttpResponse.json({ code: 'conflict', message }, { status: 409 }))
+    open()
+    await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
+    const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
+    await userEvent.type(within(dialog).getByLabelText('Code'), 'RB-3')
+    await userEvent.click(within(dialog).getByLabelText('Point 1, moisture, percent'))
+    await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n14\t117.8\n16\t112.8')
+    await userEvent.click(within(dialog).getByRole('button', { name: 'Save the curve' }))
+    expect((await within(dialog).findByText(message)).textContent).toBe(message)
+    expect(sent[0]).toMatchObject({ code: 'RB-3', materialId: MATERIAL.id, coarse: null, reported: null })
+    expect((within(dialog).getByLabelText('Code') as HTMLInputElement).value).toBe('RB-3')
+  })
+
+  it('records a material, and names each field that is missing', async () => {
+    const sent = takePosts('/materials', () => HttpResponse.json({ ...MATERIAL, name: 'Pit run' }, { status: 201 }))
+    open('technician')
+    await userEvent.click(await screen.findByRole('button', { name: 'New material' }))
+    await userEvent.click(screen.getByRole('button', { name: 'Save the material' }))
+    expect(screen.getAllByRole('alert').map((alert) => alert.textContent)).toEqual(['Give a name', 'Give a number', 'Give a number'])
+    await userEvent.type(screen.getByLabelText('Name'), 'Pit run')
+    await userEvent.type(screen.getByLabelText('Swell, bank to loose'), '12')
+    await userEvent.type(screen.getByLabelText('Shrink, bank to compacted'), '8')
+    await userEvent.click(screen.getByRole('button', { name: 'Save the material' }))
+    await waitFor(() => expect(sent).toHaveLength(1))
+    expect(sent[0]).toMatchObject({ name: 'Pit run', swellPercent: 12, shrinkPercent: 8 })
+  })
+})
