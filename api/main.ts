@@ -3,7 +3,7 @@ import { pino } from 'pino'
 import { createClock } from '#api/clock.ts'
 import { createDataSource } from '#api/data-source.ts'
 import { readEnv } from '#api/env.ts'
-import { seedDemoWhenEmpty } from '#api/seed-demo-when-empty.ts'
+import { demoAccounts, seedDemoWhenEmpty } from '#api/seed-demo-when-empty.ts'
 import { createServer } from '#api/server.ts'
 
 const STOP_WITHIN_MS = 10_000
@@ -15,7 +15,7 @@ const dataSource = createDataSource(env.DATABASE_URL)
 await dataSource.initialize()
 await dataSource.runMigrations()
 const server = createServer({ env, dataSource, clock, logger })
-if (env.SEED_DEMO === '1') await seedDemoWhenEmpty(server.deps)
+if (env.SEED_DEMO === '1') await seedDemoWhenEmpty(server.deps, (line) => process.stdout.write(`${line}\n`))
 
 let stopping = false
 
@@ -40,4 +40,5 @@ server.http.listen(env.PORT, env.HOST, () => {
   const { port } = server.http.address() as AddressInfo
   const host = env.HOST.includes(':') ? `[${env.HOST}]` : env.HOST
   process.stdout.write(`Hardpan: http://${host}:${port}\n`)
+  if (env.SEED_DEMO === '1') void demoAccounts(server.deps).then((lines) => process.stdout.write(lines))
 })

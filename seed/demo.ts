@@ -75,6 +75,7 @@ async function playDays(foreman: Foreman, days: readonly { at(hour: number): Dat
   for (const [index, day] of days.entries()) {
     for (const failure of failures) await foreman.rework(failure, day)
     failures = []
+    await foreman.catchUp([...pad, ...court], day)
     const until = (shifts: readonly Shift[]) => Math.round((shifts.length * (index + 1)) / days.length)
     while (padDone < until(pad)) failures.push(...(await foreman.shift(at(pad, padDone++), day, FIRST_SHIFT)))
     while (courtDone < until(court)) failures.push(...(await foreman.shift(at(court, courtDone++), day, SECOND_SHIFT)))

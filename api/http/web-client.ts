@@ -19,7 +19,7 @@ export function webClient(root: string): Router {
       next(unavailable('The client is not built yet. Run npm start, or npm run build.'))
       return
     }
-    res.sendFile(page, { headers: { 'Cache-Control': 'no-cache' } })
+    res.sendFile('index.html', { root: folder, headers: { 'Cache-Control': 'no-cache' } })
   })
   return router
 }

@@ -115,6 +115,22 @@ export class Crew {
     return rows.map((row) => row.lot_id)
   }
 
+  /** Lots that owe tests no stake stands for, with their cells. */
+  async lotsShort(): Promise<{ lotId: string; zoneId: string; lift: number; cells: number[] }[]> {
+    const { deps, siteId } = this.options
+    const rows: { id: string; zone_id: string; lift: number; cell: number }[] = await deps.dataSource.query(
+      'SELECT l.`id`, l.`zone_id`, l.`lift`, s.`cell` FROM `lot` l JOIN `cell_lift` s ON s.`site_id` = l.`site_id` AND s.`lot_id` = l.`id` WHERE l.`site_id` = ? AND l.`to_stake` > 0 ORDER BY l.`seq`, s.`cell`',
+      [siteId],
+    )
+    const lots = new Map<string, { lotId: string; zoneId: string; lift: number; cells: number[] }>()
+    for (const row of rows) {
+      const lot = lots.get(row.id) ?? { lotId: row.id, zoneId: row.zone_id, lift: row.lift, cells: [] }
+      lot.cells.push(row.cell)
+      lots.set(row.id, lot)
+    }
+    return [...lots.values()]
+  }
+
   async draw(lotId: string, at: Date): Promise<readonly Stake[]> {
     const { chance } = this.options
     const { stakes } = await this.run('qc-lead', at, { verb: 'stake.draw' }, (write) => drawStakes(write, { id: chance.id(), lotId }, chance.seed()))

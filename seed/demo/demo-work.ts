@@ -147,6 +147,17 @@ export class Foreman {
     await crew.release(plan, this.where(shift).zoneId, shift.lift, shift.panel.cells, day.at(10.8))
   }
 
+  /** Lots of earlier days that still owe tests get their stakes, tests and release. */
+  async catchUp(shifts: readonly Shift[], day: Day): Promise<void> {
+    const { plan, crew } = this.work
+    for (const { lotId, zoneId, lift, cells } of await crew.lotsShort()) {
+      const shift = shifts.find((own) => own.lift === lift && own.panel.cells.some((cell) => cells.includes(cell)))
+      if (!shift) continue
+      for (const [index, stake] of (await crew.draw(lotId, day.at(9.5))).entries()) await this.testAt(shift, stake, day.at(9.8 + 0.2 * index))
+      await crew.release(plan, zoneId, lift, cells, day.at(11))
+    }
+  }
+
   async startOrder(orderId: string, at: Date): Promise<void> {
     await this.work.crew.step(orderId, at, { id: this.work.crew.id(), kind: 'started', happenedAt: at.toISOString() })
   }
