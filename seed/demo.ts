@@ -77,7 +77,7 @@ async function playDays(foreman: Foreman, days: readonly { at(hour: number): Dat
     failures = []
     await foreman.catchUp([...pad, ...court], day)
     const until = (shifts: readonly Shift[]) => Math.round((shifts.length * (index + 1)) / days.length)
-    while (padDone < until(pad)) failures.push(...(await foreman.shift(at(pad, padDone++), day, FIRST_SHIFT)))
+    while (padDone < until(pad)) failures.push(...(await foreman.shift(at(pad, padDone++), day, FIRST_SHIFT, padDone === pad.length ? 'too-dry' : undefined)))
     while (courtDone < until(court)) failures.push(...(await foreman.shift(at(court, courtDone++), day, SECOND_SHIFT)))
   }
   return failures

@@ -95,7 +95,7 @@ export class Foreman {
   }
 
   /** A whole shift on a past day; answers the failures that wait for the next morning. */
-  async shift(shift: Shift, day: Day, hour: number): Promise<Failure[]> {
+  async shift(shift: Shift, day: Day, hour: number, firstFault?: Fault): Promise<Failure[]> {
     const { plan, crew, fillOf } = this.work
     const failures: Failure[] = []
     for (const lotId of await this.place(shift, day.at(hour))) {
@@ -103,7 +103,8 @@ export class Foreman {
       const stakes = await crew.draw(lotId, day.at(hour + 4.5))
       for (const [index, stake] of stakes.entries()) {
         const at = day.at(hour + 5 + 0.35 * index)
-        const saved = await this.testAt(shift, stake, at, FAULTS[this.tests + 1])
+        const fault = index === 0 && firstFault ? firstFault : FAULTS[this.tests + 1]
+        const saved = await this.testAt(shift, stake, at, fault)
         if (saved.orderId) failures.push({ testId: saved.id, orderId: saved.orderId, shift, fill: fillOf(shift) })
         if (saved.outcome === 'suspect') await this.rerun(shift, saved.id, stake, day.at(hour + 5.2 + 0.35 * index))
       }
