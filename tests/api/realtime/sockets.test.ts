@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import { once } from 'node:events'
 import { setTimeout as sleep } from 'node:timers/promises'
-import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
 import { writeToSite } from '#api/features/site-head/write-to-site.ts'
 import { tellHeads } from '#api/realtime/tell-heads.ts'
 import { decodePatch } from '#shared/ground-codec.ts'
@@ -137,10 +137,10 @@ describe('a committed change', () => {
     board.on('ground:patch', ({ patches }) => messages.push(patches.map((body) => decodePatch(bytesOf(body)).revision)))
     board.on('site:changed', ({ id }) => changes.push(id))
     await Promise.all(Array.from({ length: 12 }, (_, i) => write(undefined, `lot-${i % 2}`)))
-    await sleep(250)
+    await vi.waitFor(() => expect(new Set(changes)).toEqual(new Set(['lot-0', 'lot-1'])), { timeout: 5_000 })
+    await vi.waitFor(() => expect(messages.flat()).toHaveLength(12), { timeout: 5_000 })
     expect(messages.flat()).toEqual([1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12])
     expect(messages.length).toBeLessThan(12)
-    expect(new Set(changes)).toEqual(new Set(['lot-0', 'lot-1']))
   })
 
   it('is not heard after site:leave', async () => {
