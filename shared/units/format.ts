@@ -93,11 +93,11 @@ export function formatElevation(micrometres: number, system: UnitSystem): string
     : formatQuantity(fromMicrometres(micrometres, 'm'), 3, 'm')
 }
 
-/** A lift thickness or test depth from µm: inches to 0.1, whole millimetres. */
+/** A lift thickness or test depth from µm: inches to 0.1, whole inches without a decimal; whole millimetres. */
 export function formatThickness(micrometres: number, system: UnitSystem): string {
-  return system === 'us'
-    ? formatQuantity(fromMicrometres(micrometres, 'in'), 1, 'in')
-    : formatQuantity(fromMicrometres(micrometres, 'mm'), 0, 'mm')
+  if (system === 'si') return formatQuantity(fromMicrometres(micrometres, 'mm'), 0, 'mm')
+  const inches = Math.round(fromMicrometres(micrometres, 'in') * 10) / 10
+  return formatQuantity(inches, Number.isInteger(inches) ? 0 : 1, 'in')
 }
 
 /** A plan distance from mm: international feet to 0.1, metres to 0.01. */

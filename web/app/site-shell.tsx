@@ -8,12 +8,15 @@ import { useShellUser } from '#web/app/use-shell-user.ts'
 import { Banner } from '#web/components/ui/banner.tsx'
 import { groundChanged } from '#web/data/board/cache-effects.ts'
 import { useTotals } from '#web/data/board/use-totals.ts'
+import { useSiteMoment } from '#web/data/site/use-site-clock.ts'
 import type { GroundView } from '#web/lib/ground-store.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import type { Units } from '#web/lib/units.ts'
 import { useGround } from '#web/lib/use-ground.ts'
 
-function connectionOf({ status, asOf, offlineSince }: GroundView, units: Units): Connection {
+type Moments = Pick<GroundView, 'status' | 'asOf' | 'offlineSince'>
+
+function connectionOf({ status, asOf, offlineSince }: Moments, units: Units): Connection {
   if (status === 'offline' && offlineSince !== null) return { state: 'offline', since: units.time(offlineSince) }
   return status === 'live' && asOf !== null ? { state: 'live', asOf: units.timeWithSeconds(asOf) } : { state: 'catching-up' }
 }
@@ -33,7 +36,12 @@ export function SiteShell({ children }: { children: ReactNode }) {
   const client = useQueryClient()
   const ground = useGround(site.id)
   const totals = useTotals(site.id)
-  const { revision, offlineSince, asOf } = ground
+  const siteMoment = useSiteMoment(site.id)
+  const { revision, status } = ground
+  // the store counts by this device's clock; people read the site's
+  const onSite = (moment: number | null): number | null => (moment === null ? null : siteMoment(moment))
+  const asOf = onSite(ground.asOf)
+  const offlineSince = onSite(ground.offlineSince)
 
   useEffect(() => {
     // patches that were fetched to catch up come without a notice
@@ -45,7 +53,7 @@ export function SiteShell({ children }: { children: ReactNode }) {
     <Shell
       site={{ name: site.name, subtitle: site.subtitle === '' ? area : `${site.subtitle} · ${area}` }}
       nav={siteNav(site.id, role, totals?.openOrders ?? 0)}
-      connection={connectionOf(ground, units)}
+      connection={connectionOf({ status, asOf, offlineSince }, units)}
       user={{ name, role: ROLE_LABELS[role] }}
       onSignOut={signOut}
       banner={offlineSince !== null && <OfflineBanner since={units.time(offlineSince)} asOf={asOf === null ? null : units.timeWithSeconds(asOf)} />}

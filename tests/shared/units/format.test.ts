@@ -38,7 +38,8 @@ describe('numbers as the sheet writes them', () => {
   test('lengths, areas, holes and water follow the site unit system', () => {
     expect(formatElevation(127_805_688, 'us')).toBe('419.31\u2009ft')
     expect(formatElevation(127_805_688, 'si')).toBe('127.806\u2009m')
-    expect(formatThickness(203_200, 'us')).toBe('8.0\u2009in')
+    expect(formatThickness(203_200, 'us')).toBe('8\u2009in')
+    expect(formatThickness(200_660, 'us')).toBe('7.9\u2009in')
     expect(formatThickness(203_200, 'si')).toBe('203\u2009mm')
     expect(formatDistance(15_240, 'us')).toBe('50.0\u2009ft')
     expect(formatDistance(15_240, 'si')).toBe('15.24\u2009m')

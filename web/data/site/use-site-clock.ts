@@ -9,3 +9,9 @@ export function useSiteClock(siteId: string): () => number {
   const { data, dataUpdatedAt } = useQuery(siteQueries.detail(siteId))
   return () => (data === undefined ? Date.now() : Date.parse(data.now) + Date.now() - dataUpdatedAt)
 }
+
+/** From a moment of this device's clock to the site's, epoch milliseconds. */
+export function useSiteMoment(siteId: string): (moment: number) => number {
+  const { data, dataUpdatedAt } = useQuery(siteQueries.detail(siteId))
+  return (moment) => (data === undefined ? moment : moment + Date.parse(data.now) - dataUpdatedAt)
+}

@@ -6,7 +6,8 @@ import { Button } from '#web/components/ui/button.tsx'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
 import type { Units } from '#web/lib/units.ts'
 import { DrawStakesButton } from './draw-stakes-button.tsx'
-import { blocksOf, stakesToDraw, standingWords, TONE_CLASS } from './lot-words.ts'
+import { stakesToDraw } from '#web/data/lot/stakes-to-draw.ts'
+import { blocksOf, standingWords, TONE_CLASS } from './lot-words.ts'
 
 /** So many rows stand at once; the rest follow on request, so that a long job's register stays quick. */
 const AT_ONCE = 100

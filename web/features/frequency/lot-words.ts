@@ -76,8 +76,3 @@ const BLOCK_STATE: Readonly<Record<Lot['blocks'][number]['state'], GroundState |
 export function blocksOf({ blocks, fCm3 }: Lot): LotBlock[] {
   return blocks.map(({ state, cm3 }) => ({ state: BLOCK_STATE[state], share: fCm3 > 0 ? cm3 / fCm3 : 1 }))
 }
-
-/** Tests of a lot that nobody has gone to, drawn a stake for, or is to run again. */
-export function stakesToDraw({ owed, staked, reruns }: Lot): number {
-  return Math.max(0, owed - staked - reruns)
-}

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { blocksOf, fitsStanding, stakesToDraw, standingWords } from '#web/features/frequency/lot-words.ts'
+import { stakesToDraw } from '#web/data/lot/stakes-to-draw.ts'
+import { blocksOf, fitsStanding, standingWords } from '#web/features/frequency/lot-words.ts'
 import { sumOf, totalsOf } from '#web/features/frequency/lot-totals.ts'
 import { makeUnits } from '#web/lib/units.ts'
 import { buildLot, F_CM3 } from '#tests/factories/lot-view.ts'

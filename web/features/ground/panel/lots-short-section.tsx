@@ -4,6 +4,7 @@ import type { Lot } from '#shared/schemas/lot.ts'
 import { PanelRows } from '#web/components/ui/panel-row.tsx'
 import { PanelSection } from '#web/components/ui/sheet.tsx'
 import { StateSwatch } from '#web/components/ui/state-swatch.tsx'
+import { stakesToDraw } from '#web/data/lot/stakes-to-draw.ts'
 import { useDrawStakes } from '#web/data/stake/mutations.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { GroupRow, ShowButton } from './group-row.tsx'
@@ -41,9 +42,9 @@ export function LotsShortSection({ lots }: { lots: readonly Lot[] }) {
             key={lot.id}
             mark={<StateSwatch state="awaiting-test" />}
             title={lot.name}
-            detail={`owes ${lot.owed} of ${lot.required}, ${units.volume(lot.volumeCm3 - lot.spokenCm3)} not spoken for`}
+            detail={`owes ${lot.owed} of ${lot.required}${stakesToDraw(lot) === 0 ? ', staked' : ''}; ${units.volume(lot.volumeCm3 - lot.spokenCm3)} not spoken for`}
             action={<ShowButton cells={lot.cells} of={lot.name} />}
-            acts={lot.staked >= lot.owed ? <span>staked</span> : can('stake.draw') ? <DrawStakesButton lot={lot} /> : undefined}
+            acts={stakesToDraw(lot) > 0 && can('stake.draw') ? <DrawStakesButton lot={lot} /> : undefined}
           />
         ))}
       </PanelRows>
