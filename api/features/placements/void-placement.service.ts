@@ -5,6 +5,7 @@ import { changeGround } from '#api/features/ground/change-ground.ts'
 import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import { placementNumber } from '#api/features/placements/record-placement.service.ts'
 import type { GroundWriteAnswer } from '#api/features/placements/record-placement.service.ts'
+import { retireIdleStakes } from '#api/features/stakes/retire-stakes.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
 
 /** Voids a wrong placement, with the reason. Its record stays; its fill leaves the lots, and releases on it are revoked. */
@@ -20,5 +21,6 @@ export async function voidPlacement(write: SiteWrite, id: string, reason: string
   write.record('placement.voided', { type: 'placement', id }, { number, reason })
   write.changed('placement', id)
   const change = await changeGround(write, plan, { lots: cells.map((cell) => cell.lotId) })
+  await retireIdleStakes(write, change.lots.values())
   return { id, number, revision: write.revision, cells: change.cells.length, volume: placement.drivingCm3 }
 }

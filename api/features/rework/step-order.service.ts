@@ -12,6 +12,7 @@ import { notInFuture } from '#api/features/ground/times.ts'
 import { authorizeStep } from '#api/features/rework/order-rights.ts'
 import { loadOpenOrder, lotsOf, wrongStep } from '#api/features/rework/rework.service.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
+import { retireIdleStakes } from '#api/features/stakes/retire-stakes.ts'
 import { boundaryRing, cellOutline } from '#api/features/tests/locate-test.ts'
 import { cellSideMm, gridToSite } from '#shared/domain/grid.ts'
 import { passesToClose } from '#shared/domain/order-closing.ts'
@@ -62,7 +63,8 @@ export async function stepOrder(write: SiteWrite, orderId: string, step: OrderSt
   write.changed('order', orderId)
   if (step.kind === 'started' || step.kind === 'ready') {
     const cells = await heldCells(write, orderId)
-    await changeGround(write, plan, { lots: await lotsOf(write, order.lift, cells, true) })
+    const change = await changeGround(write, plan, { lots: await lotsOf(write, order.lift, cells, true) })
+    await retireIdleStakes(write, change.lots.values())
   }
   return { id: orderId, number, revision: write.revision }
 }
@@ -80,11 +82,13 @@ async function reportReady(write: SiteWrite, plan: SitePlan, order: ReworkOrderE
   const volume = rows.reduce((sum, row) => sum + row.volumeCm3, 0)
   const boundary = boundaryRing(plan)
   const points = drawStakes({
-    owed: passesToClose(volume, Math.min(...lots.map((lot) => lot.fCm3))),
+    // ground that has no fill on record yet has no lot: one retest
+    owed: passesToClose(volume, lots.length > 0 ? Math.min(...lots.map((lot) => lot.fCm3)) : 0),
     standing: [],
-    cells: rows.flatMap((row) => {
-      const geometry = plan.cells[row.cell]
-      return geometry ? [{ cell: row.cell, column: geometry.column, row: geometry.row, outline: cellOutline(plan, boundary, row.cell), unspokenCm3: row.volumeCm3 }] : []
+    cells: cells.flatMap((cell) => {
+      const geometry = plan.cells[cell]
+      const unspokenCm3 = rows.find((row) => row.cell === cell)?.volumeCm3 ?? 0
+      return geometry ? [{ cell, column: geometry.column, row: geometry.row, outline: cellOutline(plan, boundary, cell), unspokenCm3 }] : []
     }),
     sideMm: cellSideMm(plan.site.grid),
     setbackMm: plan.zone(order.zoneId).specification.body.stakeSetbackMm,
