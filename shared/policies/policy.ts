@@ -45,7 +45,7 @@ const POLICY = {
   'disposition.accept-as-is': OWNER,
   'weather.record': ['qc-lead', 'technician', 'superintendent'],
   'daily.sign': LEAD,
-  'daily.countersign': SUPERINTENDENT,
+  'daily.countersign': OWNER,
 } as const satisfies Record<string, readonly Role[]>
 
 export type Verb = keyof typeof POLICY

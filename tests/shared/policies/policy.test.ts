@@ -29,7 +29,7 @@ const TABLE: Record<Verb, string> = {
   'release.accept': 'r',
   'disposition.accept-as-is': 'r',
   'daily.sign': 'l',
-  'daily.countersign': 's',
+  'daily.countersign': 'r',
 
   'people.manage-owner-reps': 'r',
   'placement.void': 'l',
