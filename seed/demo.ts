@@ -1,3 +1,4 @@
+import { startOfMinute } from 'date-fns'
 import type { Deps } from '#api/deps.ts'
 import { approveCurve, createCurve } from '#api/features/lab/curves.service.ts'
 import { createMaterial } from '#api/features/lab/materials.service.ts'
@@ -42,7 +43,8 @@ const PIT_RUN = { code: 'PR-1', gs: 2.66, method: 'D698', procedure: 'C', pcf: [
  * Everything is done through the services a click would call; the same clock gives the same figures.
  */
 export async function seedDemo(server: Deps): Promise<void> {
-  const now = server.clock()
+  // to the whole minute, so that a start takes no part in it
+  const now = startOfMinute(server.clock())
   let clock = now
   const deps = { ...server, clock: () => clock, publisher: silentPublisher }
   const chance = createChance('Alder Flats yard')

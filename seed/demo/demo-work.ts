@@ -63,8 +63,8 @@ export class Foreman {
       case 'impossible':
         return { dry: fill.zeroAirVoids(fill.optimum + 3.4) * 1.012, moisture: fill.optimum + 3.4 }
       case undefined: {
-        const moisture = fill.optimum + chance.normal(0.1, 0.6)
-        const dry = (fill.maximum * Math.max(95.1, chance.normal(97.1, 0.9))) / 100
+        const moisture = fill.optimum + chance.normal(0.05, 0.88)
+        const dry = (fill.maximum * Math.max(95.1, chance.normal(97.1, 1))) / 100
         return { dry: Math.min(dry, fill.zeroAirVoids(moisture) * 0.985), moisture }
       }
     }

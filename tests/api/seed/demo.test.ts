@@ -1,0 +1,125 @@
+import { pino } from 'pino'
+import type { DataSource } from 'typeorm'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { createDataSource } from '#api/data-source.ts'
+import { readEnv } from '#api/env.ts'
+import { loadBoard } from '#api/features/ground/board.queries.ts'
+import { findDifferences } from '#api/features/ground/recompute.queries.ts'
+import { loadSitePlan } from '#api/features/ground/site-plan.ts'
+import { loadSheet } from '#api/features/ground/sheet.queries.ts'
+import { listLots } from '#api/features/lots/lots.queries.ts'
+import { verifyChain } from '#api/features/events/verify-chain.ts'
+import { silentPublisher } from '#api/realtime/publish.ts'
+import { seedDemo } from '#seed/demo.ts'
+import { decodeSheet } from '#shared/ground-codec.ts'
+import { groundStateCode } from '#shared/domain/ground-state.ts'
+import type { GroundState } from '#shared/domain/ground-state.ts'
+import { createDatabase, dropDatabases, openTestServer, workerDatabaseName } from '#tests/setup/test-server.ts'
+
+const NOW = new Date('2026-12-01T22:32:00Z')
+
+interface Demo {
+  readonly dataSource: DataSource
+  readonly siteId: string
+}
+
+let adminUrl: string
+let stopServer: () => Promise<void>
+let demo: Demo
+
+async function makeDemo(tag: string): Promise<Demo> {
+  const name = workerDatabaseName(tag)
+  await dropDatabases(adminUrl, name)
+  const dataSource = createDataSource(await createDatabase(adminUrl, name))
+  await dataSource.initialize()
+  await dataSource.runMigrations()
+  const env = readEnv({ DATABASE_URL: 'mysql://a:b@127.0.0.1/c', SESSION_SECRET: 'x'.repeat(32) })
+  await seedDemo({ env, dataSource, clock: () => NOW, publisher: silentPublisher, logger: pino({ level: 'silent' }) })
+  const [site]: { id: string }[] = await dataSource.query("SELECT `id` FROM `site` WHERE `name` = 'Alder Flats yard'")
+  return { dataSource, siteId: site?.id ?? '' }
+}
+
+const boardOf = async ({ dataSource, siteId }: Demo) => loadBoard(dataSource.manager, await loadSitePlan(dataSource.manager, siteId), NOW, 0)
+
+beforeAll(async () => {
+  const server = await openTestServer()
+  adminUrl = server.adminUrl
+  stopServer = server.stop
+  demo = await makeDemo('demo')
+}, 240_000)
+
+afterAll(async () => {
+  await demo.dataSource.destroy()
+  await dropDatabases(adminUrl, workerDatabaseName('demo'))
+  await stopServer()
+})
+
+describe('the demo', () => {
+  it('has the work it promises: zones, lifts, failures, retests, stakes and something placed today', async () => {
+    const { manager } = demo.dataSource
+    const plan = await loadSitePlan(manager, demo.siteId)
+    expect(plan.cells.length).toBeGreaterThan(380)
+    expect(plan.zones).toHaveLength(3)
+    expect(Math.max(...plan.cells.flatMap((cell) => plan.layersOf(cell.cell).map((layer) => layer.lift)))).toBe(11)
+    const counts: { outcome: string; follow_kind: string | null; near: number; n: string }[] = await manager.query(
+      'SELECT `outcome`, `follow_kind`, `near`, COUNT(*) AS `n` FROM `field_test` WHERE `site_id` = ? GROUP BY 1, 2, 3',
+      [demo.siteId],
+    )
+    const count = (keep: (row: (typeof counts)[number]) => boolean) => counts.filter(keep).reduce((sum, row) => sum + Number(row.n), 0)
+    expect(count(() => true)).toBeGreaterThan(200)
+    expect(count((row) => row.outcome === 'fail')).toBeGreaterThanOrEqual(8)
+    expect(count((row) => row.outcome === 'suspect')).toBe(2)
+    expect(count((row) => row.follow_kind === 'retest')).toBeGreaterThanOrEqual(6)
+    expect(count((row) => Boolean(row.near))).toBeGreaterThan(5)
+    const board = await boardOf(demo)
+    expect(board.totals.placedTodayCm3).toBeGreaterThan(0)
+    expect(board.totals.testsOwed).toBeGreaterThan(0)
+    expect(board.totals.openOrders).toBe(2)
+    expect(board.exceptions.map((exception) => exception.kind)).toContain('covered-early')
+  })
+
+  it('adds up: board, lots, lifts, zones and sheet say the same', async () => {
+    const { manager } = demo.dataSource
+    const plan = await loadSitePlan(manager, demo.siteId)
+    const board = await boardOf(demo)
+    const lots = await listLots(manager, demo.siteId, {})
+    const sum = (values: readonly number[]) => values.reduce((total, value) => total + value, 0)
+    expect(sum(lots.map((lot) => lot.volumeCm3))).toBe(board.totals.placedCm3)
+    expect(sum(lots.map((lot) => lot.spokenCm3))).toBe(board.totals.spokenForCm3)
+    expect(sum(lots.map((lot) => lot.required))).toBe(board.totals.testsRequired)
+    expect(sum(lots.map((lot) => lot.owed))).toBe(board.totals.testsOwed)
+    for (const lot of lots) expect(sum(lot.blocks.map((block) => block.cm3))).toBe(lot.volumeCm3)
+    expect(sum(board.zones.map((zone) => zone.placedCm3))).toBe(board.totals.placedCm3)
+    expect(sum(board.zones.map((zone) => zone.designCm3))).toBe(sum(plan.zones.map((zone) => zone.designCm3)))
+    expect(sum(board.ready.map((group) => group.cm3))).toBe(board.totals.readyCm3)
+    expect(sum(board.ready.map((group) => group.cells.length))).toBe(board.totals.readyCells)
+    const placed = (state: GroundState) => state !== 'not-placed'
+    const inLifts = board.lifts.flatMap((lift) => lift.states)
+    expect(sum(inLifts.filter((share) => placed(share.state)).map((share) => share.cm3))).toBe(board.totals.placedCm3)
+    expect(sum(inLifts.filter((share) => share.state === 'rework' || share.state === 'awaiting-retest').map((share) => share.cells))).toBe(board.totals.cellsInRework)
+    const inZones = plan.cells.filter((cell) => plan.zoneOf(cell.cell)).length
+    expect(sum(board.ready.map((group) => group.cells.length)) + sum(board.notYet.map((group) => group.cells.length))).toBe(inZones)
+    const sheet = decodeSheet(await loadSheet(manager, plan, { kind: 'surface' }, 0))
+    const reworkOnTop = [...sheet.state].filter((state) => state === groundStateCode('rework')).length
+    expect(reworkOnTop).toBeLessThanOrEqual(board.totals.cellsInRework)
+    expect(reworkOnTop).toBeGreaterThan(0)
+  })
+
+  it('is proved by a fresh derivation and by its event chain', async () => {
+    const { manager } = demo.dataSource
+    expect(await findDifferences(manager, await loadSitePlan(manager, demo.siteId))).toEqual([])
+    expect(await verifyChain(manager, demo.siteId)).toMatchObject({ ok: true })
+  })
+
+  it('is the same again for the same clock', { timeout: 240_000 }, async () => {
+    const again = await makeDemo('demo_again')
+    const figures = async (one: Demo) => {
+      const { totals, lifts, zones, ready } = await boardOf(one)
+      const tests: unknown[] = await one.dataSource.query('SELECT `number`, `cell`, `lift`, `u`, `v`, `rc`, `outcome`, `sampled_at` FROM `field_test` WHERE `site_id` = ? ORDER BY `seq`', [one.siteId])
+      return { totals, lifts, zones, ready, tests }
+    }
+    const second = await figures(again)
+    await again.dataSource.destroy()
+    expect(second).toEqual(await figures(demo))
+  })
+})
