@@ -36,6 +36,9 @@ export const silentPublisher: Publisher = {
 /** While a site is busy its room hears at most this often; when it is idle, at once. */
 export const COALESCE_MS = 50
 
+/** socket.io's parser takes at most ten binary attachments in a message and hangs up at more. */
+const PATCHES_A_MESSAGE = 8
+
 type SitePublication = Exclude<Publication, MemberPublication>
 
 export function createPublisher(io: BoardServer): Publisher {
@@ -77,12 +80,14 @@ export function createPublisher(io: BoardServer): Publisher {
   }
 }
 
-/** Patches first, in one message; then each changed thing once, with its latest instant. */
+/** Patches first, in as few messages as carry them; then each changed thing once, with its latest instant. */
 function send(io: BoardServer, siteId: string, queue: readonly SitePublication[]): void {
   const room = io.to(siteRoom(siteId))
   const patches = queue.filter((publication) => publication.type === 'patch').sort((a, b) => a.revision - b.revision)
-  const last = patches.at(-1)
-  if (last) room.emit('ground:patch', { type: 'ground:patch', siteId, revision: last.revision, patches: patches.map(({ body }) => body) })
+  for (let from = 0; from < patches.length; from += PATCHES_A_MESSAGE) {
+    const part = patches.slice(from, from + PATCHES_A_MESSAGE)
+    room.emit('ground:patch', { type: 'ground:patch', siteId, revision: part.at(-1)?.revision ?? 0, patches: part.map(({ body }) => body) })
+  }
   const changed = new Map<string, SiteChangedEvent>()
   for (const publication of queue) {
     if (publication.type === 'site:changed') changed.set(`${publication.resource} ${publication.id}`, publication)

@@ -4,7 +4,7 @@ import { setTimeout as sleep } from 'node:timers/promises'
 import { afterAll, beforeAll, beforeEach, describe, expect, it, vi } from 'vitest'
 import { writeToSite } from '#api/features/site-head/write-to-site.ts'
 import { tellHeads } from '#api/realtime/tell-heads.ts'
-import { decodePatch } from '#shared/ground-codec.ts'
+import { decodePatch, encodePatch } from '#shared/ground-codec.ts'
 import { bytesOf } from '#shared/realtime.ts'
 import type { JoinAnswer, ServerEvent, ServerToClientEvents } from '#shared/realtime.ts'
 import { buildPatch } from '#tests/factories/ground-patch.ts'
@@ -141,6 +141,17 @@ describe('a committed change', () => {
     await vi.waitFor(() => expect(messages.flat()).toHaveLength(12), { timeout: 5_000 })
     expect(messages.flat()).toEqual([1, 2, 3, 4, 5, 6, 7, 8, 9, 10, 11, 12])
     expect(messages.length).toBeLessThan(12)
+  })
+
+  it('is told whole when more patches wait than one message can carry', async () => {
+    const board = await joined(lead)
+    const revisions: number[] = []
+    board.on('ground:patch', ({ patches }) => revisions.push(...patches.map((body) => decodePatch(bytesOf(body)).revision)))
+    const patches = Array.from({ length: 40 }, (_, i) => ({ type: 'patch' as const, siteId, revision: i + 1, body: encodePatch({ ...buildPatch({}), revision: i + 1, base: i }) }))
+    app.deps.publisher.publish(patches)
+    await vi.waitFor(() => expect(revisions).toHaveLength(40), { timeout: 5_000 })
+    expect(revisions).toEqual(patches.map((patch) => patch.revision))
+    expect(board.connected).toBe(true)
   })
 
   it('is not heard after site:leave', async () => {

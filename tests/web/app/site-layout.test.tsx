@@ -84,7 +84,7 @@ beforeEach(() => answer())
 describe('the site’s layout', () => {
   it('gives the page the site, its cells and its units, and says in the head which site it is', async () => {
     openPage()
-    expect((await screen.findByRole('heading', { level: 1 })).textContent).toBe('C2, Building pad, 12 cells, 8.0\u2009in')
+    expect((await screen.findByRole('heading', { level: 1 })).textContent).toBe('C2, Building pad, 12 cells, 8\u2009in')
     const head = screen.getByRole('banner')
     expect(within(head).getByText('Alder Flats yard').textContent).toBe('Alder Flats yard')
     expect(within(head).getByText(/14\.6/).textContent).toBe('Phase 2 fill · 14.6\u2009ac')

@@ -119,7 +119,7 @@ describe('the QC lead’s panel', () => {
     expect(places.getByText('Cell B1, Pad lift 2').textContent).toBe('Cell B1, Pad lift 2')
     expect(places.getByRole('link', { name: 'Record the test at N1' }).getAttribute('href')).toMatch(/tests\/new\?stake=stake-1$/)
     const short = within(await screen.findByRole('list', { name: 'Lots short of tests' }))
-    expect(short.getByText(/^owes 2 of 3/).textContent).toMatch(/^owes 2 of 3, 123\u2009cy not spoken for/)
+    expect(short.getByText(/^owes 2 of 3/).textContent).toMatch(/^owes 2 of 3; 123\u2009cy not spoken for/)
     expect(screen.getByRole('link', { name: 'Run it again' }).getAttribute('href')).toMatch(/follows=test-218&kind=rerun$/)
     expect(screen.getByRole('button', { name: 'Release' }).textContent).toBe('Release')
     expect(screen.getByRole('button', { name: 'Record inspection' }).textContent).toBe('Record inspection')

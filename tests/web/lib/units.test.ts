@@ -9,7 +9,7 @@ describe('figures in the site’s units', () => {
   // exact: 1 yd³ = 764,554.857984 cm³, 1 in = 25,400 µm, 1 ft = 304,800 µm, 1 US gallon = 3.785411784 L, 1 acre = 43,560 ft²
   it('writes what is kept', () => {
     expect(us.volume(3410 * 764_554.857984)).toBe(`3,410${thin}cy`)
-    expect(us.thickness(8 * 25_400)).toBe(`8.0${thin}in`)
+    expect(us.thickness(8 * 25_400)).toBe(`8${thin}in`)
     expect(us.elevation(419.25 * 304_800)).toBe(`419.25${thin}ft`)
     expect(us.water(3.785411784 * 5680)).toBe(`5,680${thin}gal`)
     expect(us.siteArea(14.6 * 43_560 * 304.8 ** 2)).toBe(`14.6${thin}ac`)
