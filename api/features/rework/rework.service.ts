@@ -7,6 +7,7 @@ import { conflict, invalid, notFound } from '#api/errors.ts'
 import { cellsInZones } from '#api/features/ground/cells-in-zones.ts'
 import { changeGround } from '#api/features/ground/change-ground.ts'
 import { loadLotTests } from '#api/features/ground/lot-tests.queries.ts'
+import { insertOrder, withdrawOrder } from '#api/features/ground/order-records.ts'
 import { addOrderStep, orderNumber } from '#api/features/ground/order-steps.ts'
 import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
@@ -17,32 +18,12 @@ import type { CreateOrder } from '#shared/schemas/rework.ts'
 
 /** Issues an order by hand, for ground that no failing test marked. Its cells belong to one lot. */
 export async function createOrder(write: SiteWrite, input: CreateOrder): Promise<GroundWriteAnswer> {
-  const { manager, siteId, user, now } = write
+  const { manager, siteId, now } = write
   const plan = await loadSitePlan(manager, siteId)
   const cells = cellsInZones(plan, input.cells, input.zoneId)
   const lotId = await onlyLot(write, plan, input.lift, cells)
-  const seq = write.take('order')
-  await manager.insert(ReworkOrderEntity, {
-    siteId,
-    id: input.id,
-    seq,
-    zoneId: input.zoneId,
-    lift: input.lift,
-    causeTestId: null,
-    state: 'issued',
-    actions: input.actions,
-    headline: input.remarks.slice(0, 200),
-    openedBy: user.id,
-    openedAt: now,
-    assignedTo: null,
-    workingSince: null,
-    reportedAt: null,
-    closedAt: null,
-    retestPoints: [],
-    createdAt: now,
-    updatedAt: now,
-  })
-  await manager.insert(ReworkCellEntity, cells.map((cell) => ({ siteId, orderId: input.id, cell, leftAt: null })))
+  const { id, zoneId, lift, actions, remarks } = input
+  const { seq } = await insertOrder(write, { id, zoneId, lift, causeTestId: null, actions, headline: remarks.slice(0, 200), cells })
   await addOrderStep(write, input.id, { kind: 'issued', happenedAt: now, text: input.remarks, details: {} })
   const number = orderNumber(seq)
   write.record('order.issued', { type: 'order', id: input.id }, { number, lift: input.lift, cells: cells.map((cell) => plan.label(cell)), actions: input.actions, remarks: input.remarks })
@@ -80,20 +61,16 @@ export async function editOrder(write: SiteWrite, id: string, wanted: readonly n
 
 /** The lead takes an order back that no failing test stands behind any more, with a reason. */
 export async function withdrawByLead(write: SiteWrite, id: string, reason: string): Promise<GroundWriteAnswer> {
-  const { manager, siteId, now } = write
+  const { manager, siteId } = write
   const plan = await loadSitePlan(manager, siteId)
   const order = await loadOpenOrder(write, id)
   const cells = await manager.findBy(ReworkCellEntity, { siteId, orderId: id })
   const cause = order.causeTestId ? await currentFailure(write, order) : null
   if (cause) throw conflict(`${cause} still fails, so its order stands. Void the test with a reason, or close the order by retests. Nothing was changed.`)
-  await manager.update(ReworkOrderEntity, { siteId, id }, { state: 'withdrawn', closedAt: now, retestPoints: [], updatedAt: now })
-  await addOrderStep(write, id, { kind: 'withdrawn', happenedAt: now, text: reason, details: {} })
-  const number = orderNumber(order.seq)
-  write.record('order.withdrawn', { type: 'order', id }, { number, reason })
-  write.changed('order', id)
+  await withdrawOrder(write, order, reason)
   const lots = await lotsOf(write, order.lift, cells.map((row) => row.cell))
   const change = await changeGround(write, plan, { lots })
-  return { id, number, revision: write.revision, cells: change.cells.length, volume: 0 }
+  return { id, number: orderNumber(order.seq), revision: write.revision, cells: change.cells.length, volume: 0 }
 }
 
 /** An open order, or 404 / 409 in plain words. */

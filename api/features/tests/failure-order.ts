@@ -4,6 +4,7 @@ import type { FieldTestEntity } from '#api/entities/field-test.entity.ts'
 import { ReworkCellEntity } from '#api/entities/rework-cell.entity.ts'
 import { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
 import { ReworkStepEntity } from '#api/entities/rework-step.entity.ts'
+import { insertOrder } from '#api/features/ground/order-records.ts'
 import { addOrderStep, orderNumber } from '#api/features/ground/order-steps.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
@@ -30,30 +31,17 @@ export async function orderCells({ manager, siteId }: Pick<SiteWrite, 'manager' 
 
 /** Issues a rework order over the cells a failing test marked. */
 export async function issueOrder(write: SiteWrite, plan: SitePlan, failure: Failure, cells: readonly number[]): Promise<ReworkOrderEntity> {
-  const { manager, siteId, user, now } = write
   const { reasons } = failure.verdict
-  const order: ReworkOrderEntity = {
-    siteId,
+  const order = await insertOrder(write, {
     id: randomUUID(),
-    seq: write.take('order'),
     zoneId: failure.zoneId,
     lift: failure.lift,
     causeTestId: failure.id,
-    state: 'issued',
     actions: reworkActions(reasons),
     headline: reworkHeadline(reasons),
-    openedBy: user.id,
-    openedAt: now,
-    assignedTo: null,
-    workingSince: null,
-    reportedAt: null,
-    closedAt: null,
-    retestPoints: [],
-    createdAt: now,
-    updatedAt: now,
-  }
-  await manager.insert(ReworkOrderEntity, order)
-  await manager.insert(ReworkCellEntity, cells.map((cell) => ({ siteId, orderId: order.id, cell, leftAt: null })))
+    cells,
+  })
+  const { now } = write
   await addOrderStep(write, order.id, { kind: 'issued', happenedAt: now, text: `${failure.number}: ${order.headline}`, details: { testId: failure.id } })
   write.record('order.issued', { type: 'order', id: order.id }, {
     number: orderNumber(order.seq),
@@ -104,15 +92,6 @@ export async function continueOrder(write: SiteWrite, plan: SitePlan, order: Rew
     joined: joined.map((cell) => plan.label(cell)),
     headline,
   })
-  write.changed('order', order.id)
-}
-
-/** Takes an order back whose cause no longer stands. */
-export async function withdrawOrder(write: SiteWrite, order: ReworkOrderEntity, reason: string): Promise<void> {
-  const { manager, siteId, now } = write
-  await manager.update(ReworkOrderEntity, { siteId, id: order.id }, { state: 'withdrawn', closedAt: now, retestPoints: [], updatedAt: now })
-  await addOrderStep(write, order.id, { kind: 'withdrawn', happenedAt: now, text: reason, details: {} })
-  write.record('order.withdrawn', { type: 'order', id: order.id }, { number: orderNumber(order.seq), reason })
   write.changed('order', order.id)
 }
 
