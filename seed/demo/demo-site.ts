@@ -143,7 +143,7 @@ export function emptySiteInput(chance: Chance): CreateSite {
   return {
     id: chance.id(),
     name: 'Tamarack bench',
-    subtitle: 'Warehouse pad, nothing placed yet',
+    subtitle: 'Warehouse pad',
     crs: 'EPSG:2285',
     unitSystem: 'us',
     timeZone: 'America/Los_Angeles',
