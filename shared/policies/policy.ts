@@ -26,9 +26,19 @@ const POLICY = {
   'test.void-qc': LEAD,
   'test.void-qa': OWNER,
   'gauge.record': QC,
+  /** bulk density of sand, sand in a cone, volume of a cylinder: what field sheets are reduced with */
+  'calibration.record': QC,
   'material.record': QC,
   'curve.record': QC,
   'curve.approve': LEAD,
+  'curve.supersede': LEAD,
+  /** judge an old test again by another curve or specification, both verdicts kept */
+  'test.rejudge': LEAD,
+  'one-point.record': QC,
+  /** photos and documents; on a verification test only the owner's, on all else only the contractor's */
+  'file.attach': ['qc-lead', 'technician', 'owner-rep'],
+  'file.withdraw': ['qc-lead', 'owner-rep'],
+  'view.save': OFFICE,
   'stake.draw': QC,
   'lot.edit': LEAD,
   'rework.issue': LEAD,

@@ -1,60 +1,7 @@
 import { z } from 'zod'
 import { criterionSchema, roundingSchema } from '#shared/schemas/criterion.ts'
 import { finiteSchema, idSchema, instantSchema, liftSchema, personSchema, reasonSchema, remarksSchema, sitePointSchema } from '#shared/schemas/common.ts'
-
-const massUnit = z.enum(['g', 'kg', 'lb'])
-const densityUnit = z.enum(['kg/m3', 'g/cm3', 'pcf', 'kN/m3', 'lb/yd3'])
-const lengthUnit = z.enum(['mm', 'cm', 'in', 'm', 'ft', 'us-ft'])
-
-/** Raw moisture sheets (shared/domain/field-sheets.ts). Ranges are the reduction's business, which names the field. */
-export const moistureSheetSchema = z.discriminatedUnion('method', [
-  z.object({ method: z.literal('oven'), massUnit, wetAndTin: finiteSchema, dryAndTin: finiteSchema, tin: finiteSchema }),
-  z.object({ method: z.literal('microwave'), massUnit, wetAndTin: finiteSchema, dryAndTin: finiteSchema, tin: finiteSchema }),
-  z.object({ method: z.literal('carbide'), readingPercent: finiteSchema }),
-  z.object({ method: z.literal('gauge'), densityUnit, moistureDensity: finiteSchema, correctionK: finiteSchema }),
-  z.object({ method: z.literal('stated'), percent: finiteSchema }),
-])
-
-export const rawSheetSchema = z.discriminatedUnion('method', [
-  z.object({
-    method: z.literal('sand-cone'),
-    massUnit,
-    apparatusBefore: finiteSchema,
-    apparatusAfter: finiteSchema,
-    coneAndPlate: finiteSchema,
-    densityUnit,
-    sandDensity: finiteSchema,
-    moistSoil: finiteSchema,
-    largestParticle: finiteSchema.optional(),
-    lengthUnit: lengthUnit.optional(),
-    moisture: moistureSheetSchema,
-  }),
-  z.object({
-    method: z.literal('nuclear-gauge'),
-    mode: z.enum(['direct-transmission', 'backscatter']),
-    lengthUnit,
-    rodDepth: finiteSchema,
-    densityUnit,
-    wetDensity: finiteSchema,
-    secondWetDensity: finiteSchema.optional(),
-    standardCounts: z
-      .object({
-        density: finiteSchema,
-        moisture: finiteSchema,
-        referenceDensity: finiteSchema.optional(),
-        referenceMoisture: finiteSchema.optional(),
-      })
-      .optional(),
-    moisture: moistureSheetSchema,
-  }),
-  z.object({
-    method: z.literal('plain'),
-    densityUnit,
-    densityIs: z.enum(['wet', 'dry']),
-    density: finiteSchema,
-    moisture: moistureSheetSchema,
-  }),
-])
+import { fieldMethodSchema, rawSheetSchema } from '#shared/schemas/field-sheet.ts'
 
 export const purposeSchema = z.enum(['required', 'judgement', 'verification', 'referee'])
 export type Purpose = z.infer<typeof purposeSchema>
@@ -136,7 +83,7 @@ export const testSummarySchema = z.object({
   number: z.string(),
   seq: z.number(),
   purpose: purposeSchema,
-  method: z.enum(['sand-cone', 'nuclear-gauge', 'plain']),
+  method: fieldMethodSchema,
   zoneId: z.string(),
   lift: z.number(),
   cell: z.number(),

@@ -11,6 +11,9 @@ export const PATTERNS = {
   rework: '/sites/:siteId/rework',
   reworkOrder: '/sites/:siteId/rework/:orderId',
   lab: '/sites/:siteId/lab',
+  onePoint: '/sites/:siteId/lab/one-point',
+  gauges: '/sites/:siteId/lab/gauges',
+  calibrations: '/sites/:siteId/lab/calibrations',
   parts: '/parts',
 } as const
 
@@ -30,5 +33,8 @@ export const paths = {
   rework: (siteId: string) => `${site(siteId)}/rework`,
   reworkOrder: (siteId: string, orderId: string) => `${site(siteId)}/rework/${encodeURIComponent(orderId)}`,
   lab: (siteId: string) => `${site(siteId)}/lab`,
+  onePoint: (siteId: string) => `${site(siteId)}/lab/one-point`,
+  gauges: (siteId: string) => `${site(siteId)}/lab/gauges`,
+  calibrations: (siteId: string) => `${site(siteId)}/lab/calibrations`,
   parts: () => PATTERNS.parts,
 } as const

@@ -10,7 +10,7 @@ import { notFound } from '#api/errors.ts'
 import { loadChainTests } from '#api/features/tests/test-chain.ts'
 import { loadTestSummary } from '#api/features/tests/tests.queries.ts'
 import { groupBy } from '#shared/domain/group-by.ts'
-import { rawSheetSchema } from '#shared/schemas/field-test.ts'
+import { rawSheetSchema } from '#shared/schemas/field-sheet.ts'
 import type { TestDetail } from '#shared/schemas/field-test.ts'
 
 /** A test with its raw sheet, frozen verdict, chain, marks and what it speaks for now. */

@@ -39,6 +39,13 @@ const TABLE: Record<Verb, string> = {
   'lot.edit': 'l',
   'release.revoke': 'l',
   'weather.record': 'lts',
+  'calibration.record': 'lt',
+  'curve.supersede': 'l',
+  'test.rejudge': 'l',
+  'one-point.record': 'lt',
+  'file.attach': 'ltr',
+  'file.withdraw': 'lr',
+  'view.save': 'ltsr',
 }
 
 const LETTERS = { 'qc-lead': 'l', technician: 't', superintendent: 's', 'owner-rep': 'r', operator: 'o' } as const

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { emptyCurveForm, EMPTY_ROW, pasteInto, readCurveForm, readRows, rowsFromPaste } from '#web/features/lab/curve-form.ts'
+import { emptyCurveForm, EMPTY_ROW, pasteInto, readCurveForm, readRows, rowsFromPaste } from '#web/features/lab/curves/curve-form.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import { makeUnits } from '#web/lib/units.ts'
 import { CURVE_ID, MATERIAL } from '#tests/factories/curve-view.ts'

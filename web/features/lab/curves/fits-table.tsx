@@ -2,7 +2,7 @@ import type { MaximumPair } from '#shared/domain/reference-curve.ts'
 import type { Curve, CurveUse } from '#shared/schemas/lab.ts'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
 import { useUnits } from '#web/lib/site-context.tsx'
-import { FIT_WORDS } from './lab-words.ts'
+import { FIT_WORDS } from '#web/features/lab/lab-words.ts'
 
 const USES: readonly CurveUse[] = ['spline', 'quadratic', 'cubic', 'reported']
 

@@ -9,7 +9,7 @@ import { useRecordCurve } from '#web/data/curve/mutations.ts'
 import { useSiteClock } from '#web/data/site/use-site-clock.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { emptyCurveForm, readCurveForm, readRows, type CurveForm } from './curve-form.ts'
-import { issuesOf, LETTERS, METHODS, sieveWords } from './lab-words.ts'
+import { issuesOf, LETTERS, METHODS, sieveWords } from '#web/features/lab/lab-words.ts'
 import { LiveFit } from './live-fit.tsx'
 import { PointsTable } from './points-table.tsx'
 

@@ -7,7 +7,7 @@ import { Button } from '#web/components/ui/button.tsx'
 import { Dialog, DialogClose } from '#web/components/ui/dialog.tsx'
 import { useApproveCurve } from '#web/data/curve/mutations.ts'
 import { useSite } from '#web/lib/site-context.tsx'
-import { FIT_WORDS, issuesOf, pairWords } from './lab-words.ts'
+import { FIT_WORDS, issuesOf, pairWords } from '#web/features/lab/lab-words.ts'
 
 /** True where the fits lie so far apart that the pair must be confirmed knowingly. */
 function mustKnow(curve: Curve, use: CurveUse, waterDensity: number): boolean {

@@ -8,11 +8,11 @@ import { buildCurve, CURVE_ID, MATERIAL, SHARP } from '#tests/factories/curve-vi
 import { openSheet, SHEET_ADDRESS } from '#tests/factories/open-sheet.tsx'
 import { SITE_ID } from '#tests/factories/site-view.ts'
 import { apiStandIn } from '#tests/setup/api-stand-in.ts'
-import { LabPage } from '#web/features/lab/lab-page.tsx'
+import { CurvesPage } from '#web/features/lab/curves/curves-page.tsx'
 import { keepCsrfToken } from '#web/lib/api-client.ts'
 
 function open(role: Role = 'qc-lead', curves: readonly Curve[] = [buildCurve()], materials: readonly Material[] = [MATERIAL]) {
-  return openSheet(LabPage, { site: { role }, pattern: '/sites/:siteId/lab', address: `/sites/${SITE_ID}/lab`, answers: { '/curves': { curves }, '/materials': { materials } } })
+  return openSheet(CurvesPage, { site: { role }, pattern: '/sites/:siteId/lab', address: `/sites/${SITE_ID}/lab`, answers: { '/curves': { curves }, '/materials': { materials } } })
 }
 
 function takePosts(path: string, answer: () => Response): unknown[] {

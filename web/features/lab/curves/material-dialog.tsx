@@ -6,7 +6,7 @@ import { Dialog, DialogClose } from '#web/components/ui/dialog.tsx'
 import { NumberField, TextField } from '#web/components/ui/text-fields.tsx'
 import { useRecordMaterial } from '#web/data/material/mutations.ts'
 import { useSite } from '#web/lib/site-context.tsx'
-import { issuesOf } from './lab-words.ts'
+import { issuesOf } from '#web/features/lab/lab-words.ts'
 
 type MaterialForm = { readonly name: string; readonly source: string; readonly classification: string; readonly swell: string; readonly shrink: string }
 

@@ -6,7 +6,7 @@ import { useSite } from '#web/lib/site-context.tsx'
 import { ApproveDialog } from './approve-dialog.tsx'
 import { CurvePlot } from './curve-plot.tsx'
 import { FitsTable, FitWarnings } from './fits-table.tsx'
-import { pairWords, sieveWords, STATUS_WORDS } from './lab-words.ts'
+import { pairWords, sieveWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 
 /** One reference curve: its points, the fit, the pair in force and how it came to be. */
 export function CurveSheet({ curve }: { curve: Curve }) {

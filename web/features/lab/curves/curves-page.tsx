@@ -2,7 +2,6 @@ import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
 import { useSearchParams } from 'react-router-dom'
 import type { Curve, Material } from '#shared/schemas/lab.ts'
-import { Banner } from '#web/components/ui/banner.tsx'
 import { Button } from '#web/components/ui/button.tsx'
 import { EmptyState } from '#web/components/ui/empty-state.tsx'
 import { SectionHead } from '#web/components/ui/section-head.tsx'
@@ -10,11 +9,11 @@ import { Skeleton } from '#web/components/ui/skeleton.tsx'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
 import { curveQueries } from '#web/data/curve/queries.ts'
 import { materialQueries } from '#web/data/material/queries.ts'
-import { isApiError } from '#web/lib/api-error.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { CurveDialog } from './curve-dialog.tsx'
 import { CurveSheet } from './curve-sheet.tsx'
-import { pairWords, STATUS_WORDS } from './lab-words.ts'
+import { LabFrame } from '#web/features/lab/lab-frame.tsx'
+import { pairWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 import { MaterialDialog } from './material-dialog.tsx'
 
 function MaterialsTable({ materials }: { materials: readonly Material[] }) {
@@ -84,7 +83,7 @@ function CurvesTable({ curves, chosen, onChoose }: { curves: readonly Curve[]; c
 }
 
 /** Borrow materials and their reference curves: what every field test is judged against. */
-export function LabPage() {
+export function CurvesPage() {
   const { site, can } = useSite()
   const [search, setSearch] = useSearchParams()
   const [asked, setAsked] = useState<'material' | 'curve' | null>(null)
@@ -95,32 +94,21 @@ export function LabPage() {
   const waiting = curves.data?.filter((curve) => curve.status === 'draft').length ?? 0
   const chosen = curves.data?.find((curve) => curve.id === search.get('curve')) ?? curves.data?.[0]
   const ready = materials.data !== undefined && curves.data !== undefined
-  return (
-    <div className="min-h-0 flex-1 overflow-y-auto bg-raised">
-      {failed !== null && (
-        <Banner tone="bad" title={isApiError(failed) ? failed.message : 'The laboratory’s sheets could not be read.'} action={<button type="button" onClick={() => void Promise.all([materials.refetch(), curves.refetch()])}>Try again</button>}>
-          Nothing is lost.
-        </Banner>
+  const summary = ready
+    ? `${materials.data.length} ${materials.data.length === 1 ? 'material' : 'materials'}, ${curves.data.length} ${curves.data.length === 1 ? 'curve' : 'curves'}${waiting > 0 ? `, ${waiting} waiting for the lead’s approval` : ''}`
+    : undefined
+  const actions = (
+    <>
+      {can('material.record') && <Button onClick={() => setAsked('material')}>New material</Button>}
+      {can('curve.record') && ready && materials.data.length > 0 && (
+        <Button kind="primary" onClick={() => setAsked('curve')}>
+          New curve
+        </Button>
       )}
-      <div className="flex flex-wrap items-end justify-between gap-x-6 gap-y-3 px-4 pt-[22px] pb-4 sm:px-[26px]">
-        <div>
-          <h1 className="m-0 text-[19px] leading-[1.2] font-bold">Lab</h1>
-          {ready && (
-            <p className="m-0 mt-1 text-ink-2">
-              {materials.data.length} {materials.data.length === 1 ? 'material' : 'materials'}, {curves.data.length} {curves.data.length === 1 ? 'curve' : 'curves'}
-              {waiting > 0 && `, ${waiting} waiting for the lead’s approval`}
-            </p>
-          )}
-        </div>
-        <div className="flex flex-wrap gap-2">
-          {can('material.record') && <Button onClick={() => setAsked('material')}>New material</Button>}
-          {can('curve.record') && ready && materials.data.length > 0 && (
-            <Button kind="primary" onClick={() => setAsked('curve')}>
-              New curve
-            </Button>
-          )}
-        </div>
-      </div>
+    </>
+  )
+  return (
+    <LabFrame summary={summary} actions={actions} failed={failed} onRetry={() => void Promise.all([materials.refetch(), curves.refetch()])}>
       {!ready ? (
         failed === null && (
           <div className="px-4 sm:px-[26px]">
@@ -163,6 +151,6 @@ export function LabPage() {
           }}
         />
       )}
-    </div>
+    </LabFrame>
   )
 }

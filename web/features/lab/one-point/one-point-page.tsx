@@ -1,0 +1,5 @@
+import { LabFrame } from '#web/features/lab/lab-frame.tsx'
+
+export function OnePointPage() {
+  return <LabFrame>{null}</LabFrame>
+}
