@@ -1,4 +1,5 @@
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
+import type { WallOffset } from '#shared/domain/wall-offset.ts'
 import type { DensityUnit } from '#shared/units/density.ts'
 import type { LengthUnit } from '#shared/units/length.ts'
 import type { MassUnit } from '#shared/units/mass.ts'
@@ -21,6 +22,10 @@ export type GaugeMoistureSheet = {
   readonly densityUnit: DensityUnit
   readonly moistureDensity: number
   readonly correctionK: number
+  /** Beside a wall or in a trench: what was done about the water in the face. */
+  readonly wall?: WallOffset | undefined
+  /** The gauge of the register, where the density was not read by it (then the sheet names it). */
+  readonly gaugeId?: string | undefined
 }
 
 /** Moisture as a report states it, percent of dry mass. */
@@ -57,6 +62,8 @@ export type StandardCounts = {
 /** Nuclear gauge (D6938). A second reading, the gauge turned 90° or 180°, is averaged with the first. */
 export type NuclearGaugeSheet = {
   readonly method: 'nuclear-gauge'
+  /** The gauge of the register; its standard counts of the day stand there. */
+  readonly gaugeId?: string | undefined
   readonly mode: 'direct-transmission' | 'backscatter'
   readonly lengthUnit: LengthUnit
   /** Depth of the source rod, in `lengthUnit`; 0 in backscatter. */
@@ -64,6 +71,7 @@ export type NuclearGaugeSheet = {
   readonly densityUnit: DensityUnit
   readonly wetDensity: number
   readonly secondWetDensity?: number | undefined
+  /** Typed here only where the gauge is not in the register. */
   readonly standardCounts?: StandardCounts | undefined
   readonly moisture: MoistureSheet
 }

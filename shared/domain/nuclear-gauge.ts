@@ -1,12 +1,10 @@
 import type { NuclearGaugeSheet, StandardCounts } from '#shared/domain/field-sheets.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
 import { settle } from '#shared/domain/rounding.ts'
+import { DRIFT_LIMITS } from '#shared/domain/standard-count.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import { convertLength } from '#shared/units/length.ts'
 
-/** Allowed drift of the day's standard counts from their reference, percent. */
-const DENSITY_DRIFT = 1
-const MOISTURE_DRIFT = 2
 /** Range that gauges are calibrated for, pcf, as manuals quote it; rods reach 300 mm. */
 const CALIBRATED_PCF = { low: 70, high: 170 } as const
 const LONGEST_ROD_MM = 305
@@ -50,6 +48,9 @@ export function reduceNuclearGauge(
   if (convertLength(sheet.rodDepth, sheet.lengthUnit, 'mm') > LONGEST_ROD_MM) {
     flags.push({ code: 'rod-depth', message: 'Rods reach 300\u2009mm (12\u2009in). Check the depth.' })
   }
+  if (sheet.mode === 'backscatter' && sheet.moisture.method === 'gauge' && sheet.moisture.wall !== undefined) {
+    flags.push({ code: 'wall-backscatter', message: 'Beside a wall a backscatter density is affected too; only direct transmission is not.' })
+  }
   return { ok: true, wetDensity, flags }
 }
 
@@ -61,8 +62,8 @@ export function reduceNuclearGauge(
  */
 export function standardCountFlags(counts: StandardCounts): Reason[] {
   const rows = [
-    ['density', counts.density, counts.referenceDensity, DENSITY_DRIFT],
-    ['moisture', counts.moisture, counts.referenceMoisture, MOISTURE_DRIFT],
+    ['density', counts.density, counts.referenceDensity, DRIFT_LIMITS.density],
+    ['moisture', counts.moisture, counts.referenceMoisture, DRIFT_LIMITS.moisture],
   ] as const
   return rows.flatMap(([name, count, reference, allowed]) => {
     if (reference === undefined) return []

@@ -5,6 +5,7 @@ import { reduceNuclearGauge } from '#shared/domain/nuclear-gauge.ts'
 import { dryDensityOf, wetDensityOf } from '#shared/domain/phase-relations.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
 import { reduceSandCone } from '#shared/domain/sand-cone.ts'
+import { moistureBesideWall, wallOffsetFlags } from '#shared/domain/wall-offset.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import type { DensityUnit } from '#shared/units/density.ts'
 import { formatQuantity } from '#shared/units/format.ts'
@@ -81,9 +82,9 @@ function plainDensityProblem(sheet: PlainSheet): FieldProblem | null {
 function reduceDryEntry(sheet: PlainSheet): SheetReduction {
   const problem = plainDensityProblem(sheet)
   const dryDensity = problem ? null : convertDensity(sheet.density, sheet.densityUnit, 'kg/m3')
-  // Dry density plus the water read beside it is the wet density the gauge saw.
-  const water =
-    sheet.moisture.method === 'gauge' ? convertDensity(sheet.moisture.moistureDensity, sheet.moisture.densityUnit, 'kg/m3') : 0
+  // Dry density plus the soil's own water is the wet density of the soil.
+  const { moisture: own } = sheet
+  const water = own.method === 'gauge' ? convertDensity(moistureBesideWall(own.moistureDensity, own.wall), own.densityUnit, 'kg/m3') : 0
   const moisture = reduceMoisture(sheet.moisture, dryDensity === null ? null : dryDensity + water)
   if (dryDensity === null || !moisture.ok) {
     return { ok: false, problems: [...(problem ? [problem] : []), ...(moisture.ok ? [] : moisture.problems)] }
@@ -142,15 +143,18 @@ function reduceMoisture(sheet: MoistureSheet, wetDensity: number | null): Moistu
       if (!Number.isFinite(sheet.moistureDensity)) return refuse('moistureDensity', 'missing', 'Enter the moisture density of the gauge.')
       if (sheet.moistureDensity < 0) return refuse('moistureDensity', 'negative', 'The moisture density cannot be below zero.')
       if (!Number.isFinite(sheet.correctionK)) return refuse('correctionK', 'missing', 'Enter the moisture correction, 0 for none.')
+      if (sheet.wall && !Number.isFinite(sheet.wall.offset)) return refuse('wall.offset', 'missing', 'Enter the offset for the wall, with its sign.')
+      const besideWall = moistureBesideWall(sheet.moistureDensity, sheet.wall)
+      if (besideWall < 0) return refuse('wall.offset', 'moisture-range', 'The offset takes the moisture density below zero. Check its sign and its unit.')
       if (wetDensity === null) return { ok: false, problems: [] }
-      const water = convertDensity(sheet.moistureDensity, sheet.densityUnit, 'kg/m3')
+      const water = convertDensity(besideWall, sheet.densityUnit, 'kg/m3')
       if (water >= wetDensity) {
         return refuse('moistureDensity', 'water-heavier', 'The water weighs as much as the wet soil. Check both readings and their units.')
       }
       const percent = moistureFromGauge(wetDensity, water, sheet.correctionK)
       if (percent < 0) return refuse('correctionK', 'moisture-range', 'The correction takes moisture below zero. Check its sign.')
       if (percent > MOST_MOISTURE) return refuse('moistureDensity', 'moisture-range', `Moisture comes to more than ${MOST_MOISTURE} %. Check both readings.`)
-      return { ok: true, percent, flags: [] }
+      return { ok: true, percent, flags: sheet.wall ? wallOffsetFlags(sheet.wall) : [] }
     }
   }
 }
