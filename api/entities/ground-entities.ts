@@ -5,6 +5,10 @@ import { CellLiftEntity } from '#api/entities/cell-lift.entity.ts'
 import { DispositionEntity } from '#api/entities/disposition.entity.ts'
 import { DispositionCellEntity } from '#api/entities/disposition-cell.entity.ts'
 import { FieldTestEntity } from '#api/entities/field-test.entity.ts'
+import { GaugeEntity } from '#api/entities/gauge.entity.ts'
+import { GaugeCalibrationEntity } from '#api/entities/gauge-calibration.entity.ts'
+import { GaugeCorrectionEntity } from '#api/entities/gauge-correction.entity.ts'
+import { GaugeOutageEntity } from '#api/entities/gauge-outage.entity.ts'
 import { InspectionEntity } from '#api/entities/inspection.entity.ts'
 import { InspectionCellEntity } from '#api/entities/inspection-cell.entity.ts'
 import { LiftTotalEntity } from '#api/entities/lift-total.entity.ts'
@@ -19,7 +23,9 @@ import { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
 import { ReworkStepEntity } from '#api/entities/rework-step.entity.ts'
 import { SpecificationEntity } from '#api/entities/specification.entity.ts'
 import { StakeEntity } from '#api/entities/stake.entity.ts'
+import { StandardCountEntity } from '#api/entities/standard-count.entity.ts'
 import { TestMarkEntity } from '#api/entities/test-mark.entity.ts'
+import { TestVerdictEntity } from '#api/entities/test-verdict.entity.ts'
 import { ZoneEntity } from '#api/entities/zone.entity.ts'
 
 /** The tables of the earthwork: what was set up, the facts, and what is derived from them. */
@@ -36,6 +42,7 @@ export const groundEntities = [
   PlacementCellEntity,
   FieldTestEntity,
   TestMarkEntity,
+  TestVerdictEntity,
   AllocationEntity,
   StakeEntity,
   ReworkOrderEntity,
@@ -47,4 +54,9 @@ export const groundEntities = [
   InspectionCellEntity,
   DispositionEntity,
   DispositionCellEntity,
+  GaugeEntity,
+  GaugeCalibrationEntity,
+  GaugeOutageEntity,
+  StandardCountEntity,
+  GaugeCorrectionEntity,
 ]

@@ -5,6 +5,7 @@ import type { CreateCurve, Curve } from '#shared/schemas/lab.ts'
 
 @Unique('uq_reference_curve_code', ['siteId', 'code'])
 @ForeignKey('BorrowMaterialEntity', ['siteId', 'materialId'], ['siteId', 'id'], { name: 'fk_reference_curve_material' })
+@ForeignKey('ReferenceCurveEntity', ['siteId', 'successorId'], ['siteId', 'id'], { name: 'fk_reference_curve_successor' })
 @Entity('reference_curve')
 export class ReferenceCurveEntity extends SiteOwned {
   @TextColumn('code', 80)
@@ -57,4 +58,17 @@ export class ReferenceCurveEntity extends SiteOwned {
 
   @InstantColumn('approved_at', { nullable: true })
   approvedAt!: Date | null
+
+  /** the curve that took its place */
+  @IdColumn('successor_id', { nullable: true })
+  successorId!: string | null
+
+  @InstantColumn('superseded_at', { nullable: true })
+  supersededAt!: Date | null
+
+  @IdColumn('superseded_by', { nullable: true })
+  supersededBy!: string | null
+
+  @TextColumn('supersede_reason', 2000, { nullable: true })
+  supersedeReason!: string | null
 }

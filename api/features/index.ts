@@ -8,6 +8,7 @@ import { labRoutes } from '#api/features/lab/lab.routes.ts'
 import { lotRoutes } from '#api/features/lots/lots.routes.ts'
 import { memberRoutes } from '#api/features/members/members.routes.ts'
 import { placementRoutes } from '#api/features/placements/placements.routes.ts'
+import { rejudgeRoutes } from '#api/features/rejudge/rejudge.routes.ts'
 import { releaseRoutes } from '#api/features/releases/releases.routes.ts'
 import { reworkRoutes } from '#api/features/rework/rework.routes.ts'
 import { siteRoutes, sitesRoutes } from '#api/features/sites/sites.routes.ts'
@@ -27,6 +28,7 @@ export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   placementRoutes,
   inspectionRoutes,
   testRoutes,
+  rejudgeRoutes,
   stakeRoutes,
   lotRoutes,
   reworkRoutes,

@@ -34,6 +34,8 @@ const POLICY = {
   'curve.supersede': LEAD,
   /** judge an old test again by another curve or specification, both verdicts kept */
   'test.rejudge': LEAD,
+  /** the same of a verification or referee test */
+  'test.rejudge-qa': OWNER,
   'one-point.record': QC,
   /** photos and documents; on a verification test only the owner's, on all else only the contractor's */
   'file.attach': ['qc-lead', 'technician', 'owner-rep'],

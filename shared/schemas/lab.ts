@@ -79,6 +79,8 @@ export const curveSchema = createCurveSchema.extend({
   approvedAt: instantSchema.nullable(),
   recordedBy: z.string(),
   testsJudged: z.number(),
+  /** what took its place, when, who said so and why; null while it is in force */
+  superseded: z.object({ by: z.object({ id: z.string(), code: z.string() }), at: instantSchema, who: z.string(), reason: z.string() }).nullable(),
 })
 export const curveListSchema = z.object({ curves: z.array(curveSchema) })
 export type Curve = z.infer<typeof curveSchema>

@@ -1,13 +1,17 @@
 import { randomUUID } from 'node:crypto'
 import fc from 'fast-check'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { ReferenceCurveEntity } from '#api/entities/reference-curve.entity.ts'
 import { AppError } from '#api/errors.ts'
 import { findDifferences } from '#api/features/ground/recompute.queries.ts'
 import { loadSheet } from '#api/features/ground/sheet.queries.ts'
 import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import { recordInspection } from '#api/features/inspections/record-inspection.service.ts'
+import { approveCurve, createCurve } from '#api/features/lab/curves.service.ts'
 import { recordPlacement } from '#api/features/placements/record-placement.service.ts'
 import { voidPlacement } from '#api/features/placements/void-placement.service.ts'
+import { rejudgeTests } from '#api/features/rejudge/rejudge.service.ts'
+import { supersedeCurve } from '#api/features/rejudge/supersede-curve.service.ts'
 import { createRelease } from '#api/features/releases/releases.service.ts'
 import { stepOrder } from '#api/features/rework/step-order.service.ts'
 import { recordTest } from '#api/features/tests/record-test.service.ts'
@@ -15,6 +19,8 @@ import { voidTest } from '#api/features/tests/void-test.service.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
 import { gridToSite } from '#shared/domain/grid.ts'
 import { applyPatch, decodePatch, decodeSheet } from '#shared/ground-codec.ts'
+import { convertDensity } from '#shared/units/density.ts'
+import { curveInput } from '#tests/factories/curve.ts'
 import { openSite } from '#tests/factories/open-site.ts'
 import type { OpenSite } from '#tests/factories/open-site.ts'
 import { asLead } from '#tests/factories/work-on-site.ts'
@@ -35,9 +41,10 @@ type Act =
   | { readonly kind: 'place'; readonly from: number; readonly size: number; readonly lift: number; readonly quarters: number }
   | { readonly kind: 'test'; readonly cell: number; readonly lift: number; readonly reading: 'pass' | 'near' | 'loose' | 'dry' | 'impossible'; readonly purpose: 'required' | 'judgement' }
   | { readonly kind: 'release'; readonly lift: number }
-  | { readonly kind: 'rework' }
+  | { readonly kind: 'rework' | 'start' }
   | { readonly kind: 'retest' }
   | { readonly kind: 'void-test' | 'void-placement'; readonly pick: number }
+  | { readonly kind: 'rejudge'; readonly pcf: number; readonly every: number }
 
 const act: fc.Arbitrary<Act> = fc.oneof(
   { weight: 5, arbitrary: fc.record({ kind: fc.constant('place' as const), from: fc.integer({ min: 0, max: 29 }), size: fc.integer({ min: 1, max: 14 }), lift: fc.integer({ min: 1, max: 3 }), quarters: fc.constantFrom(15, 15, 15, 3) }) },
@@ -54,6 +61,8 @@ const act: fc.Arbitrary<Act> = fc.oneof(
   { weight: 3, arbitrary: fc.record({ kind: fc.constant('release' as const), lift: fc.integer({ min: 1, max: 3 }) }) },
   { weight: 2, arbitrary: fc.constant<Act>({ kind: 'rework' }) },
   { weight: 2, arbitrary: fc.constant<Act>({ kind: 'retest' }) },
+  { weight: 1, arbitrary: fc.constant<Act>({ kind: 'start' }) },
+  { weight: 2, arbitrary: fc.record({ kind: fc.constant('rejudge' as const), pcf: fc.constantFrom(-8, -3, 2, 6), every: fc.integer({ min: 1, max: 3 }) }) },
   { weight: 1, arbitrary: fc.record({ kind: fc.constantFrom('void-test' as const, 'void-placement' as const), pick: fc.nat() }) },
 )
 
@@ -87,6 +96,12 @@ async function doAct(open: OpenSite, write: SiteWrite, step: Act): Promise<unkno
       const [order]: { id: string }[] = await write.manager.query("SELECT `id` FROM `rework_order` WHERE `site_id` = ? AND `state` IN ('issued', 'working') ORDER BY `seq` LIMIT 1", [open.siteId])
       return order && stepOrder(write, order.id, { id: randomUUID(), kind: 'ready', happenedAt, passes: 4, waterLitres: 0, depthUm: 200_000, remarks: '' }, '0'.repeat(32))
     }
+    case 'start': {
+      const [order]: { id: string }[] = await write.manager.query("SELECT `id` FROM `rework_order` WHERE `site_id` = ? AND `state` = 'issued' ORDER BY `seq` LIMIT 1", [open.siteId])
+      return order && stepOrder(write, order.id, { id: randomUUID(), kind: 'started', happenedAt }, '0'.repeat(32))
+    }
+    case 'rejudge':
+      return rejudge(open, write, step.pcf, step.every)
     case 'retest': {
       const [order]: { cause_test_id: string; cell: number; lift: number }[] = await write.manager.query(
         "SELECT o.`cause_test_id`, c.`cell`, o.`lift` FROM `rework_order` o JOIN `rework_cell` c ON c.`site_id` = o.`site_id` AND c.`order_id` = o.`id` AND c.`left_at` IS NULL WHERE o.`site_id` = ? AND o.`state` = 'ready' ORDER BY o.`seq`, c.`cell` LIMIT 1",
@@ -103,6 +118,23 @@ async function doAct(open: OpenSite, write: SiteWrite, step: Act): Promise<unkno
       return step.kind === 'void-test' ? voidTest(write, picked.id, { reason: 'Random void' }) : voidPlacement(write, picked.id, 'Random void')
     }
   }
+}
+
+/** A new curve takes the place of the last one, and every so many of the tests of the first superseded one are judged by it. */
+async function rejudge(open: OpenSite, write: SiteWrite, pcf: number, every: number): Promise<unknown> {
+  const { manager, siteId } = write
+  const last = await manager.findOneByOrFail(ReferenceCurveEntity, { siteId, status: 'approved' })
+  const input = curveInput({ materialId: open.material.id, gs: 2.9, reported: { maxDryDensity: convertDensity(120 + pcf, 'pcf', 'kg/m3'), optimumMoisture: 12, reason: 'Random curve' } })
+  const { id } = await createCurve(write, input)
+  await approveCurve(write, id, 'reported')
+  await supersedeCurve(write, last.id, { successorId: id, reason: 'Random curve' })
+  const tests: { id: string; curve_id: string }[] = await manager.query(
+    "SELECT t.`id`, t.`curve_id` FROM `field_test` t JOIN `reference_curve` k ON k.`site_id` = t.`site_id` AND k.`id` = t.`curve_id` WHERE t.`site_id` = ? AND t.`voided_at` IS NULL AND k.`status` = 'superseded' ORDER BY t.`seq`",
+    [siteId],
+  )
+  const [first] = tests
+  const chosen = tests.filter((test, index) => test.curve_id === first?.curve_id && index % every === 0).map((test) => test.id)
+  return first && rejudgeTests(write, first.curve_id, { id: randomUUID(), by: id, tests: chosen, reason: 'Random curve' })
 }
 
 async function test(

@@ -53,6 +53,7 @@ export function buildCurve(overrides: Partial<Curve> = {}): Curve {
     approvedAt: null,
     recordedBy: 'Theo Lindqvist',
     testsJudged: 0,
+    superseded: null,
     ...overrides,
   }
 }

@@ -23,10 +23,12 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
   if (curves.length === 0) return []
   const { waterDensity } = await manager.findOneByOrFail(SiteEntity, { id: siteId })
   const materials = await manager.findBy(BorrowMaterialEntity, { siteId, id: In(curves.map((curve) => curve.materialId)) })
-  const people = curves.flatMap(({ recordedBy, approvedBy }) => (approvedBy === null ? [recordedBy] : [recordedBy, approvedBy]))
+  const people = curves.flatMap(({ recordedBy, approvedBy, supersededBy }) => [recordedBy, approvedBy, supersededBy].filter((person) => person !== null))
   const users = await manager.find(UserEntity, { where: { id: In(people) }, select: { id: true, name: true } })
   const materialNames = new Map(materials.map(({ id, name }) => [id, name]))
   const userNames = new Map(users.map(({ id, name }) => [id, name]))
+  const successors = curves.flatMap((curve) => curve.successorId ?? [])
+  const codes = new Map((await manager.find(ReferenceCurveEntity, { where: { siteId, id: In(successors) }, select: { id: true, code: true } })).map(({ id, code }) => [id, code]))
   const judged = await countTests(manager, siteId, curves.map((curve) => curve.id))
   return curves.map((curve): Curve => {
     const { id, code, materialId, method, procedure, points, gs, gsMeasured, coarse, reported, status, maxDryDensity, optimumMoisture } = curve
@@ -51,8 +53,18 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
       approvedAt: curve.approvedAt?.toISOString() ?? null,
       recordedBy: userNames.get(curve.recordedBy) ?? '',
       testsJudged: judged.get(id) ?? 0,
+      superseded: presentSuperseded(curve, codes, userNames),
     }
   })
+}
+
+function presentSuperseded(
+  { successorId, supersededAt, supersededBy, supersedeReason }: ReferenceCurveEntity,
+  codes: ReadonlyMap<string, string>,
+  people: ReadonlyMap<string, string>,
+): Curve['superseded'] {
+  if (successorId === null || supersededAt === null || supersededBy === null) return null
+  return { by: { id: successorId, code: codes.get(successorId) ?? '' }, at: supersededAt.toISOString(), who: people.get(supersededBy) ?? '', reason: supersedeReason ?? '' }
 }
 
 async function countTests(manager: EntityManager, siteId: string, curveIds: readonly string[]): Promise<ReadonlyMap<string, number>> {

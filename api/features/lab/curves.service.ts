@@ -43,6 +43,10 @@ export async function createCurve(write: SiteWrite, given: CreateCurve): Promise
     recordedBy: user.id,
     approvedBy: null,
     approvedAt: null,
+    successorId: null,
+    supersededAt: null,
+    supersededBy: null,
+    supersedeReason: null,
     createdAt: now,
     updatedAt: now,
   })

@@ -49,6 +49,23 @@ export async function writeToSite<T>(
   return answer
 }
 
+/**
+ * Runs a change exactly as writeToSite does, and takes it back: what it would do, by the same code. Nothing is stored, nobody
+ * is told; writers to the site wait as for a change.
+ */
+export async function rehearseOnSite<T>(deps: WriteDeps, options: ReadRequest, work: (write: SiteWrite) => Promise<T>): Promise<T> {
+  return retryDeadlocks(async () => {
+    const runner = deps.dataSource.createQueryRunner()
+    try {
+      await runner.startTransaction('READ COMMITTED')
+      return (await runWrite(runner.manager, deps.clock, options, work)).answer
+    } finally {
+      if (runner.isTransactionActive) await runner.rollbackTransaction()
+      await runner.release()
+    }
+  })
+}
+
 async function runWrite<T>(
   manager: EntityManager,
   clock: WriteDeps['clock'],

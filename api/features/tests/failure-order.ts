@@ -96,13 +96,14 @@ export async function continueOrder(write: SiteWrite, plan: SitePlan, order: Rew
 }
 
 /**
- * Gives an order back to an earlier failure of the chain when the follower that had taken it over is voided: the cells it
- * brought leave, and rework that was reported before counts again.
+ * Gives an order back to an earlier failure of the chain when the follower that had taken it over is voided or judged again
+ * to pass: the cells it brought leave, and rework that was reported before counts again.
+ * @param why what became of the follower: "was voided"
  */
-export async function returnOrder(write: SiteWrite, order: ReworkOrderEntity, voided: FieldTestEntity, cause: FieldTestEntity): Promise<void> {
+export async function returnOrder(write: SiteWrite, order: ReworkOrderEntity, follower: FieldTestEntity, cause: FieldTestEntity, why: string): Promise<void> {
   const { manager, siteId, now } = write
   const steps = await manager.find(ReworkStepEntity, { where: { siteId, orderId: order.id }, order: { position: 'ASC' } })
-  const taken = steps.findLast((step) => step.details.testId === voided.id)
+  const taken = steps.findLast((step) => step.details.testId === follower.id)
   const workedSince = taken !== undefined && steps.some((step) => step.position > taken.position && (step.kind === 'started' || step.kind === 'ready'))
   const joined = taken && !workedSince && Array.isArray(taken.details.joined) ? (taken.details.joined as number[]) : []
   if (joined.length > 0) await manager.update(ReworkCellEntity, { siteId, orderId: order.id, cell: In(joined) }, { leftAt: now })
@@ -119,7 +120,7 @@ export async function returnOrder(write: SiteWrite, order: ReworkOrderEntity, vo
       ...(report ? { state: 'ready' as const, reportedAt: report.happenedAt } : {}),
     },
   )
-  await addOrderStep(write, order.id, { kind: 'edited', happenedAt: now, text: `${voided.number} was voided; ${cause.number} stands`, details: { left: joined } })
-  write.record('order.edited', { type: 'order', id: order.id }, { number: orderNumber(order.seq), cause: cause.number, causeTestId: cause.id, voided: voided.number })
+  await addOrderStep(write, order.id, { kind: 'edited', happenedAt: now, text: `${follower.number} ${why}; ${cause.number} stands`, details: { left: joined } })
+  write.record('order.edited', { type: 'order', id: order.id }, { number: orderNumber(order.seq), cause: cause.number, causeTestId: cause.id, follower: follower.number, why })
   write.changed('order', order.id)
 }

@@ -41,7 +41,8 @@ export function judgeSheet({ sheet, oversizePercent }: Sheet, plan: SitePlan, cu
   return { ok: true, reduced, verdict: judgement.verdict }
 }
 
-function coarseOf({ coarse, method, procedure }: ReferenceCurveEntity): CoarsePart | undefined {
+/** What the curve knows of the stones its mould left out, with their sieve. */
+export function coarseOf({ coarse, method, procedure }: ReferenceCurveEntity): CoarsePart | undefined {
   return coarse ? { ...coarse, sieve: oversizeSieve(method, procedure) } : undefined
 }
 

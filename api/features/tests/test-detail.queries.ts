@@ -49,7 +49,7 @@ export async function loadTestDetail(manager: EntityManager, siteId: string, id:
 }
 
 /** The verdict as it was frozen; the schema of the answer takes what is shown of it. */
-function presentVerdict({ verdict }: FieldTestEntity): TestDetail['verdict'] {
+export function presentVerdict({ verdict }: Pick<FieldTestEntity, 'verdict'>): TestDetail['verdict'] {
   const { against, reasons, suspicions, advice, ...rest } = verdict
   return {
     ...rest,

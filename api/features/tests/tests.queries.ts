@@ -33,11 +33,11 @@ interface SummaryRow {
 }
 
 /** The last of a chain that is not void, as the ground reads it (lot-tests.queries.ts). */
-const CURRENT =
+export const CURRENT =
   '(t.`id` = (SELECT n.`id` FROM `field_test` n WHERE n.`site_id` = t.`site_id` AND n.`chain_id` = t.`chain_id` AND n.`voided_at` IS NULL ORDER BY n.`sampled_at` DESC, n.`seq` DESC LIMIT 1))'
 
 /** Rework reported done in the test's cell, at its lift or below it, after it was sampled. */
-const SUPERSEDED =
+export const SUPERSEDED =
   "EXISTS (SELECT 1 FROM `rework_cell` c JOIN `rework_order` o ON o.`site_id` = c.`site_id` AND o.`id` = c.`order_id` JOIN `rework_step` s ON s.`site_id` = o.`site_id` AND s.`order_id` = o.`id` AND s.`kind` = 'ready' WHERE c.`site_id` = t.`site_id` AND c.`cell` = t.`cell` AND o.`lift` <= t.`lift` AND s.`happened_at` >= t.`sampled_at` AND (c.`left_at` IS NULL OR c.`left_at` > s.`happened_at`))"
 
 const LOT =

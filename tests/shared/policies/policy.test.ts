@@ -42,6 +42,7 @@ const TABLE: Record<Verb, string> = {
   'calibration.record': 'lt',
   'curve.supersede': 'l',
   'test.rejudge': 'l',
+  'test.rejudge-qa': 'r',
   'one-point.record': 'lt',
   'file.attach': 'ltr',
   'file.withdraw': 'lr',

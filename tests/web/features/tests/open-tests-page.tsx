@@ -59,6 +59,7 @@ export function buildCurve(overrides: Partial<Curve> = {}): Curve {
     approvedAt: '2026-11-02T16:00:00.000Z',
     recordedBy: 'Milan Petrak',
     testsJudged: 3,
+    superseded: null,
     ...overrides,
   }
 }
