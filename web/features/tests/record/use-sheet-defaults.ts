@@ -6,6 +6,7 @@ import { columnQueries } from '#web/data/column/queries.ts'
 import { lotQueries } from '#web/data/lot/queries.ts'
 import type { Place } from './place-test.ts'
 import type { TestForm } from './test-form.ts'
+import { usualCurve } from './usual-curve.ts'
 
 /** The top placed lift of a column, or its lowest planned one. */
 function usualLift(place: Place, rows: readonly { lift: number; state: string }[]): number | undefined {
@@ -34,9 +35,8 @@ export function useSheetDefaults(siteId: string, form: UseFormReturn<TestForm>, 
 
   useEffect(() => {
     if (getValues('curveId') !== '') return
-    const approved = curves.filter((curve) => curve.status === 'approved')
-    const own = lot === undefined ? approved : approved.filter((curve) => curve.materialId === lot.materialId)
-    if (own.length === 1 && own[0] !== undefined) setValue('curveId', own[0].id)
+    const usual = usualCurve(curves, lot?.materialId ?? null)
+    if (usual !== undefined) setValue('curveId', usual.id)
   }, [lot, curves, getValues, setValue])
 
   return lot?.specificationVersion ?? null
