@@ -63,7 +63,7 @@ export const boardSchema = z.object({
   ),
   /** current results that cannot be right and want a re-run */
   doubtful: z.array(z.object({ testId: z.string(), number: z.string(), cell: z.number(), lift: z.number(), headline: z.string() })),
-  exceptions: z.array(z.object({ kind: z.enum(['covered-early', 'retest-without-rework', 'voided-failure', 'override', 'volume-difference', 'hold']), text: z.string(), detail: z.string(), cells: z.array(z.number()), lift: z.number().nullable(), testId: z.string().nullable() })),
+  exceptions: z.array(z.object({ kind: z.enum(['covered-early', 'retest-without-rework', 'voided-failure', 'rejudged-failure', 'override', 'volume-difference', 'hold']), text: z.string(), detail: z.string(), cells: z.array(z.number()), lift: z.number().nullable(), testId: z.string().nullable() })),
   verification: z.object({ tests: z.number(), failing: z.number() }),
 })
 export type Board = z.infer<typeof boardSchema>

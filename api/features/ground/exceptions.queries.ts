@@ -15,6 +15,7 @@ export async function loadExceptions(manager: EntityManager, plan: SitePlan): Pr
     ...(await coveredEarly(manager, plan)),
     ...(await held(manager, siteId)),
     ...(await flaggedTests(manager, siteId)),
+    ...(await rejudgedFailures(manager, siteId)),
     ...(await overrides(manager, siteId)),
     ...(await volumeDifferences(manager, siteId)),
   ]
@@ -61,6 +62,15 @@ async function flaggedTests(manager: EntityManager, siteId: string): Promise<Exc
       ? { kind: 'voided-failure', text: `${row.number}, a failing test, was voided`, detail: row.void_reason ?? '', cells: [row.cell], lift: row.lift, testId: row.id }
       : { kind: 'retest-without-rework', text: `${row.number}: retest without recorded rework`, detail: '', cells: [row.cell], lift: row.lift, testId: row.id },
   )
+}
+
+/** Failures that the last judging lets pass, with its reason: they stay on the record as voided ones do. */
+async function rejudgedFailures(manager: EntityManager, siteId: string): Promise<Exception[]> {
+  const rows: { id: string; number: string; cell: number; lift: number; code: string; reason: string | null }[] = await manager.query(
+    "SELECT t.`id`, t.`number`, t.`cell`, t.`lift`, k.`code`, (SELECT l.`reason` FROM `test_verdict` l WHERE l.`site_id` = t.`site_id` AND l.`test_id` = t.`id` ORDER BY l.`version` DESC LIMIT 1) AS `reason` FROM `field_test` t JOIN `reference_curve` k ON k.`site_id` = t.`site_id` AND k.`id` = t.`curve_id` WHERE t.`site_id` = ? AND t.`voided_at` IS NULL AND t.`outcome` = 'pass' AND EXISTS (SELECT 1 FROM `test_verdict` v WHERE v.`site_id` = t.`site_id` AND v.`test_id` = t.`id` AND (JSON_VALUE(v.`verdict`, '$.outcome') = 'fail' OR JSON_VALUE(v.`verdict`, '$.treatedAsFail') IN ('true', '1'))) ORDER BY t.`seq` DESC",
+    [siteId],
+  )
+  return rows.map((row) => ({ kind: 'rejudged-failure', text: `${row.number}, a failing test, was judged again by ${row.code} and passes`, detail: row.reason ?? '', cells: [row.cell], lift: row.lift, testId: row.id }))
 }
 
 async function overrides(manager: EntityManager, siteId: string): Promise<Exception[]> {

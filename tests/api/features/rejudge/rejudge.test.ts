@@ -4,6 +4,7 @@ import { findDifferences } from '#api/features/ground/recompute.queries.ts'
 import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import { verifyChain } from '#api/features/events/verify-chain.ts'
 import type { Role } from '#shared/policies/role.ts'
+import type { Board } from '#shared/schemas/ground.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 import { rejudgeAnswerSchema, rejudgingSchema, verdictHistorySchema } from '#shared/schemas/rejudge.ts'
 import { cellsIn, fieldWork, minutesAgo } from '#tests/factories/field-work.ts'
@@ -171,6 +172,8 @@ describe('POST /api/sites/:siteId/curves/:id/rejudge', () => {
     expect(cellsIn(await statesOf(app, open), 'meets-spec')).toEqual([0, 1, 2, 3, 4, 5])
     expect((await work.detailOf(fail.id)).marks).toEqual([])
     expect((await historyOf(fail.id))[0]?.marks).toEqual([{ kind: 'fail', cells: [0, 1, 2] }])
+    const board = await open.people['owner-rep'].get(open.path('/board'))
+    expect((board.body as Board).exceptions).toContainEqual(expect.objectContaining({ kind: 'rejudged-failure', testId: fail.id, detail: 'New curve of the same pit' }))
     await expectSound()
   })
 

@@ -16,7 +16,7 @@ const FIRST = 6
 function ExceptionMark({ kind }: { kind: Exception['kind'] }) {
   if (kind === 'covered-early') return <StateSwatch state="awaiting-test" covered />
   if (kind === 'hold') return <TestMark outcome="fails" verification decorative />
-  if (kind === 'voided-failure' || kind === 'retest-without-rework') return <TestMark outcome="fails" decorative />
+  if (kind === 'voided-failure' || kind === 'rejudged-failure' || kind === 'retest-without-rework') return <TestMark outcome="fails" decorative />
   return <StateSwatch state="not-placed" />
 }
 
