@@ -25,6 +25,11 @@ export function HashColumn(name: string, options: Options = {}): PropertyDecorat
   return Column({ type: 'char', length: 64, charset: 'ascii', collation: 'ascii_bin', ...options, name })
 }
 
+/** A calendar day, YYYY-MM-DD, as text: a day has no time zone. */
+export function DayColumn(name: string, options: Options = {}): PropertyDecorator {
+  return Column({ type: 'char', charset: 'ascii', collation: 'ascii_bin', ...options, name, length: 10 })
+}
+
 /** A closed word (state, kind, role): ascii, compared byte by byte. */
 export function WordColumn(name: string, options: Options = {}): PropertyDecorator {
   return Column({ type: 'varchar', length: 32, charset: 'ascii', collation: 'ascii_bin', ...options, name })

@@ -13,6 +13,7 @@ import type { Purpose } from '#shared/schemas/field-test.ts'
 @Unique('uq_field_test_seq', ['siteId', 'seq'])
 @ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_field_test_zone' })
 @ForeignKey('ReferenceCurveEntity', ['siteId', 'curveId'], ['siteId', 'id'], { name: 'fk_field_test_curve' })
+@ForeignKey('GaugeEntity', ['siteId', 'gaugeId'], ['siteId', 'id'], { name: 'fk_field_test_gauge' })
 @Entity('field_test')
 export class FieldTestEntity extends SiteOwned {
   @IntColumn('seq')
@@ -77,6 +78,10 @@ export class FieldTestEntity extends SiteOwned {
 
   @JsonColumn('sheet')
   sheet!: RawSheet
+
+  /** the gauge of the register it was read with; null for none, and where none was named */
+  @IdColumn('gauge_id', { nullable: true })
+  gaugeId!: string | null
 
   @DecimalColumn('oversize_percent', 6, 2, { nullable: true })
   oversizePercent!: number | null

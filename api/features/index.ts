@@ -2,11 +2,13 @@ import type { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
 import { dispositionRoutes } from '#api/features/dispositions/dispositions.routes.ts'
 import { eventRoutes } from '#api/features/events/events.routes.ts'
+import { gaugeRoutes } from '#api/features/gauges/gauges.routes.ts'
 import { groundRoutes } from '#api/features/ground/ground.routes.ts'
 import { inspectionRoutes } from '#api/features/inspections/inspections.routes.ts'
 import { labRoutes } from '#api/features/lab/lab.routes.ts'
 import { lotRoutes } from '#api/features/lots/lots.routes.ts'
 import { memberRoutes } from '#api/features/members/members.routes.ts'
+import { onePointRoutes } from '#api/features/one-point/one-point.routes.ts'
 import { placementRoutes } from '#api/features/placements/placements.routes.ts'
 import { rejudgeRoutes } from '#api/features/rejudge/rejudge.routes.ts'
 import { releaseRoutes } from '#api/features/releases/releases.routes.ts'
@@ -22,6 +24,8 @@ export const apiFeatures: readonly ((deps: Deps) => Router)[] = [sitesRoutes]
 export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   siteRoutes,
   labRoutes,
+  onePointRoutes,
+  gaugeRoutes,
   memberRoutes,
   eventRoutes,
   groundRoutes,

@@ -59,6 +59,9 @@ export function checkGauge({ serial, calibrations, outages, counts }: GaugeFacts
   return found('good', `has a good standard count on ${dayWords(day)}.`)
 }
 
+/** What stands in place of a check where a gauge test names no gauge of the register. */
+export const GAUGE_NOT_NAMED = { state: 'not-named', message: 'It names no gauge of the register, so that its standard count is not known.' } as const
+
 /** True where a sheet was read off a nuclear gauge, its density or only its moisture. */
 export function usesGauge(sheet: RawSheet): boolean {
   return sheet.method === 'nuclear-gauge' || sheet.moisture.method === 'gauge'

@@ -1,5 +1,23 @@
 import { hasFlag, mayBeCovered, type GroundState } from './ground-state.ts'
 
+/** A passing test that speaks for a cell. */
+export interface ReleasePass {
+  readonly sampledAt: number
+  readonly cell: number
+  readonly curveApproved: boolean
+  readonly superseded: boolean
+  /** what is wrong with the gauge it was read with; null where nothing is, or it was read without one */
+  readonly gauge: GaugeTrouble | null
+}
+
+export interface GaugeTrouble {
+  /** `not-checked`: not good at that time; `not-named`: it names no gauge, as tests did before there was a register */
+  readonly kind: 'not-checked' | 'not-named'
+  /** number of the test */
+  readonly test: string
+  readonly message: string
+}
+
 /** One cell the lead wants to release, as its lot and column derived it. */
 export interface ReleaseCell {
   readonly cell: number
@@ -13,7 +31,7 @@ export interface ReleaseCell {
   /** when a higher lift first covered it; null while it is open */
   readonly coveredAt: number | null
   /** the passes that speak for it */
-  readonly passes: readonly { readonly sampledAt: number; readonly cell: number; readonly curveApproved: boolean; readonly superseded: boolean }[]
+  readonly passes: readonly ReleasePass[]
 }
 
 export interface ReleaseRequest {
@@ -41,12 +59,14 @@ export const RELEASE_CODES = [
   'superseded-test',
   'curve-not-approved',
   'passed-after-cover',
+  'gauge-not-checked',
   'frequency-short',
   'tests-owed',
   'thickness',
   'near-limit',
   'far-reach',
   'gauge-checks',
+  'gauge-not-named',
   'below-unresolved',
 ] as const
 
@@ -73,7 +93,8 @@ const OVERRIDABLE: readonly ReleaseCode[] = ['frequency-short', 'tests-owed', 't
 /**
  * The checklist of a release (domain section 7). Red: ground not placed or partly placed, already released, failed or
  * awaiting a retest, suspect, to be rechecked, a foundation not inspected, a superseded test or an unapproved curve
- * under it, or a pass that came only after it was covered and lies elsewhere. Frequency short (no pass speaks for
+ * under it, a pass that came only after it was covered and lies elsewhere, or one read with a gauge that had
+ * no good standard count that day, was out of service or past its calibration. Frequency short (no pass speaks for
  * it, or these are the last unreleased cells of a lot that owes tests) and thickness may be overridden with a reason.
  */
 export function checkRelease({ lift, cells, lot }: ReleaseRequest): ReleaseCheck {
@@ -94,6 +115,7 @@ export function checkRelease({ lift, cells, lot }: ReleaseRequest): ReleaseCheck
     ['superseded-test', 'A test under it was taken before rework or removal.', where((cell) => cell.passes.some((pass) => pass.superseded))],
     ['curve-not-approved', 'A test under it used a curve that is not approved.', where((cell) => cell.passes.some((pass) => !pass.curveApproved))],
     ['passed-after-cover', 'It was covered before the test that speaks for it, and none was taken down in it.', where(passedAfterCover)],
+    ['gauge-not-checked', notCheckedWords(cells), where((cell) => cell.passes.some((pass) => pass.gauge?.kind === 'not-checked'))],
     ['frequency-short', 'No passing test speaks for all of it.', lift === 0 ? [] : inState('awaiting-test')],
     ['tests-owed', `These are the last cells of the lot, and it owes ${lot.owed === 1 ? '1 test' : `${lot.owed} tests`}.`, last ? [...requested] : []],
     ['thickness', 'Its surveyed thickness is outside what the specification allows.', where((cell) => cell.thicknessOff)],
@@ -102,10 +124,30 @@ export function checkRelease({ lift, cells, lot }: ReleaseRequest): ReleaseCheck
     ['near-limit', 'The result is within the repeatability of the method of a limit.', flagged('near')],
     ['far-reach', 'It lies far from the test that speaks for it.', where((cell) => cell.far)],
     ['gauge-checks', 'The lot owes a sand cone or oven check of its gauge tests.', lot.gaugeChecksOwed > 0 ? [...requested] : []],
+    ['gauge-not-named', notNamedWords(cells), where((cell) => cell.passes.some((pass) => pass.gauge?.kind === 'not-named'))],
     ['below-unresolved', 'A layer beneath it was covered too early and is not resolved.', flagged('doubt')],
   ])
   const verdict = red.length === 0 ? 'free' : red.every((finding) => OVERRIDABLE.includes(finding.code)) ? 'with-reason' : 'blocked'
   return { red, amber, verdict }
+}
+
+/** The gauge troubles of one kind behind the cells, each test once, by its number. */
+function troubles(cells: readonly ReleaseCell[], kind: GaugeTrouble['kind']): GaugeTrouble[] {
+  const found = cells.flatMap((cell) => cell.passes.flatMap(({ gauge }) => (gauge?.kind === kind ? [gauge] : [])))
+  return [...new Map(found.map((trouble) => [trouble.test, trouble])).values()].sort((a, b) => (a.test < b.test ? -1 : 1))
+}
+
+const together = (tests: readonly GaugeTrouble[]): string => tests.map((trouble) => trouble.test).join(', ')
+
+function notCheckedWords(cells: readonly ReleaseCell[]): string {
+  const tests = troubles(cells, 'not-checked')
+  const why = [...new Set(tests.map((trouble) => trouble.message))].join(' ')
+  return `${together(tests)} ${tests.length === 1 ? 'rests' : 'rest'} on a gauge that was not checked. ${why} Record that day’s count, or test again.`
+}
+
+function notNamedWords(cells: readonly ReleaseCell[]): string {
+  const tests = troubles(cells, 'not-named')
+  return `${together(tests)} ${tests.length === 1 ? 'names' : 'name'} no gauge of the register.`
 }
 
 /** A covered layer is cleared by passes sampled before the cover, or by one taken in an excavation down to this cell. */

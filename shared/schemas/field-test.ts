@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { criterionSchema, roundingSchema } from '#shared/schemas/criterion.ts'
 import { finiteSchema, idSchema, instantSchema, liftSchema, personSchema, reasonSchema, remarksSchema, sitePointSchema } from '#shared/schemas/common.ts'
+import { testGaugeSchema } from '#shared/schemas/gauge.ts'
 import { fieldMethodSchema, rawSheetSchema } from '#shared/schemas/field-sheet.ts'
 
 export const purposeSchema = z.enum(['required', 'judgement', 'verification', 'referee'])
@@ -39,6 +40,8 @@ export const testPreviewSchema = z.object({
   marks: z.array(z.object({ kind: z.enum(['fail', 'suspect', 'hold']), cells: z.array(z.number()), volumeCm3: z.number() })),
   /** cells that would meet specification */
   meets: z.array(z.number()),
+  /** of a test read with a gauge: whether that gauge was good then, as things stand now */
+  gauge: testGaugeSchema.nullable(),
 })
 export type TestPreview = z.infer<typeof testPreviewSchema>
 
@@ -141,6 +144,8 @@ export const testDetailSchema = testSummarySchema.extend({
   /** cells it speaks for now, with the volume it gives each */
   speaksFor: z.array(z.object({ cell: z.number(), cm3: z.number() })),
   orderId: z.string().nullable(),
+  /** the gauge it was read with, as its counts stand now; null for a test without a gauge */
+  gauge: testGaugeSchema.nullable(),
   void: z.object({ at: instantSchema, by: personSchema, reason: z.string() }).nullable(),
 })
 export type TestDetail = z.infer<typeof testDetailSchema>

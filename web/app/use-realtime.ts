@@ -7,10 +7,12 @@ import { paths } from '#web/app/paths.ts'
 import { groundChanged } from '#web/data/board/cache-effects.ts'
 import { curveChanged } from '#web/data/curve/cache-effects.ts'
 import { dispositionChanged } from '#web/data/disposition/cache-effects.ts'
+import { gaugeChanged } from '#web/data/gauge/cache-effects.ts'
 import { inspectionChanged } from '#web/data/inspection/cache-effects.ts'
 import { lotChanged } from '#web/data/lot/cache-effects.ts'
 import { materialChanged } from '#web/data/material/cache-effects.ts'
 import { memberChanged } from '#web/data/member/cache-effects.ts'
+import { onePointChanged } from '#web/data/one-point/cache-effects.ts'
 import { orderChanged } from '#web/data/order/cache-effects.ts'
 import { placementChanged } from '#web/data/placement/cache-effects.ts'
 import type { Change } from '#web/data/refresh.ts'
@@ -31,7 +33,9 @@ const EFFECTS: Readonly<Record<ChangedResource, (client: QueryClient, siteId: st
   order: orderChanged,
   release: releaseChanged,
   curve: curveChanged,
+  'one-point': onePointChanged,
   material: materialChanged,
+  gauge: gaugeChanged,
   zone: siteChanged,
   member: memberChanged,
   inspection: inspectionChanged,

@@ -3,12 +3,14 @@ import type { EntityManager } from 'typeorm'
 import { AllocationEntity } from '#api/entities/allocation.entity.ts'
 import { CellLiftEntity } from '#api/entities/cell-lift.entity.ts'
 import { LotEntity } from '#api/entities/lot.entity.ts'
+import { loadGaugeChecks, USES_GAUGE } from '#api/features/gauges/gauge-checks.queries.ts'
 import { cellsInZones } from '#api/features/ground/cells-in-zones.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
 import { groundStateOf, mayBeCovered } from '#shared/domain/ground-state.ts'
 import type { SharePair } from '#shared/domain/lot-facts.ts'
 import { checkRelease } from '#shared/domain/release-check.ts'
-import type { ReleaseCell, ReleaseFinding } from '#shared/domain/release-check.ts'
+import type { GaugeTrouble, ReleaseCell, ReleaseFinding } from '#shared/domain/release-check.ts'
+import type { TestGauge } from '#shared/schemas/gauge.ts'
 
 export interface CellToRelease {
   readonly row: CellLiftEntity
@@ -30,6 +32,8 @@ interface PassRow {
   readonly cell: number
   readonly sampled_at: Date
   readonly status: string
+  readonly number: string
+  readonly gauge: TestGauge | null
 }
 
 interface Asked {
@@ -57,7 +61,7 @@ export async function loadReleaseCheck(manager: EntityManager, plan: SitePlan, a
     coveredAt: coveredAt.get(row.cell) ?? null,
     passes: (pairs.get(row.cell) ?? []).flatMap((pair) => {
       const pass = passes.get(pair.testId)
-      return pass ? [{ sampledAt: pass.sampled_at.getTime(), cell: pass.cell, curveApproved: pass.status !== 'draft', superseded: false }] : []
+      return pass ? [{ sampledAt: pass.sampled_at.getTime(), cell: pass.cell, curveApproved: pass.status !== 'draft', superseded: false, gauge: troubleOf(pass) }] : []
     }),
   })
 
@@ -114,11 +118,24 @@ async function loadPairs(manager: EntityManager, siteId: string, lotIds: readonl
 
 async function loadPasses(manager: EntityManager, siteId: string, testIds: readonly string[]): Promise<Map<string, PassRow>> {
   if (testIds.length === 0) return new Map()
-  const rows: PassRow[] = await manager.query(
-    'SELECT t.`id`, t.`cell`, t.`sampled_at`, c.`status` FROM `field_test` t JOIN `reference_curve` c ON c.`site_id` = t.`site_id` AND c.`id` = t.`curve_id` WHERE t.`site_id` = ? AND t.`id` IN (?)',
+  const rows: (Omit<PassRow, 'gauge'> & { uses_gauge: number; gauge_id: string | null })[] = await manager.query(
+    `SELECT t.\`id\`, t.\`number\`, t.\`cell\`, t.\`sampled_at\`, c.\`status\`, t.\`gauge_id\`, ${USES_GAUGE} AS \`uses_gauge\` FROM \`field_test\` t JOIN \`reference_curve\` c ON c.\`site_id\` = t.\`site_id\` AND c.\`id\` = t.\`curve_id\` WHERE t.\`site_id\` = ? AND t.\`id\` IN (?)`,
     [siteId, [...new Set(testIds)]],
   )
-  return new Map(rows.map((row) => [row.id, row]))
+  const byGauge = rows.filter((row) => Number(row.uses_gauge) === 1)
+  const gauges = await loadGaugeChecks(manager, siteId, byGauge.map((row) => ({ id: row.id, gaugeId: row.gauge_id, sampledAt: row.sampled_at })))
+  return new Map(rows.map((row) => [row.id, { ...row, gauge: gauges.get(row.id) ?? null }]))
+}
+
+/** What is wrong now with the gauges behind these tests, as far as it holds a release. */
+export async function loadUncheckedGauges(manager: EntityManager, siteId: string, testIds: readonly string[]): Promise<GaugeTrouble[]> {
+  const passes = await loadPasses(manager, siteId, testIds)
+  return [...passes.values()].flatMap((pass) => troubleOf(pass) ?? []).filter((trouble) => trouble.kind === 'not-checked')
+}
+
+function troubleOf({ number, gauge }: PassRow): GaugeTrouble | null {
+  if (gauge === null || gauge.state === 'good') return null
+  return { kind: gauge.state === 'not-named' ? 'not-named' : 'not-checked', test: number, message: gauge.message }
 }
 
 /** When a higher lift first covered each cell. */

@@ -6,7 +6,7 @@ import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
 import { notInFuture } from '#api/features/ground/times.ts'
 import type { GroundWriteAnswer } from '#api/features/placements/record-placement.service.ts'
-import { loadReleaseCheck } from '#api/features/releases/check-release.queries.ts'
+import { loadReleaseCheck, loadUncheckedGauges } from '#api/features/releases/check-release.queries.ts'
 import type { CheckedRelease } from '#api/features/releases/check-release.queries.ts'
 import { isHoldPoint } from '#api/features/releases/holds.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
@@ -82,6 +82,7 @@ export async function acceptRelease(write: SiteWrite, id: string): Promise<Groun
   const plan = await loadSitePlan(manager, siteId)
   const cells = (await manager.findBy(ReleaseCellEntity, { siteId, releaseId: id })).filter((row) => row.revokedAt === null)
   if (cells.length === 0) throw conflict('Every cell of this release was revoked meanwhile. Nothing was changed.')
+  await refuseUncheckedGauges(write, cells)
   await manager.update(ReleaseEntity, { siteId, id }, { status: 'released', acceptedBy: user.id, acceptedAt: now, updatedAt: now })
   const check = await loadReleaseCheck(manager, plan, { zoneId: release.zoneId, lift: release.lift, cells: cells.map((row) => row.cell) })
   return finish(write, plan, { id, seq: release.seq, lift: release.lift, status: 'released', check, happenedAt: now })
@@ -110,6 +111,14 @@ function refuseRed(check: CheckedRelease, overrideReason: string | null): void {
   const words = check.red.map((finding) => finding.message).join(' ')
   const advice = check.verdict === 'with-reason' ? 'You may release with a reason, which goes to the owner.' : 'Leave those cells out; nothing was released.'
   throw conflict(`${words} ${advice}`, { red: check.red, overridable: check.verdict === 'with-reason' }, 'release_blocked')
+}
+
+/** A count voided since the lead issued it holds the acceptance too. */
+async function refuseUncheckedGauges({ manager, siteId }: SiteWrite, cells: readonly ReleaseCellEntity[]): Promise<void> {
+  const troubles = await loadUncheckedGauges(manager, siteId, cells.flatMap((cell) => cell.pairs.map((pair) => pair.testId)))
+  if (troubles.length === 0) return
+  const why = [...new Set(troubles.map((trouble) => trouble.message))].join(' ')
+  throw conflict(`${troubles.map((trouble) => trouble.test).join(', ')}: ${why} It cannot be accepted until that day’s count is good. Nothing was changed.`, undefined, 'release_blocked')
 }
 
 async function loadRelease(write: SiteWrite, id: string, status: ReleaseEntity['status']): Promise<ReleaseEntity> {

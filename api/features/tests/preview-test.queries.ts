@@ -1,6 +1,7 @@
 import type { EntityManager } from 'typeorm'
 import type { DerivedLot } from '#api/features/ground/change-ground.ts'
 import { deriveLotNow } from '#api/features/ground/change-ground.ts'
+import { loadGaugeChecks } from '#api/features/gauges/gauge-checks.queries.ts'
 import { layerOf, loadSitePlan } from '#api/features/ground/site-plan.ts'
 import { loadLotsOfCells } from '#api/features/lots/lots-of-cells.queries.ts'
 import type { SiteRead } from '#api/features/site-head/site-write.ts'
@@ -11,11 +12,12 @@ import { marksOf } from '#api/features/tests/mark-ground.ts'
 import { loadChain } from '#api/features/tests/test-chain.ts'
 import type { Chain } from '#api/features/tests/test-chain.ts'
 import { deriveLot } from '#shared/domain/derive-lot.ts'
+import { gaugeIdOf, usesGauge } from '#shared/domain/gauge-check.ts'
 import type { LotFacts, LotTest } from '#shared/domain/lot-facts.ts'
 import { layerVolumeCm3 } from '#shared/domain/placement-volume.ts'
 import type { PreviewTest, TestPreview } from '#shared/schemas/field-test.ts'
 
-const NOWHERE: TestPreview = { zoneId: null, cell: null, lotName: null, marks: [], meets: [] }
+const NOWHERE: TestPreview = { zoneId: null, cell: null, lotName: null, marks: [], meets: [], gauge: null }
 /** Stands for the test that has no id yet. */
 const PREVIEWED = '00000000-0000-0000-0000-000000000000'
 
@@ -32,7 +34,7 @@ export async function previewTest(read: SiteRead, input: PreviewTest): Promise<T
   const layer = layerOf(plan, cell, input.lift)
   const [lotId] = await loadLotsOfCells(manager, siteId, input.lift, [cell])
   const lot = lotId === undefined ? undefined : await deriveLotNow(manager, plan, lotId)
-  const place = { zoneId: zone.id, cell, lotName: lot?.lot.name ?? null }
+  const place = { zoneId: zone.id, cell, lotName: lot?.lot.name ?? null, gauge: await previewGauge(read, input) }
   if (!layer) return { ...NOWHERE, ...place }
 
   const curve = await loadCurve(manager, siteId, input.curveId)
@@ -48,6 +50,13 @@ export async function previewTest(read: SiteRead, input: PreviewTest): Promise<T
     marks: marks.map(({ kind, cells }) => ({ kind, cells: [...cells], volumeCm3: cells.reduce((sum, marked) => sum + volumeOf(marked), 0) })),
     meets: counts ? await newlyMeeting(read, lot, chain, { ...input, cell, at, near: verdict.near }) : [],
   }
+}
+
+/** The gauge the sheet names, as it stands at the time of sampling. */
+async function previewGauge({ manager, siteId }: SiteRead, { sheet, sampledAt }: PreviewTest): Promise<TestPreview['gauge']> {
+  if (!usesGauge(sheet)) return null
+  const checks = await loadGaugeChecks(manager, siteId, [{ id: PREVIEWED, gaugeId: gaugeIdOf(sheet), sampledAt: new Date(sampledAt) }])
+  return checks.get(PREVIEWED) ?? null
 }
 
 interface Passing extends Pick<PreviewTest, 'lift' | 'sampledAt' | 'follows'>, Pick<LotTest, 'cell' | 'at' | 'near'> {}

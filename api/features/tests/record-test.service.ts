@@ -15,11 +15,13 @@ import { curveFlags, judgeOrRefuse, loadCurve } from '#api/features/tests/judge-
 import { checkLift, placeTest } from '#api/features/tests/locate-test.ts'
 import { failedCells, marksOf } from '#api/features/tests/mark-ground.ts'
 import type { GroundMark } from '#api/features/tests/mark-ground.ts'
+import { refuseUnnamedGauge } from '#api/features/tests/named-gauge.ts'
 import { refutes } from '#api/features/tests/refute-failure.ts'
 import { checkFollowing, loadChain, wasReworkReported } from '#api/features/tests/test-chain.ts'
 import type { Chain } from '#api/features/tests/test-chain.ts'
 import { authorizeRecording } from '#api/features/tests/test-rights.ts'
 import { checkStakes } from '#api/features/tests/test-stakes.ts'
+import { gaugeIdOf } from '#shared/domain/gauge-check.ts'
 import type { Reason } from '#shared/domain/result.ts'
 import { formatTestNumber, nextChainName } from '#shared/domain/retest-chain.ts'
 import type { CreateTest, RecordTestAnswer } from '#shared/schemas/field-test.ts'
@@ -62,6 +64,7 @@ type Assessed = Awaited<ReturnType<typeof assessTest>>
 /** Everything a test is before it is stored: its place, verdict, chain, stake and what is to be told about it. */
 async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, input: CreateTest) {
   const sampledAt = notInFuture(new Date(input.sampledAt), now)
+  await refuseUnnamedGauge(manager, siteId, input)
   const { cell, zone, at } = placeTest(plan, input)
   const curve = await loadCurve(manager, siteId, input.curveId)
   const [lotId] = await loadLotsOfCells(manager, siteId, input.lift, [cell])
@@ -144,6 +147,7 @@ async function insertTest(write: SiteWrite, input: CreateTest, assessed: Assesse
     recordedBy: user.id,
     method: input.sheet.method,
     sheet: input.sheet,
+    gaugeId: gaugeIdOf(input.sheet),
     oversizePercent: input.oversizePercent,
     curveId: input.curveId,
     remarks: input.remarks,

@@ -7,8 +7,10 @@ import { StakeEntity } from '#api/entities/stake.entity.ts'
 import { TestMarkEntity } from '#api/entities/test-mark.entity.ts'
 import { UserEntity } from '#api/entities/user.entity.ts'
 import { notFound } from '#api/errors.ts'
+import { loadGaugeChecks } from '#api/features/gauges/gauge-checks.queries.ts'
 import { loadChainTests } from '#api/features/tests/test-chain.ts'
 import { loadTestSummary } from '#api/features/tests/tests.queries.ts'
+import { usesGauge } from '#shared/domain/gauge-check.ts'
 import { groupBy } from '#shared/domain/group-by.ts'
 import { rawSheetSchema } from '#shared/schemas/field-sheet.ts'
 import type { TestDetail } from '#shared/schemas/field-test.ts'
@@ -44,6 +46,7 @@ export async function loadTestDetail(manager: EntityManager, siteId: string, id:
     marks: await loadMarks(manager, siteId, id),
     speaksFor: await loadSpeaksFor(manager, siteId, id),
     orderId: await loadOrderId(manager, siteId, chain),
+    gauge: await presentGauge(manager, siteId, test),
     void: await presentVoid(manager, test),
   }
 }
@@ -77,6 +80,11 @@ async function loadSpeaksFor(manager: EntityManager, siteId: string, testId: str
 async function loadOrderId(manager: EntityManager, siteId: string, chain: readonly FieldTestEntity[]): Promise<string | null> {
   const order = await manager.findOne(ReworkOrderEntity, { where: { siteId, causeTestId: In(chain.map((test) => test.id)) }, order: { seq: 'DESC' } })
   return order?.id ?? null
+}
+
+async function presentGauge(manager: EntityManager, siteId: string, test: FieldTestEntity): Promise<TestDetail['gauge']> {
+  if (!usesGauge(test.sheet)) return null
+  return (await loadGaugeChecks(manager, siteId, [test])).get(test.id) ?? null
 }
 
 async function presentVoid(manager: EntityManager, { voidedAt, voidedBy, voidReason }: FieldTestEntity): Promise<TestDetail['void']> {

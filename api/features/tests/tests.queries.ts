@@ -1,5 +1,7 @@
 import type { EntityManager } from 'typeorm'
+import { loadGaugeChecks, USES_GAUGE } from '#api/features/gauges/gauge-checks.queries.ts'
 import type { TestQuery, TestSummary } from '#shared/schemas/field-test.ts'
+import type { TestGauge } from '#shared/schemas/gauge.ts'
 
 interface SummaryRow {
   readonly id: string
@@ -30,6 +32,8 @@ interface SummaryRow {
   readonly superseded: number
   readonly voided_at: Date | null
   readonly flag_count: number
+  readonly uses_gauge: number
+  readonly gauge_id: string | null
 }
 
 /** The last of a chain that is not void, as the ground reads it (lot-tests.queries.ts). */
@@ -46,7 +50,7 @@ const LOT =
 const FROM =
   'FROM `field_test` t JOIN `user` u ON u.`id` = t.`recorded_by` JOIN `reference_curve` k ON k.`site_id` = t.`site_id` AND k.`id` = t.`curve_id`'
 
-const SELECT = `SELECT t.\`id\`, t.\`number\`, t.\`seq\`, t.\`purpose\`, t.\`method\`, t.\`zone_id\`, t.\`lift\`, t.\`cell\`, ${LOT} AS \`lot_id\`, t.\`easting\`, t.\`northing\`, t.\`sampled_at\`, t.\`recorded_by\`, u.\`name\` AS \`recorder\`, t.\`curve_id\`, k.\`code\` AS \`curve_code\`, t.\`outcome\`, t.\`treated_as_fail\`, t.\`near\`, t.\`headline\`, t.\`rc\`, t.\`moisture\`, t.\`moisture_deviation\`, t.\`dry_density\`, ${CURRENT} AS \`current\`, ${SUPERSEDED} AS \`superseded\`, t.\`voided_at\`, JSON_LENGTH(t.\`flags\`) AS \`flag_count\` ${FROM}`
+const SELECT = `SELECT t.\`id\`, t.\`number\`, t.\`seq\`, t.\`purpose\`, t.\`method\`, t.\`zone_id\`, t.\`lift\`, t.\`cell\`, ${LOT} AS \`lot_id\`, t.\`easting\`, t.\`northing\`, t.\`sampled_at\`, t.\`recorded_by\`, u.\`name\` AS \`recorder\`, t.\`curve_id\`, k.\`code\` AS \`curve_code\`, t.\`outcome\`, t.\`treated_as_fail\`, t.\`near\`, t.\`headline\`, t.\`rc\`, t.\`moisture\`, t.\`moisture_deviation\`, t.\`dry_density\`, ${CURRENT} AS \`current\`, ${SUPERSEDED} AS \`superseded\`, t.\`voided_at\`, JSON_LENGTH(t.\`flags\`) AS \`flag_count\`, ${USES_GAUGE} AS \`uses_gauge\`, t.\`gauge_id\` ${FROM}`
 
 interface Where {
   readonly text: string
@@ -73,16 +77,27 @@ export async function listTests(manager: EntityManager, siteId: string, query: T
   const where = whereOf(siteId, query)
   const rows: SummaryRow[] = await manager.query(`${SELECT} WHERE ${where.text} ORDER BY t.\`seq\` DESC LIMIT ? OFFSET ?`, [...where.values, query.limit, query.offset])
   const [{ total }]: [{ total: string }] = await manager.query(`SELECT COUNT(*) AS \`total\` ${FROM} WHERE ${where.text}`, [...where.values])
-  return { tests: rows.map(presentSummary), total: Number(total) }
+  return { tests: await presentSummaries(manager, siteId, rows), total: Number(total) }
 }
 
 /** A test of this site as lists show it, or null. */
 export async function loadTestSummary(manager: EntityManager, siteId: string, id: string): Promise<TestSummary | null> {
   const rows: SummaryRow[] = await manager.query(`${SELECT} WHERE t.\`site_id\` = ? AND t.\`id\` = ?`, [siteId, id])
-  return rows[0] ? presentSummary(rows[0]) : null
+  const [summary] = await presentSummaries(manager, siteId, rows)
+  return summary ?? null
 }
 
-function presentSummary(row: SummaryRow): TestSummary {
+/** A test is flagged by what its sheet says, and by a gauge that was not good when it was taken. */
+async function presentSummaries(manager: EntityManager, siteId: string, rows: readonly SummaryRow[]): Promise<TestSummary[]> {
+  const byGauge = rows.filter((row) => Number(row.uses_gauge) === 1)
+  const checks = byGauge.length === 0 ? new Map<string, TestGauge>() : await loadGaugeChecks(manager, siteId, byGauge.map((row) => ({ id: row.id, gaugeId: row.gauge_id, sampledAt: row.sampled_at })))
+  return rows.map((row) => {
+    const gauge = checks.get(row.id)
+    return { ...presentSummary(row), flagged: Number(row.flag_count) > 0 || (gauge !== undefined && gauge.state !== 'good') }
+  })
+}
+
+function presentSummary(row: SummaryRow): Omit<TestSummary, 'flagged'> {
   return {
     id: row.id,
     number: row.number,
@@ -110,6 +125,5 @@ function presentSummary(row: SummaryRow): TestSummary {
     current: Number(row.current) === 1,
     superseded: Number(row.superseded) === 1,
     voided: row.voided_at !== null,
-    flagged: Number(row.flag_count) > 0,
   }
 }

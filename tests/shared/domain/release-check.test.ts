@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { GROUND_FLAGS } from '#shared/domain/ground-state.ts'
 import { checkRelease, type ReleaseCell } from '#shared/domain/release-check.ts'
 
-const pass = { sampledAt: 50, cell: 9, curveApproved: true, superseded: false }
+const pass = { sampledAt: 50, cell: 9, curveApproved: true, superseded: false, gauge: null }
 const good = (cell: number, change: Partial<ReleaseCell> = {}): ReleaseCell => ({
   cell,
   state: 'meets-spec',
@@ -36,6 +36,20 @@ describe('the checklist of a release', () => {
   it('blocks a superseded test and an unapproved curve', () => {
     expect(redOf({ passes: [pass, { ...pass, superseded: true }] })).toEqual([['superseded-test', 2]])
     expect(redOf({ passes: [{ ...pass, curveApproved: false }] })).toEqual([['curve-not-approved', 2]])
+  })
+
+  it('blocks tests whose gauge was not checked, names them once, and lets no reason override it', () => {
+    const unchecked = (test: string) => ({ ...pass, gauge: { kind: 'not-checked' as const, test, message: 'Gauge 4127 has no standard count on Mar 5.' } })
+    const blocked = check([good(1, { passes: [unchecked('T-0002'), unchecked('T-0001')] }), good(2, { passes: [unchecked('T-0002')] }), good(3)])
+    expect(blocked.red).toEqual([
+      { code: 'gauge-not-checked', message: 'T-0001, T-0002 rest on a gauge that was not checked. Gauge 4127 has no standard count on Mar 5. Record that day’s count, or test again.', cells: [1, 2] },
+    ])
+    expect(blocked.verdict).toBe('blocked')
+  })
+
+  it('only notes a gauge test that names no gauge', () => {
+    const unnamed = { ...pass, gauge: { kind: 'not-named' as const, test: 'T-0001', message: '' } }
+    expect(check([good(1, { passes: [unnamed] })])).toEqual({ red: [], amber: [{ code: 'gauge-not-named', message: 'T-0001 names no gauge of the register.', cells: [1] }], verdict: 'free' })
   })
 
   it('lets a reason override ground no test speaks for, and thickness', () => {

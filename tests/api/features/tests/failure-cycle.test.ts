@@ -94,7 +94,7 @@ describe('a passing test', () => {
   it('whose sheet is still empty shows what would meet if it passed; off the site there is nothing to say', async () => {
     const empty = await work.preview({ sheet: drySheet(0, 12) })
     expect(empty).toMatchObject({ marks: [], meets: [0, 1, 2, 3, 4, 5] })
-    expect(await work.preview({ at: middleOf(0, -500) })).toEqual({ zoneId: null, cell: null, lotName: null, marks: [], meets: [] })
+    expect(await work.preview({ at: middleOf(0, -500) })).toEqual({ zoneId: null, cell: null, lotName: null, marks: [], meets: [], gauge: null })
     expect(await work.preview({ lift: 9 })).toMatchObject({ cell: 0, marks: [], meets: [] })
     expect((await work.preview({ purpose: 'judgement' })).meets).toEqual([])
   })

@@ -141,6 +141,7 @@ export function buildDetail(overrides: Partial<TestDetail> = {}): TestDetail {
     marks: [{ kind: 'fail', cells: [5, 6] }],
     speaksFor: [],
     orderId: null,
+    gauge: null,
     void: null,
     ...overrides,
   }
@@ -153,12 +154,13 @@ export function answerSheet({ preview, curves = [buildCurve()] }: { preview?: Pa
   apiStandIn.use(
     http.get('/api/me', () => HttpResponse.json({ user: USER, csrfToken: 'token' })),
     http.get(ADDRESS, () => HttpResponse.json(buildSiteView())),
+    http.get(`${ADDRESS}/gauges`, () => HttpResponse.json({ gauges: [] })),
     http.get(`${ADDRESS}/stakes`, () => HttpResponse.json({ stakes: [STAKE] })),
     http.get(`${ADDRESS}/curves`, () => HttpResponse.json({ curves })),
     http.get(`${ADDRESS}/curves/:id`, () => HttpResponse.json(buildCurve())),
     http.get(`${ADDRESS}/lots`, () => HttpResponse.json({ lots: [] })),
     http.get(`${ADDRESS}/columns/:cell`, ({ params }) => HttpResponse.json(column(Number(params.cell)))),
-    http.post(`${ADDRESS}/tests/preview`, () => HttpResponse.json({ zoneId: ZONE_ID, cell: 5, lotName: 'Pad L10, Dec 1', marks: [], meets: [], ...preview })),
+    http.post(`${ADDRESS}/tests/preview`, () => HttpResponse.json({ zoneId: ZONE_ID, cell: 5, lotName: 'Pad L10, Dec 1', marks: [], meets: [], gauge: null, ...preview })),
     http.post(`${ADDRESS}/tests`, async ({ request }) => {
       sent.push((await request.json()) as CreateTest)
       return HttpResponse.json(saved, { status: 201 })
