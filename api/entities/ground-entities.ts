@@ -13,6 +13,7 @@ import { InspectionEntity } from '#api/entities/inspection.entity.ts'
 import { InspectionCellEntity } from '#api/entities/inspection-cell.entity.ts'
 import { LiftTotalEntity } from '#api/entities/lift-total.entity.ts'
 import { LotEntity } from '#api/entities/lot.entity.ts'
+import { OnePointCheckEntity } from '#api/entities/one-point-check.entity.ts'
 import { PlacementEntity } from '#api/entities/placement.entity.ts'
 import { PlacementCellEntity } from '#api/entities/placement-cell.entity.ts'
 import { ReferenceCurveEntity } from '#api/entities/reference-curve.entity.ts'
@@ -37,6 +38,7 @@ export const groundEntities = [
   LiftTotalEntity,
   BorrowMaterialEntity,
   ReferenceCurveEntity,
+  OnePointCheckEntity,
   LotEntity,
   PlacementEntity,
   PlacementCellEntity,

@@ -5,6 +5,7 @@ import { CreateTestsAndStakes1796083200009 } from '#api/migrations/1796083200009
 import { AddCoarsePartToCurves1796083200010 } from '#api/migrations/1796083200010-add-coarse-part-to-curves.ts'
 import { CreateGauges1796083200012 } from '#api/migrations/1796083200012-create-gauges.ts'
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
+import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
 
 export const groundMigrations = [
   CreateSitePlan1796083200006,
@@ -14,4 +15,5 @@ export const groundMigrations = [
   AddCoarsePartToCurves1796083200010,
   CreateGauges1796083200012,
   KeepVerdicts1796083200015,
+  CreateOnePointChecks1796083200016,
 ]

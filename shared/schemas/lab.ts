@@ -59,7 +59,7 @@ export const approveCurveSchema = z.object({
 })
 export type CurveUse = z.infer<typeof approveCurveSchema>['use']
 
-const pairSchema = z.object({ maxDryDensity: z.number(), optimumMoisture: z.number() })
+export const pairSchema = z.object({ maxDryDensity: z.number(), optimumMoisture: z.number() })
 export const curveSchema = createCurveSchema.extend({
   materialName: z.string(),
   status: z.enum(['draft', 'approved', 'superseded']),
