@@ -11,6 +11,7 @@ export const CHANGED_RESOURCES = [
   'curve',
   'one-point',
   'material',
+  'calibration',
   'gauge',
   'zone',
   'member',

@@ -1,5 +1,6 @@
 import { AllocationEntity } from '#api/entities/allocation.entity.ts'
 import { BorrowMaterialEntity } from '#api/entities/borrow-material.entity.ts'
+import { CalibrationEntity } from '#api/entities/calibration.entity.ts'
 import { CellEntity } from '#api/entities/cell.entity.ts'
 import { CellLiftEntity } from '#api/entities/cell-lift.entity.ts'
 import { DispositionEntity } from '#api/entities/disposition.entity.ts'
@@ -37,6 +38,7 @@ export const groundEntities = [
   CellLiftEntity,
   LiftTotalEntity,
   BorrowMaterialEntity,
+  CalibrationEntity,
   ReferenceCurveEntity,
   OnePointCheckEntity,
   LotEntity,

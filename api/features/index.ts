@@ -1,5 +1,6 @@
 import type { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
+import { calibrationRoutes } from '#api/features/calibrations/calibrations.routes.ts'
 import { dispositionRoutes } from '#api/features/dispositions/dispositions.routes.ts'
 import { eventRoutes } from '#api/features/events/events.routes.ts'
 import { gaugeRoutes } from '#api/features/gauges/gauges.routes.ts'
@@ -24,6 +25,7 @@ export const apiFeatures: readonly ((deps: Deps) => Router)[] = [sitesRoutes]
 export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   siteRoutes,
   labRoutes,
+  calibrationRoutes,
   onePointRoutes,
   gaugeRoutes,
   memberRoutes,

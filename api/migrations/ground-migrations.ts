@@ -3,6 +3,7 @@ import { CreateDerivedGround1796083200007 } from '#api/migrations/1796083200007-
 import { CreateGroundFacts1796083200008 } from '#api/migrations/1796083200008-create-ground-facts.ts'
 import { CreateTestsAndStakes1796083200009 } from '#api/migrations/1796083200009-create-tests-and-stakes.ts'
 import { AddCoarsePartToCurves1796083200010 } from '#api/migrations/1796083200010-add-coarse-part-to-curves.ts'
+import { CreateCalibrations1796083200011 } from '#api/migrations/1796083200011-create-calibrations.ts'
 import { CreateGauges1796083200012 } from '#api/migrations/1796083200012-create-gauges.ts'
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
 import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
@@ -13,6 +14,7 @@ export const groundMigrations = [
   CreateGroundFacts1796083200008,
   CreateTestsAndStakes1796083200009,
   AddCoarsePartToCurves1796083200010,
+  CreateCalibrations1796083200011,
   CreateGauges1796083200012,
   KeepVerdicts1796083200015,
   CreateOnePointChecks1796083200016,

@@ -3,14 +3,18 @@ import type { WallOffset } from '#shared/domain/wall-offset.ts'
 import type { DensityUnit } from '#shared/units/density.ts'
 import type { LengthUnit } from '#shared/units/length.ts'
 import type { MassUnit } from '#shared/units/mass.ts'
+import type { VolumeUnit } from '#shared/units/volume.ts'
 
 /** Oven (D2216) or microwave (D4643): the three weighings of a tin. */
 export type TinMoistureSheet = {
   readonly method: 'oven' | 'microwave'
   readonly massUnit: MassUnit
   readonly wetAndTin: number
+  /** the last weighing, at constant mass */
   readonly dryAndTin: number
   readonly tin: number
+  /** weighings between wet and the last, oldest first, by which constant mass is seen; left out where none was written down */
+  readonly earlier?: readonly number[] | undefined
 }
 
 /** Calcium carbide pressure tester (D4944): the dial reads percent of the *wet* mass. */
@@ -34,8 +38,11 @@ export type StatedMoistureSheet = { readonly method: 'stated'; readonly percent:
 export type MoistureSheet = TinMoistureSheet | CarbideMoistureSheet | GaugeMoistureSheet | StatedMoistureSheet
 export type MoistureMethod = MoistureSheet['method']
 
+/** The calibrations of the apparatus whose values stand in a sheet, by their ids; the values themselves are kept beside. */
+type Calibrated = { readonly calibrationIds?: readonly string[] | undefined }
+
 /** Sand cone (D1556): weighings of the apparatus and of the soil dug, and the sand's bulk density. */
-export type SandConeSheet = {
+export type SandConeSheet = Calibrated & {
   readonly method: 'sand-cone'
   readonly massUnit: MassUnit
   readonly apparatusBefore: number
@@ -47,6 +54,35 @@ export type SandConeSheet = {
   /** Largest particle seen in the hole, in `lengthUnit`; left out where it was not looked at. */
   readonly largestParticle?: number | undefined
   readonly lengthUnit?: LengthUnit | undefined
+  readonly moisture: MoistureSheet
+}
+
+/** Rubber balloon (D2167): the volume indicator on the plate before digging and with the balloon in the hole. */
+export type RubberBalloonSheet = Calibrated & {
+  readonly method: 'rubber-balloon'
+  readonly volumeUnit: VolumeUnit
+  readonly volumeBefore: number
+  readonly volumeAfter: number
+  readonly massUnit: MassUnit
+  readonly moistSoil: number
+  readonly largestParticle?: number | undefined
+  readonly lengthUnit: LengthUnit
+  readonly moisture: MoistureSheet
+}
+
+/** Drive cylinder (D2937): weighings with and without the soil, and the volume stated or by inner diameter and height. */
+export type DriveCylinderSheet = Calibrated & {
+  readonly method: 'drive-cylinder'
+  readonly massUnit: MassUnit
+  readonly cylinderAndSoil: number
+  readonly cylinder: number
+  readonly volumeBy: 'stated' | 'measured'
+  readonly volumeUnit: VolumeUnit
+  readonly volume?: number | undefined
+  readonly lengthUnit: LengthUnit
+  readonly diameter?: number | undefined
+  readonly height?: number | undefined
+  readonly largestParticle?: number | undefined
   readonly moisture: MoistureSheet
 }
 
@@ -86,7 +122,7 @@ export type PlainSheet = {
 }
 
 /** A field test as it was read, values in the units named beside them. */
-export type RawSheet = SandConeSheet | NuclearGaugeSheet | PlainSheet
+export type RawSheet = SandConeSheet | RubberBalloonSheet | DriveCylinderSheet | NuclearGaugeSheet | PlainSheet
 export type FieldMethod = RawSheet['method']
 
 /** What a sheet comes to. Densities kg/m³, moisture percent of dry mass; all unrounded. */

@@ -1,9 +1,12 @@
 import { GREATEST_DENSITY, LEAST_DENSITY } from '#shared/domain/curve-checks.ts'
+import { dryingFlags, dryingProblems } from '#shared/domain/constant-mass.ts'
+import { reduceDriveCylinder } from '#shared/domain/drive-cylinder.ts'
 import type { MoistureSheet, PlainSheet, RawSheet, SheetReduction } from '#shared/domain/field-sheets.ts'
 import { moistureFromCarbide, moistureFromGauge, moistureFromTin, tinProblems } from '#shared/domain/moisture.ts'
 import { reduceNuclearGauge } from '#shared/domain/nuclear-gauge.ts'
 import { dryDensityOf, wetDensityOf } from '#shared/domain/phase-relations.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
+import { reduceRubberBalloon } from '#shared/domain/rubber-balloon.ts'
 import { reduceSandCone } from '#shared/domain/sand-cone.ts'
 import { moistureBesideWall, wallOffsetFlags } from '#shared/domain/wall-offset.ts'
 import { convertDensity } from '#shared/units/density.ts'
@@ -62,6 +65,10 @@ function wetDensityOfSheet(sheet: RawSheet): Density {
   switch (sheet.method) {
     case 'sand-cone':
       return reduceSandCone(sheet)
+    case 'rubber-balloon':
+      return reduceRubberBalloon(sheet)
+    case 'drive-cylinder':
+      return reduceDriveCylinder(sheet)
     case 'nuclear-gauge':
       return reduceNuclearGauge(sheet)
     case 'plain': {
@@ -95,11 +102,19 @@ function reduceDryEntry(sheet: PlainSheet): SheetReduction {
   return { ok: true, wetDensity, moisture: moisture.percent, dryDensity, flags: moisture.flags }
 }
 
+/** Where a density that no soil has is said, and what to look at. */
+const ABSURD: Readonly<Record<RawSheet['method'], { readonly field: string; readonly check: string }>> = {
+  'sand-cone': { field: 'moistSoil', check: 'Check the masses and the sand density.' },
+  'rubber-balloon': { field: 'moistSoil', check: 'Check the mass, the two readings and their units.' },
+  'drive-cylinder': { field: 'cylinderAndSoil', check: 'Check the masses, the volume and their units.' },
+  'nuclear-gauge': { field: 'wetDensity', check: 'Check the value and its unit.' },
+  plain: { field: 'density', check: 'Check the value and its unit.' },
+}
+
 function absurdDensity(sheet: RawSheet, density: number): FieldProblem | null {
   if (density >= LEAST_DENSITY && density <= GREATEST_DENSITY) return null
-  const field = { 'sand-cone': 'moistSoil', 'nuclear-gauge': 'wetDensity', plain: 'density' }[sheet.method]
+  const { field, check } = ABSURD[sheet.method]
   const compared = density < LEAST_DENSITY ? 'lighter than any soil' : 'heavier than solid rock'
-  const check = sheet.method === 'sand-cone' ? 'Check the masses and the sand density.' : 'Check the value and its unit.'
   return { field, code: 'density-absurd', message: `The density comes to ${densityText(density)}, ${compared}. ${check}` }
 }
 
@@ -124,7 +139,8 @@ function reduceMoisture(sheet: MoistureSheet, wetDensity: number | null): Moistu
     case 'oven':
     case 'microwave': {
       const problems = tinProblems(sheet, 'moisture', sheet.massUnit)
-      return problems.length > 0 ? { ok: false, problems } : { ok: true, percent: moistureFromTin(sheet), flags: [] }
+      if (problems.length === 0) problems.push(...dryingProblems(sheet, 'moisture'))
+      return problems.length > 0 ? { ok: false, problems } : { ok: true, percent: moistureFromTin(sheet), flags: dryingFlags(sheet) }
     }
     case 'carbide': {
       const reading = sheet.readingPercent

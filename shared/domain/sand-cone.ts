@@ -1,19 +1,9 @@
 import type { SandConeSheet } from '#shared/domain/field-sheets.ts'
+import { holeFlags, particleProblems } from '#shared/domain/hole-limits.ts'
+import { readingProblems } from '#shared/domain/reading-problems.ts'
 import type { FieldProblem, Reason } from '#shared/domain/result.ts'
 import { convertDensity } from '#shared/units/density.ts'
-import { convertLength } from '#shared/units/length.ts'
 import { convertMass } from '#shared/units/mass.ts'
-
-/** Above this the method gives way to the larger-hole methods (D1556 scope: 0.1 ft³, 2830 cm³; particles 1½ in). */
-const GREATEST_HOLE_CM3 = 2830
-const GREATEST_PARTICLE_MM = 38.1
-
-/** Least hole volume, cm³, for the largest particle, mm, after the table of D1556. */
-const LEAST_HOLE = [
-  { particleMm: 12.7, cm3: 1415 },
-  { particleMm: 25.4, cm3: 2125 },
-  { particleMm: GREATEST_PARTICLE_MM, cm3: 2830 },
-] as const
 
 /**
  * The hole and its wet density by the sand cone (D1556, T 191): sand in the hole = before − after − cone and plate;
@@ -31,30 +21,20 @@ export function reduceSandCone(
   const sandInHole = grams(sheet.apparatusBefore) - grams(sheet.apparatusAfter) - grams(sheet.coneAndPlate)
   const holeVolumeCm3 = sandInHole / convertDensity(sheet.sandDensity, sheet.densityUnit, 'g/cm3')
   const wetDensity = (1000 * grams(sheet.moistSoil)) / holeVolumeCm3
-  return { ok: true, wetDensity, holeVolumeCm3, flags: holeFlags(sheet, holeVolumeCm3) }
+  return { ok: true, wetDensity, holeVolumeCm3, flags: holeFlags('sand-cone', sheet, holeVolumeCm3) }
 }
 
-const FIELDS = [
-  ['apparatusBefore', 'apparatus and sand before'],
-  ['apparatusAfter', 'apparatus and sand after'],
-  ['coneAndPlate', 'sand in cone and plate'],
-  ['sandDensity', 'bulk density of the sand'],
-  ['moistSoil', 'moist soil from the hole'],
-] as const
-
 function sandConeProblems(sheet: SandConeSheet): FieldProblem[] {
-  const problems: FieldProblem[] = []
-  for (const [field, name] of FIELDS) {
-    const value = sheet[field]
-    if (!Number.isFinite(value)) problems.push({ field, code: 'missing', message: `Enter the ${name}.` })
-    else if (value < 0) problems.push({ field, code: 'negative', message: `The ${name} cannot be below zero.` })
-    else if (value === 0 && (field === 'sandDensity' || field === 'moistSoil')) {
-      problems.push({ field, code: 'not-positive', message: `The ${name} must be above zero.` })
-    }
-  }
-  if (sheet.largestParticle !== undefined && !(sheet.largestParticle >= 0 && Number.isFinite(sheet.largestParticle))) {
-    problems.push({ field: 'largestParticle', code: 'negative', message: 'The largest particle must be zero or more, or left out.' })
-  }
+  const problems = [
+    ...readingProblems([
+      { field: 'apparatusBefore', name: 'apparatus and sand before', value: sheet.apparatusBefore, mayBeZero: true },
+      { field: 'apparatusAfter', name: 'apparatus and sand after', value: sheet.apparatusAfter, mayBeZero: true },
+      { field: 'coneAndPlate', name: 'sand in cone and plate', value: sheet.coneAndPlate, mayBeZero: true },
+      { field: 'sandDensity', name: 'bulk density of the sand', value: sheet.sandDensity },
+      { field: 'moistSoil', name: 'moist soil from the hole', value: sheet.moistSoil },
+    ]),
+    ...particleProblems(sheet),
+  ]
   if (problems.length > 0) return problems
 
   const { apparatusBefore, apparatusAfter, coneAndPlate, massUnit } = sheet
@@ -77,22 +57,4 @@ function sandConeProblems(sheet: SandConeSheet): FieldProblem[] {
     }]
   }
   return []
-}
-
-function holeFlags(sheet: SandConeSheet, holeVolumeCm3: number): Reason[] {
-  const flags: Reason[] = []
-  const particleMm =
-    sheet.largestParticle === undefined ? 0 : convertLength(sheet.largestParticle, sheet.lengthUnit ?? 'mm', 'mm')
-  const least = LEAST_HOLE.find((row) => particleMm <= row.particleMm + 1e-9) ?? LEAST_HOLE[2]
-  const size = `${Math.round(holeVolumeCm3)}\u2009cm³`
-  if (particleMm > GREATEST_PARTICLE_MM + 1e-9) {
-    flags.push({ code: 'particle-large', message: 'Particles above 38\u2009mm (1½\u2009in) are outside D1556. Use a method for larger holes.' })
-  }
-  if (holeVolumeCm3 < least.cm3) {
-    flags.push({ code: 'hole-small', message: `The hole (${size}) is smaller than D1556 advises for this particle size (${least.cm3}\u2009cm³).` })
-  }
-  if (holeVolumeCm3 > GREATEST_HOLE_CM3 * 1.001) {
-    flags.push({ code: 'hole-large', message: `The hole (${size}) is larger than D1556 covers (${GREATEST_HOLE_CM3}\u2009cm³).` })
-  }
-  return flags
 }

@@ -5,6 +5,7 @@ import { toast } from 'sonner'
 import type { ChangedResource, MembershipChangedEvent, ServerEvent } from '#shared/realtime.ts'
 import { paths } from '#web/app/paths.ts'
 import { groundChanged } from '#web/data/board/cache-effects.ts'
+import { calibrationChanged } from '#web/data/calibration/cache-effects.ts'
 import { curveChanged } from '#web/data/curve/cache-effects.ts'
 import { dispositionChanged } from '#web/data/disposition/cache-effects.ts'
 import { gaugeChanged } from '#web/data/gauge/cache-effects.ts'
@@ -35,6 +36,7 @@ const EFFECTS: Readonly<Record<ChangedResource, (client: QueryClient, siteId: st
   curve: curveChanged,
   'one-point': onePointChanged,
   material: materialChanged,
+  calibration: calibrationChanged,
   gauge: gaugeChanged,
   zone: siteChanged,
   member: memberChanged,

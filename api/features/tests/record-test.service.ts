@@ -1,6 +1,7 @@
 import { FieldTestEntity } from '#api/entities/field-test.entity.ts'
 import type { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
 import { TestMarkEntity } from '#api/entities/test-mark.entity.ts'
+import { calibrationFlags } from '#api/features/calibrations/used-calibrations.ts'
 import { changeGround, deriveLotNow } from '#api/features/ground/change-ground.ts'
 import { withdrawOrder } from '#api/features/ground/order-records.ts'
 import { orderNumber } from '#api/features/ground/order-steps.ts'
@@ -80,6 +81,7 @@ async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, i
   const refuted = order && chain ? refutes(chain, { ...input, verdict, elsewhere: chainFlags.length > 0 }) : null
   const flags: Reason[] = [
     ...reduced.flags,
+    ...(await calibrationFlags(manager, siteId, input.sheet, sampledAt)),
     ...liftFlags,
     ...chainFlags,
     ...stakes.flags,
