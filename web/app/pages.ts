@@ -95,6 +95,13 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/lab/one-point/one-point-page.tsx')).OnePointPage,
   },
   {
+    path: PATTERNS.rejudge,
+    title: 'Judge again',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/lab/rejudge/rejudge-page.tsx')).RejudgePage,
+  },
+  {
     path: PATTERNS.gauges,
     title: 'Gauges',
     open: 'site',

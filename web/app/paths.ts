@@ -12,6 +12,7 @@ export const PATTERNS = {
   reworkOrder: '/sites/:siteId/rework/:orderId',
   lab: '/sites/:siteId/lab',
   onePoint: '/sites/:siteId/lab/one-point',
+  rejudge: '/sites/:siteId/lab/curves/:curveId/rejudge',
   gauges: '/sites/:siteId/lab/gauges',
   calibrations: '/sites/:siteId/lab/calibrations',
   parts: '/parts',
@@ -34,6 +35,8 @@ export const paths = {
   reworkOrder: (siteId: string, orderId: string) => `${site(siteId)}/rework/${encodeURIComponent(orderId)}`,
   lab: (siteId: string) => `${site(siteId)}/lab`,
   onePoint: (siteId: string) => `${site(siteId)}/lab/one-point`,
+  /** superseding a curve, and judging its tests again */
+  rejudge: (siteId: string, curveId: string) => `${site(siteId)}/lab/curves/${encodeURIComponent(curveId)}/rejudge`,
   gauges: (siteId: string) => `${site(siteId)}/lab/gauges`,
   calibrations: (siteId: string) => `${site(siteId)}/lab/calibrations`,
   parts: () => PATTERNS.parts,

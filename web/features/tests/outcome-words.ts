@@ -1,19 +1,13 @@
 import type { GroundState } from '#shared/domain/ground-state.ts'
 import type { MoistureMethod } from '#shared/domain/field-sheets.ts'
 import type { Purpose, TestSummary } from '#shared/schemas/field-test.ts'
-import type { TestOutcome } from '#web/components/ui/test-mark.tsx'
 
-type Judged = Pick<TestSummary, 'outcome' | 'near' | 'treatedAsFail'>
+export { markOf, resultWord } from '#web/components/ui/test-outcome.ts'
 
-/** The mark that a result is drawn with. */
-export function markOf({ outcome, near }: Pick<Judged, 'outcome' | 'near'>): TestOutcome {
-  if (outcome === 'fail') return 'fails'
-  if (outcome === 'suspect') return 'suspect'
-  return near ? 'near' : 'passes'
-}
+type Judged = Pick<TestSummary, 'outcome' | 'treatedAsFail'>
 
 /** The state a result puts its ground into. */
-export function groundOf({ outcome, treatedAsFail }: Pick<Judged, 'outcome' | 'treatedAsFail'>): GroundState {
+export function groundOf({ outcome, treatedAsFail }: Judged): GroundState {
   if (outcome === 'fail' || treatedAsFail) return 'rework'
   return outcome === 'suspect' ? 'suspect' : 'meets-spec'
 }
@@ -42,11 +36,4 @@ export const PURPOSE_WORDS: Readonly<Record<Purpose, { readonly name: string; re
 /** "1 cell", "9 cells". */
 export function countOf(n: number, word: string): string {
   return `${n.toLocaleString('en-US')} ${word}${n === 1 ? '' : 's'}`
-}
-
-/** The word of a register's last column. */
-export function resultWord({ outcome, near, treatedAsFail, headline }: Judged & { readonly headline: string }): string {
-  if (outcome === 'suspect') return treatedAsFail ? 'Suspect, below limit' : 'Suspect'
-  if (outcome === 'pass') return near ? 'Meets spec, near' : 'Meets spec'
-  return headline.split(',')[0] ?? headline
 }

@@ -22,6 +22,7 @@ import { TestEvents } from './saved/test-events.tsx'
 import { TestNotices } from './saved/test-notices.tsx'
 import { TestPlace, TestReach } from './saved/test-place.tsx'
 import { TestVerdict } from './saved/test-verdict.tsx'
+import { VerdictHistory } from './saved/verdict-history.tsx'
 import './saved/print.css'
 
 /** One test: its verdict, raw sheet, frozen limits, place, chain and audit trail. */
@@ -101,6 +102,7 @@ function TestSheet({ test }: { test: TestDetail }) {
               <p className="m-0 break-words whitespace-pre-wrap">{test.remarks}</p>
             </SheetSection>
           )}
+          <VerdictHistory test={test} />
           <TestChain test={test} />
           <TestEvents testId={test.id} />
         </div>

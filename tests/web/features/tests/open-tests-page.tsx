@@ -166,6 +166,7 @@ export function answerSheet({ preview, curves = [buildCurve()] }: { preview?: Pa
       return HttpResponse.json(saved, { status: 201 })
     }),
     http.get(`${ADDRESS}/tests/:id`, () => HttpResponse.json(buildDetail())),
+    http.get(`${ADDRESS}/tests/:id/verdicts`, () => HttpResponse.json({ verdicts: [] })),
     http.get(`${ADDRESS}/events`, () => HttpResponse.json({ events: [], next: null })),
   )
   return sent

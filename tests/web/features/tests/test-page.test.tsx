@@ -57,6 +57,19 @@ describe('the sheet of a saved test', () => {
     expect((await screen.findByRole('link', { name: 'Run it again' })).getAttribute('href')).toMatch(/kind=rerun$/)
   })
 
+  it('shows every verdict of a test that was judged again, the one in force first', async () => {
+    const { verdict } = buildDetail()
+    const kept = { curve: { id: 'k', code: 'RB-3' }, verdict, marks: [{ kind: 'fail', cells: [5] }], judgedAt: '2026-12-01T20:30:00.000Z', judgedBy: USER, reason: null }
+    const again = { ...kept, version: 2, current: true, curve: { id: 'l', code: 'RB-4' }, verdict: { ...verdict, outcome: 'pass', headline: 'Meets spec', rc: 96.1 }, marks: [], reason: 'New curve of the pit' }
+    answer()
+    apiStandIn.use(http.get(`${ADDRESS}/tests/:id/verdicts`, () => HttpResponse.json({ verdicts: [{ ...kept, version: 1, current: false }, again] })))
+    openTestsPage(PAGE)
+    const heading = await screen.findByRole('heading', { name: 'Verdicts' })
+    const [first, second] = within(heading.closest('section') ?? document.body).getAllByRole('listitem')
+    expect(first?.textContent).toMatch(/Meets spec.*By RB-4: 96\.1.*Judged again: New curve of the pit.*in force/)
+    expect(second?.textContent).toMatch(/Too loose.*By RB-3: 92\.8.*marked for rework.*As recorded.*no\. 1/)
+  })
+
   it('voids only with a reason, says what follows, and gives the focus back', async () => {
     answer()
     const reasons: unknown[] = []

@@ -5,6 +5,7 @@ import { FactsRow } from '#web/components/ui/figure.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
 import { ApproveDialog } from './approve-dialog.tsx'
 import { CurvePlot } from './curve-plot.tsx'
+import { CurveSuccession } from './curve-succession.tsx'
 import { FitsTable, FitWarnings } from './fits-table.tsx'
 import { pairWords, sieveWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 
@@ -41,6 +42,7 @@ export function CurveSheet({ curve }: { curve: Curve }) {
         {curve.approvedBy !== null && curve.approvedAt !== null && ` by ${curve.approvedBy} on ${units.fullDate(curve.approvedAt)}`}. Recorded by {curve.recordedBy}.{' '}
         {curve.testsJudged === 0 ? 'No test was judged by it yet.' : `${curve.testsJudged} ${curve.testsJudged === 1 ? 'test was' : 'tests were'} judged by it.`}
       </p>
+      <CurveSuccession curve={curve} />
       <p className="mt-1 mb-4 text-ink-2">
         {coarse === null
           ? `Its stones (kept on the ${sieveWords(curve.method, curve.procedure)}) are not known: a test with 5 % of them or more cannot be judged by it.`
