@@ -13,6 +13,7 @@ import type { CreateSite } from '#shared/schemas/site.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import { createCalendar } from '#seed/demo/demo-calendar.ts'
 import { Crew } from '#seed/demo/demo-crew.ts'
+import { GaugeLog } from '#seed/demo/demo-gauges.ts'
 import { demoShifts } from '#seed/demo/demo-panels.ts'
 import type { Shift } from '#seed/demo/demo-panels.ts'
 import { createPeople, DEMO_PEOPLE } from '#seed/demo/demo-people.ts'
@@ -59,22 +60,27 @@ export async function seedDemo(server: Deps): Promise<void> {
   await openSite(stage, emptySiteInput(chance), clock)
 
   const crew = new Crew({ deps, siteId: input.id, people, chance, setClock: (at) => (clock = at) })
+  const gauges = new GaugeLog({ deps, siteId: input.id, people, setClock: (at) => (clock = at) })
+  await gauges.open(firstDay)
   const plan = await crew.plan()
   const { pad, court, panels, ...today } = demoShifts(plan)
   for (const panel of panels) await crew.prepareFoundation(plan, plan.zones[panel.zone]?.id ?? '', panel.cells, firstDay.at(6.2))
   const fillOf = (shift: Shift): Fill => (shift.panel.zone === 1 && shift.lift < 7 ? fills.pitRun : fills.ridge)
-  const foreman = new Foreman({ plan, crew, chance, fillOf })
-  const carried = await playDays(foreman, calendar.days, pad, court)
+  const foreman = new Foreman({ plan, crew, chance, fillOf, gauges })
+  const carried = await playDays({ foreman, gauges }, calendar.days, pad, court)
+  await gauges.today(calendar.today, calendar.days.length)
   await playToday({ foreman, crew, plan, fillOf, day: calendar.today, carried, shifts: today })
+  await gauges.correct(calendar.today, fills.ridge.materialId)
 }
 
 type Failures = Awaited<ReturnType<Foreman['shift']>>
 
 /** Spreads each crew's shifts over the days; every failure is put right the next morning, the last day's are carried over. */
-async function playDays(foreman: Foreman, days: readonly { at(hour: number): Date }[], pad: readonly Shift[], court: readonly Shift[]): Promise<Failures> {
+async function playDays({ foreman, gauges }: { foreman: Foreman; gauges: GaugeLog }, days: readonly { at(hour: number): Date }[], pad: readonly Shift[], court: readonly Shift[]): Promise<Failures> {
   let failures: Failures = []
   let [padDone, courtDone] = [0, 0]
   for (const [index, day] of days.entries()) {
+    await gauges.countAll(day, index)
     for (const failure of failures) await foreman.rework(failure, day)
     failures = []
     await foreman.catchUp([...pad, ...court], day)

@@ -10,16 +10,16 @@ export interface Reading {
 
 const round = (value: number, decimals: number): number => Number(value.toFixed(decimals))
 
-/** What a gauge shows over ground of this density and moisture. */
-export function gaugeSheet({ dry, moisture }: Reading): CreateTest['sheet'] {
+/** What a gauge of the register shows over ground of this density and moisture. */
+export function gaugeSheet({ dry, moisture }: Reading, gaugeId: string): CreateTest['sheet'] {
   return {
     method: 'nuclear-gauge',
+    gaugeId,
     mode: 'direct-transmission',
     lengthUnit: 'in',
     rodDepth: 6,
     densityUnit: 'pcf',
     wetDensity: round(dry * (1 + moisture / 100), 1),
-    standardCounts: { density: 2_871, moisture: 641, referenceDensity: 2_868, referenceMoisture: 643 },
     moisture: { method: 'gauge', densityUnit: 'pcf', moistureDensity: round((dry * moisture) / 100, 1), correctionK: 0 },
   }
 }

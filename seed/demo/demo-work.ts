@@ -4,6 +4,7 @@ import type { Crew } from '#seed/demo/demo-crew.ts'
 import type { Day } from '#seed/demo/demo-calendar.ts'
 import type { Shift } from '#seed/demo/demo-panels.ts'
 import type { Chance } from '#seed/demo/demo-random.ts'
+import type { GaugeLog } from '#seed/demo/demo-gauges.ts'
 import { gaugeSheet, sandConeSheet } from '#seed/demo/demo-sheets.ts'
 import type { Reading } from '#seed/demo/demo-sheets.ts'
 import type { Stake } from '#shared/schemas/lot.ts'
@@ -41,6 +42,7 @@ export interface Work {
   readonly crew: Crew
   readonly chance: Chance
   readonly fillOf: (shift: Shift) => Fill
+  readonly gauges: Pick<GaugeLog, 'main' | 'spare'>
 }
 
 /** Plays shifts: fill in the morning, stakes and tests after noon, release before the day ends; failures wait for next morning. */
@@ -71,7 +73,7 @@ export class Foreman {
   }
 
   sheet(reading: Reading) {
-    return this.tests % SAND_CONE_EVERY === 0 ? sandConeSheet(reading, this.work.chance) : gaugeSheet(reading)
+    return this.tests % SAND_CONE_EVERY === 0 ? sandConeSheet(reading, this.work.chance) : gaugeSheet(reading, this.work.gauges.main)
   }
 
   async place(shift: Shift, at: Date): Promise<string[]> {
@@ -123,9 +125,10 @@ export class Foreman {
   }
 
   private async extraTest(shift: Shift, near: Stake, at: Date, purpose: 'verification' | 'judgement'): Promise<void> {
-    const fill = this.work.fillOf(shift)
+    const { crew, gauges, fillOf } = this.work
+    const fill = fillOf(shift)
     const place = { easting: near.easting + 6, northing: near.northing + 4 }
-    await this.work.crew.test({ ...this.where(shift), curveId: fill.curveId, place, at, purpose, sheet: gaugeSheet(this.reading(fill)) })
+    await crew.test({ ...this.where(shift), curveId: fill.curveId, place, at, purpose, sheet: gaugeSheet(this.reading(fill), purpose === 'verification' ? gauges.spare : gauges.main) })
   }
 
   /** Next morning: the order is worked, reported and retested, and the ground released. */
@@ -141,7 +144,7 @@ export class Foreman {
         curveId: fill.curveId,
         place: point,
         at: day.at(9.6 + 0.3 * index),
-        sheet: gaugeSheet(reading),
+        sheet: gaugeSheet(reading, this.work.gauges.main),
         follows: index === 0 ? { testId, kind: 'retest' } : null,
       })
     }

@@ -3,6 +3,9 @@ import type { DataSource } from 'typeorm'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { createDataSource } from '#api/data-source.ts'
 import { readEnv } from '#api/env.ts'
+import { loadGaugeChecks } from '#api/features/gauges/gauge-checks.queries.ts'
+import type { GaugeTest } from '#api/features/gauges/gauge-checks.queries.ts'
+import { listGauges, loadGaugeDetail } from '#api/features/gauges/gauges.queries.ts'
 import { loadBoard } from '#api/features/ground/board.queries.ts'
 import { findDifferences } from '#api/features/ground/recompute.queries.ts'
 import { loadSitePlan } from '#api/features/ground/site-plan.ts'
@@ -76,6 +79,21 @@ describe('the demo', () => {
     expect(board.totals.testsOwed).toBeGreaterThan(0)
     expect(board.totals.openOrders).toBe(2)
     expect(board.exceptions.map((exception) => exception.kind)).toContain('covered-early')
+  })
+
+  it('names a gauge in every gauge test, each with a good count on its day', async () => {
+    const { manager } = demo.dataSource
+    const byGauge: GaugeTest[] = await manager.query('SELECT `id`, `gauge_id` AS `gaugeId`, `sampled_at` AS `sampledAt` FROM `field_test` WHERE `site_id` = ? AND `method` = ?', [demo.siteId, 'nuclear-gauge'])
+    expect(byGauge.length).toBeGreaterThan(150)
+    const checks = await loadGaugeChecks(manager, demo.siteId, byGauge)
+    expect([...checks.values()].filter((gauge) => gauge.state !== 'good')).toEqual([])
+    const gauges = await listGauges(manager, demo.siteId, NOW)
+    expect(gauges.map((gauge) => [gauge.serial, gauge.check.state, gauge.corrections.length])).toEqual([['G-41', 'good', 1], ['G-58', 'not-counted', 0]])
+    const [main] = gauges
+    const { counts } = await loadGaugeDetail(manager, demo.siteId, main?.id ?? '', NOW)
+    expect(counts.filter((count) => count.void === null && !count.good).map((count) => count.stands)).toEqual([false])
+    expect(counts.filter((count) => count.void !== null)).toHaveLength(1)
+    expect(counts.filter((count) => count.stands && count.good)).toHaveLength(37)
   })
 
   it('adds up: board, lots, lifts, zones and sheet say the same', async () => {
