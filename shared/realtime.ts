@@ -17,6 +17,7 @@ export const CHANGED_RESOURCES = [
   'member',
   'inspection',
   'disposition',
+  'view',
   'site',
 ] as const
 

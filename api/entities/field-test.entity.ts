@@ -9,6 +9,8 @@ import type { Purpose } from '#shared/schemas/field-test.ts'
 @Index('ix_field_test_place', ['siteId', 'lift', 'cell'])
 @Index('ix_field_test_chain', ['siteId', 'chainId'])
 @Index('ix_field_test_sampled', ['siteId', 'sampledAt'])
+@Index('ix_field_test_outcome', ['siteId', 'outcome'])
+@Index('ix_field_test_recorder', ['siteId', 'recordedBy'])
 @Unique('uq_field_test_number', ['siteId', 'number'])
 @Unique('uq_field_test_seq', ['siteId', 'seq'])
 @ForeignKey('ZoneEntity', ['siteId', 'zoneId'], ['siteId', 'id'], { name: 'fk_field_test_zone' })

@@ -3,6 +3,7 @@ import { BorrowMaterialEntity } from '#api/entities/borrow-material.entity.ts'
 import { CalibrationEntity } from '#api/entities/calibration.entity.ts'
 import { CellEntity } from '#api/entities/cell.entity.ts'
 import { CellLiftEntity } from '#api/entities/cell-lift.entity.ts'
+import { DefaultViewEntity } from '#api/entities/default-view.entity.ts'
 import { DispositionEntity } from '#api/entities/disposition.entity.ts'
 import { DispositionCellEntity } from '#api/entities/disposition-cell.entity.ts'
 import { FieldTestEntity } from '#api/entities/field-test.entity.ts'
@@ -23,6 +24,7 @@ import { ReleaseCellEntity } from '#api/entities/release-cell.entity.ts'
 import { ReworkCellEntity } from '#api/entities/rework-cell.entity.ts'
 import { ReworkOrderEntity } from '#api/entities/rework-order.entity.ts'
 import { ReworkStepEntity } from '#api/entities/rework-step.entity.ts'
+import { SavedViewEntity } from '#api/entities/saved-view.entity.ts'
 import { SpecificationEntity } from '#api/entities/specification.entity.ts'
 import { StakeEntity } from '#api/entities/stake.entity.ts'
 import { StandardCountEntity } from '#api/entities/standard-count.entity.ts'
@@ -63,4 +65,6 @@ export const groundEntities = [
   GaugeOutageEntity,
   StandardCountEntity,
   GaugeCorrectionEntity,
+  SavedViewEntity,
+  DefaultViewEntity,
 ]

@@ -17,6 +17,7 @@ import { reworkRoutes } from '#api/features/rework/rework.routes.ts'
 import { siteRoutes, sitesRoutes } from '#api/features/sites/sites.routes.ts'
 import { stakeRoutes } from '#api/features/stakes/stakes.routes.ts'
 import { testRoutes } from '#api/features/tests/tests.routes.ts'
+import { viewRoutes } from '#api/features/views/views.routes.ts'
 
 /** Routers mounted at /api, for a signed-in person and no site in particular. */
 export const apiFeatures: readonly ((deps: Deps) => Router)[] = [sitesRoutes]
@@ -40,4 +41,5 @@ export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   reworkRoutes,
   releaseRoutes,
   dispositionRoutes,
+  viewRoutes,
 ]

@@ -7,6 +7,7 @@ import { CreateCalibrations1796083200011 } from '#api/migrations/1796083200011-c
 import { CreateGauges1796083200012 } from '#api/migrations/1796083200012-create-gauges.ts'
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
 import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
+import { CreateSavedViews1796083200017 } from '#api/migrations/1796083200017-create-saved-views.ts'
 
 export const groundMigrations = [
   CreateSitePlan1796083200006,
@@ -18,4 +19,5 @@ export const groundMigrations = [
   CreateGauges1796083200012,
   KeepVerdicts1796083200015,
   CreateOnePointChecks1796083200016,
+  CreateSavedViews1796083200017,
 ]

@@ -40,7 +40,12 @@ const POLICY = {
   /** photos and documents; on a verification test only the owner's, on all else only the contractor's */
   'file.attach': ['qc-lead', 'technician', 'owner-rep'],
   'file.withdraw': ['qc-lead', 'owner-rep'],
+  /** keep views of a register for oneself */
   'view.save': OFFICE,
+  /** show a view to everybody who sees the registers */
+  'view.share': QC,
+  /** change a shared view of somebody else */
+  'view.edit-shared': LEAD,
   'stake.draw': QC,
   'lot.edit': LEAD,
   'rework.issue': LEAD,

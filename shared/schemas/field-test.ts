@@ -114,18 +114,6 @@ export const testSummarySchema = z.object({
 })
 export type TestSummary = z.infer<typeof testSummarySchema>
 export const testListSchema = z.object({ tests: z.array(testSummarySchema), total: z.number() })
-export const testQuerySchema = z.object({
-  zoneId: z.string().optional(),
-  lift: z.coerce.number().int().optional(),
-  cell: z.coerce.number().int().optional(),
-  lotId: z.string().optional(),
-  outcome: outcomeSchema.optional(),
-  current: z.enum(['true', 'false']).optional(),
-  search: z.string().max(40).optional(),
-  offset: z.coerce.number().int().min(0).max(1e6).default(0),
-  limit: z.coerce.number().int().min(1).max(5_000).default(100),
-})
-export type TestQuery = z.infer<typeof testQuerySchema>
 
 export const testDetailSchema = testSummarySchema.extend({
   follows: z.object({ testId: z.string(), kind: z.enum(['retest', 'rerun']) }).nullable(),

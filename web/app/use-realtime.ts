@@ -22,6 +22,7 @@ import { membershipChanged, membershipLost, siteChanged } from '#web/data/site/c
 import { isSiteCells, siteQueries } from '#web/data/site/queries.ts'
 import { stakeChanged } from '#web/data/stake/cache-effects.ts'
 import { testChanged } from '#web/data/test/cache-effects.ts'
+import { viewChanged } from '#web/data/view/cache-effects.ts'
 import { sessionQueries } from '#web/features/session/queries.ts'
 import { live } from '#web/lib/live/live-client.ts'
 import { forgetGround } from '#web/lib/use-ground.ts'
@@ -42,6 +43,7 @@ const EFFECTS: Readonly<Record<ChangedResource, (client: QueryClient, siteId: st
   member: memberChanged,
   inspection: inspectionChanged,
   disposition: dispositionChanged,
+  view: viewChanged,
   site: siteChanged,
 }
 

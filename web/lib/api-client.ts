@@ -3,7 +3,8 @@ import { meResponseSchema } from '#shared/schemas/session.ts'
 import { ApiError, errorBodySchema } from './api-error.ts'
 
 type Method = 'GET' | 'POST' | 'PUT' | 'PATCH' | 'DELETE'
-type Query = Readonly<Record<string, string | number | boolean | null | undefined>>
+/** Several values of one name travel joined by commas. */
+type Query = Readonly<Record<string, string | number | boolean | readonly string[] | null | undefined>>
 
 export type ApiRequest = {
   readonly method?: Method

@@ -1,14 +1,18 @@
 import type { EntityManager } from 'typeorm'
 import { loadGaugeChecks, USES_GAUGE } from '#api/features/gauges/gauge-checks.queries.ts'
-import type { TestQuery, TestSummary } from '#shared/schemas/field-test.ts'
+import { LOT } from '#api/features/tests/register-columns.ts'
+import { stepFor } from '#shared/domain/limits.ts'
+import type { Reason } from '#shared/domain/result.ts'
+import type { Verdict } from '#shared/domain/verdict-types.ts'
 import type { TestGauge } from '#shared/schemas/gauge.ts'
+import type { RegisterTest } from '#shared/schemas/test-register.ts'
 
-interface SummaryRow {
+interface Row {
   readonly id: string
   readonly number: string
   readonly seq: number
-  readonly purpose: TestSummary['purpose']
-  readonly method: TestSummary['method']
+  readonly purpose: RegisterTest['purpose']
+  readonly method: RegisterTest['method']
   readonly zone_id: string
   readonly lift: number
   readonly cell: number
@@ -20,7 +24,7 @@ interface SummaryRow {
   readonly recorder: string
   readonly curve_id: string
   readonly curve_code: string
-  readonly outcome: TestSummary['outcome']
+  readonly outcome: RegisterTest['outcome']
   readonly treated_as_fail: number
   readonly near: number
   readonly headline: string
@@ -31,9 +35,18 @@ interface SummaryRow {
   readonly current: number
   readonly superseded: number
   readonly voided_at: Date | null
-  readonly flag_count: number
   readonly uses_gauge: number
   readonly gauge_id: string | null
+  readonly follow_kind: RegisterTest['followKind']
+  readonly lot_name: string | null
+  readonly moisture_method: RegisterTest['moistureMethod']
+  readonly material_id: string
+  readonly material_name: string
+  readonly wet_density: number
+  readonly oversize_percent: string | null
+  readonly recorded_at: Date
+  readonly verdict: Verdict
+  readonly flags: readonly Reason[]
 }
 
 /** The last of a chain that is not void, as the ground reads it (lot-tests.queries.ts). */
@@ -44,60 +57,50 @@ export const CURRENT =
 export const SUPERSEDED =
   "EXISTS (SELECT 1 FROM `rework_cell` c JOIN `rework_order` o ON o.`site_id` = c.`site_id` AND o.`id` = c.`order_id` JOIN `rework_step` s ON s.`site_id` = o.`site_id` AND s.`order_id` = o.`id` AND s.`kind` = 'ready' WHERE c.`site_id` = t.`site_id` AND c.`cell` = t.`cell` AND o.`lift` <= t.`lift` AND s.`happened_at` >= t.`sampled_at` AND (c.`left_at` IS NULL OR c.`left_at` > s.`happened_at`))"
 
-const LOT =
-  '(SELECT pc.`lot_id` FROM `placement_cell` pc JOIN `placement` p ON p.`site_id` = pc.`site_id` AND p.`id` = pc.`placement_id` WHERE pc.`site_id` = t.`site_id` AND pc.`lift` = t.`lift` AND pc.`cell` = t.`cell` AND p.`voided_at` IS NULL ORDER BY p.`seq` LIMIT 1)'
+const COLUMNS = [
+  ...['id', 'number', 'seq', 'purpose', 'method', 'zone_id', 'lift', 'cell', 'easting', 'northing', 'sampled_at', 'recorded_by', 'recorded_at', 'curve_id', 'outcome', 'treated_as_fail', 'near', 'headline', 'rc', 'moisture', 'moisture_deviation', 'dry_density', 'wet_density', 'oversize_percent', 'voided_at', 'gauge_id', 'follow_kind', 'verdict', 'flags'].map((name) => `t.\`${name}\``),
+  `${LOT} AS \`lot_id\``,
+  'u.`name` AS `recorder`, k.`code` AS `curve_code`, m.`id` AS `material_id`, m.`name` AS `material_name`',
+  "JSON_VALUE(t.`sheet`, '$.moisture.method') AS `moisture_method`",
+  `${CURRENT} AS \`current\`, ${SUPERSEDED} AS \`superseded\`, ${USES_GAUGE} AS \`uses_gauge\``,
+].join(', ')
 
-const FROM =
-  'FROM `field_test` t JOIN `user` u ON u.`id` = t.`recorded_by` JOIN `reference_curve` k ON k.`site_id` = t.`site_id` AND k.`id` = t.`curve_id`'
+const SELECT = `SELECT x.*, l.\`name\` AS \`lot_name\` FROM (SELECT t.\`site_id\`, ${COLUMNS} FROM \`field_test\` t JOIN \`user\` u ON u.\`id\` = t.\`recorded_by\` JOIN \`reference_curve\` k ON k.\`site_id\` = t.\`site_id\` AND k.\`id\` = t.\`curve_id\` JOIN \`borrow_material\` m ON m.\`site_id\` = k.\`site_id\` AND m.\`id\` = k.\`material_id\` WHERE t.\`site_id\` = ? AND t.\`id\` IN (?)) x LEFT JOIN \`lot\` l ON l.\`site_id\` = x.\`site_id\` AND l.\`id\` = x.\`lot_id\``
 
-const SELECT = `SELECT t.\`id\`, t.\`number\`, t.\`seq\`, t.\`purpose\`, t.\`method\`, t.\`zone_id\`, t.\`lift\`, t.\`cell\`, ${LOT} AS \`lot_id\`, t.\`easting\`, t.\`northing\`, t.\`sampled_at\`, t.\`recorded_by\`, u.\`name\` AS \`recorder\`, t.\`curve_id\`, k.\`code\` AS \`curve_code\`, t.\`outcome\`, t.\`treated_as_fail\`, t.\`near\`, t.\`headline\`, t.\`rc\`, t.\`moisture\`, t.\`moisture_deviation\`, t.\`dry_density\`, ${CURRENT} AS \`current\`, ${SUPERSEDED} AS \`superseded\`, t.\`voided_at\`, JSON_LENGTH(t.\`flags\`) AS \`flag_count\`, ${USES_GAUGE} AS \`uses_gauge\`, t.\`gauge_id\` ${FROM}`
-
-interface Where {
-  readonly text: string
-  readonly values: readonly unknown[]
-}
-
-function whereOf(siteId: string, query: Omit<TestQuery, 'offset' | 'limit'>): Where {
-  const parts: [string, ...unknown[]][] = [['t.`site_id` = ?', siteId]]
-  if (query.zoneId !== undefined) parts.push(['t.`zone_id` = ?', query.zoneId])
-  if (query.lift !== undefined) parts.push(['t.`lift` = ?', query.lift])
-  if (query.cell !== undefined) parts.push(['t.`cell` = ?', query.cell])
-  if (query.lotId !== undefined) parts.push([`${LOT} = ?`, query.lotId])
-  if (query.outcome !== undefined) parts.push(['t.`outcome` = ?', query.outcome])
-  if (query.current !== undefined) parts.push([query.current === 'true' ? CURRENT : `NOT ${CURRENT}`])
-  if (query.search !== undefined && query.search.trim() !== '') {
-    const like = `%${query.search.trim().replace(/[\\%_]/g, '\\$&')}%`
-    parts.push(['(t.`number` LIKE ? OR k.`code` LIKE ? OR t.`headline` LIKE ? OR u.`name` LIKE ?)', like, like, like, like])
-  }
-  return { text: parts.map(([text]) => text).join(' AND '), values: parts.flatMap(([, ...values]) => values) }
-}
-
-/** One page of a site's tests, newest first, and how many there are in all. */
-export async function listTests(manager: EntityManager, siteId: string, query: TestQuery): Promise<{ tests: TestSummary[]; total: number }> {
-  const where = whereOf(siteId, query)
-  const rows: SummaryRow[] = await manager.query(`${SELECT} WHERE ${where.text} ORDER BY t.\`seq\` DESC LIMIT ? OFFSET ?`, [...where.values, query.limit, query.offset])
-  const [{ total }]: [{ total: string }] = await manager.query(`SELECT COUNT(*) AS \`total\` ${FROM} WHERE ${where.text}`, [...where.values])
-  return { tests: await presentSummaries(manager, siteId, rows), total: Number(total) }
+/** Tests of this site as lists show them, in the order of their ids; those that are not there are left out. */
+export async function loadTests(manager: EntityManager, siteId: string, ids: readonly string[]): Promise<RegisterTest[]> {
+  if (ids.length === 0) return []
+  const rows: Row[] = await manager.query(SELECT, [siteId, ids])
+  const byGauge = rows.filter((row) => Number(row.uses_gauge) === 1)
+  const gauges = byGauge.length === 0 ? new Map<string, TestGauge>() : await loadGaugeChecks(manager, siteId, byGauge.map((row) => ({ id: row.id, gaugeId: row.gauge_id, sampledAt: row.sampled_at })))
+  const tests = new Map(rows.map((row) => [row.id, present(row, gauges.get(row.id))]))
+  return ids.flatMap((id) => tests.get(id) ?? [])
 }
 
 /** A test of this site as lists show it, or null. */
-export async function loadTestSummary(manager: EntityManager, siteId: string, id: string): Promise<TestSummary | null> {
-  const rows: SummaryRow[] = await manager.query(`${SELECT} WHERE t.\`site_id\` = ? AND t.\`id\` = ?`, [siteId, id])
-  const [summary] = await presentSummaries(manager, siteId, rows)
-  return summary ?? null
+export async function loadTestSummary(manager: EntityManager, siteId: string, id: string): Promise<RegisterTest | null> {
+  const [test] = await loadTests(manager, siteId, [id])
+  return test ?? null
 }
 
 /** A test is flagged by what its sheet says, and by a gauge that was not good when it was taken. */
-async function presentSummaries(manager: EntityManager, siteId: string, rows: readonly SummaryRow[]): Promise<TestSummary[]> {
-  const byGauge = rows.filter((row) => Number(row.uses_gauge) === 1)
-  const checks = byGauge.length === 0 ? new Map<string, TestGauge>() : await loadGaugeChecks(manager, siteId, byGauge.map((row) => ({ id: row.id, gaugeId: row.gauge_id, sampledAt: row.sampled_at })))
-  return rows.map((row) => {
-    const gauge = checks.get(row.id)
-    return { ...presentSummary(row), flagged: Number(row.flag_count) > 0 || (gauge !== undefined && gauge.state !== 'good') }
-  })
+function flagsOf(row: Row, gauge: TestGauge | undefined): Reason[] {
+  return gauge === undefined || gauge.state === 'good' ? [...row.flags] : [...row.flags, { code: `gauge-${gauge.state}`, message: gauge.message }]
 }
 
-function presentSummary(row: SummaryRow): Omit<TestSummary, 'flagged'> {
+/** The minimum compaction the verdict was judged by, as it is written. */
+function rcLimitOf({ against }: Verdict): string | null {
+  for (const criterion of against.criteria) {
+    if (criterion.kind === 'rc-min') return criterion.text
+    const step = criterion.kind === 'rc-min-steps' ? stepFor(criterion.steps, against.curve.maxDryDensity) : undefined
+    if (step !== undefined) return step
+  }
+  return null
+}
+
+function present(row: Row, gauge: TestGauge | undefined): RegisterTest {
+  const { verdict } = row
+  const flags = flagsOf(row, gauge)
   return {
     id: row.id,
     number: row.number,
@@ -108,22 +111,38 @@ function presentSummary(row: SummaryRow): Omit<TestSummary, 'flagged'> {
     lift: row.lift,
     cell: row.cell,
     lotId: row.lot_id,
+    lotName: row.lot_name,
     easting: row.easting,
     northing: row.northing,
     sampledAt: row.sampled_at.toISOString(),
+    recordedAt: row.recorded_at.toISOString(),
     recordedBy: { id: row.recorded_by, name: row.recorder },
     curveId: row.curve_id,
     curveCode: row.curve_code,
+    materialId: row.material_id,
+    materialName: row.material_name,
     outcome: row.outcome,
     treatedAsFail: Boolean(row.treated_as_fail),
     near: Boolean(row.near),
     headline: row.headline,
     rc: row.rc,
+    rcLimit: rcLimitOf(verdict),
     moisture: row.moisture,
+    moistureMethod: row.moisture_method,
     moistureDeviation: row.moisture_deviation,
+    optimum: verdict.optimumUsed,
+    maxDryDensity: verdict.maxDryDensityUsed,
     dryDensity: row.dry_density,
+    wetDensity: row.wet_density,
+    oversizePercent: row.oversize_percent === null ? null : Number(row.oversize_percent),
+    oversizeCorrected: verdict.oversizeCorrected,
+    saturation: verdict.saturation,
+    airVoids: verdict.airVoids,
+    followKind: row.follow_kind,
     current: Number(row.current) === 1,
     superseded: Number(row.superseded) === 1,
     voided: row.voided_at !== null,
+    flagged: flags.length > 0,
+    flags,
   }
 }

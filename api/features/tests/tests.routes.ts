@@ -1,11 +1,11 @@
 import { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
 import { readSite, writeToSite } from '#api/features/site-head/write-to-site.ts'
+import { listRecorders, listTests } from '#api/features/tests/register.queries.ts'
 import { previewTest } from '#api/features/tests/preview-test.queries.ts'
 import { recordTest } from '#api/features/tests/record-test.service.ts'
 import { loadTestDetail } from '#api/features/tests/test-detail.queries.ts'
 import { recordsTests, voidsTests } from '#api/features/tests/test-rights.ts'
-import { listTests } from '#api/features/tests/tests.queries.ts'
 import { voidTest } from '#api/features/tests/void-test.service.ts'
 import { requireUser, userOf } from '#api/http/require-user.ts'
 import { validate } from '#api/http/validate.ts'
@@ -15,12 +15,11 @@ import {
   previewTestSchema,
   recordTestAnswerSchema,
   testDetailSchema,
-  testListSchema,
   testPreviewSchema,
-  testQuerySchema,
   voidTestAnswerSchema,
   voidTestSchema,
 } from '#shared/schemas/field-test.ts'
+import { recorderListSchema, registerPageSchema, testQuerySchema } from '#shared/schemas/test-register.ts'
 
 /** Mounted at /api/sites/:siteId. */
 export function testRoutes(deps: Deps): Router {
@@ -31,7 +30,16 @@ export function testRoutes(deps: Deps): Router {
     requireUser,
     validate({ params: siteParamsSchema, query: testQuerySchema }, async ({ params: { siteId }, query }, req, res) => {
       const page = await readSite(deps, { siteId, userId: userOf(req).id, verb: 'registers.see' }, ({ manager }) => listTests(manager, siteId, query))
-      res.json(testListSchema.parse(page))
+      res.json(registerPageSchema.parse(page))
+    }),
+  )
+
+  router.get(
+    '/tests/recorders',
+    requireUser,
+    validate({ params: siteParamsSchema }, async ({ params: { siteId } }, req, res) => {
+      const people = await readSite(deps, { siteId, userId: userOf(req).id, verb: 'registers.see' }, ({ manager }) => listRecorders(manager, siteId))
+      res.json(recorderListSchema.parse({ people }))
     }),
   )
 

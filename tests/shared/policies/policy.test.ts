@@ -47,6 +47,8 @@ const TABLE: Record<Verb, string> = {
   'file.attach': 'ltr',
   'file.withdraw': 'lr',
   'view.save': 'ltsr',
+  'view.share': 'lt',
+  'view.edit-shared': 'l',
 }
 
 const LETTERS = { 'qc-lead': 'l', technician: 't', superintendent: 's', 'owner-rep': 'r', operator: 'o' } as const

@@ -1,5 +1,6 @@
 import { keepPreviousData, queryOptions } from '@tanstack/react-query'
-import { testDetailSchema, testListSchema, testPreviewSchema, type PreviewTest, type TestQuery } from '#shared/schemas/field-test.ts'
+import { testDetailSchema, testListSchema, testPreviewSchema, type PreviewTest } from '#shared/schemas/field-test.ts'
+import { recorderListSchema, registerPageSchema, type TestQuery } from '#shared/schemas/test-register.ts'
 import { siteAddress, siteQueries } from '#web/data/site/queries.ts'
 import { apiJson } from '#web/lib/api-client.ts'
 
@@ -13,6 +14,19 @@ export const testQueries = {
       queryKey: [...testQueries.lists(siteId), filter] as const,
       queryFn: ({ signal }) => apiJson(`${siteAddress(siteId)}/tests`, testListSchema, { query: filter, signal }),
       placeholderData: keepPreviousData,
+    }),
+  /** A page of the register, with everything its columns can show. */
+  register: (siteId: string, query: TestFilter) =>
+    queryOptions({
+      queryKey: [...testQueries.lists(siteId), 'register', query] as const,
+      queryFn: ({ signal }) => apiJson(`${siteAddress(siteId)}/tests`, registerPageSchema, { query, signal }),
+      placeholderData: keepPreviousData,
+    }),
+  /** Everybody who recorded a test here. */
+  recorders: (siteId: string) =>
+    queryOptions({
+      queryKey: [...testQueries.all(siteId), 'recorders'] as const,
+      queryFn: async ({ signal }) => (await apiJson(`${siteAddress(siteId)}/tests/recorders`, recorderListSchema, { signal })).people,
     }),
   detail: (siteId: string, id: string) =>
     queryOptions({

@@ -42,7 +42,7 @@ export function filterOf({ zone, lift, outcome, current, q, page }: RegisterAddr
     limit: PAGE_SIZE,
     ...(zone === '' ? {} : { zoneId: zone }),
     ...(/^\d{1,3}$/.test(lift) ? { lift: Number(lift) } : {}),
-    ...(known.success ? { outcome: known.data } : {}),
+    ...(known.success ? { outcome: [known.data] } : {}),
     ...(current ? { current: 'true' as const } : {}),
     ...(cell !== undefined ? { cell } : q.trim() === '' ? {} : { search: q.trim() }),
   }
