@@ -27,7 +27,7 @@ export function CountJudgement({ count, reference, reading }: { count: CountPair
   const judged = reference !== null && typed ? judgeCount(count, reference) : null
   return (
     <div role="status" aria-label="Judgement" className="bg-film px-3 pt-[9px] pb-[7px]">
-      <p className="m-0 text-small text-ink-2">{referenceWords(reference)}</p>
+      <p className="m-0 text-small text-ink-2">{reference === null ? '' : 'It is '}{referenceWords(reference)}</p>
       {judged !== null && (
         <>
           <ul className="m-0 mt-2 list-none p-0">

@@ -12,6 +12,11 @@ export const GAUGE_STATE_WORDS: Readonly<Record<TestGauge['state'], string>> = {
   'not-named': 'Gauge not named',
 }
 
+/** "Sep 24, 2027" */
+export function dateWords(day: string): string {
+  return `${dayWords(day)}, ${day.slice(0, 4)}`
+}
+
 /** A count, with its part of one only where it has one. */
 export function countText(count: number): string {
   return formatNumber(count, Number.isInteger(count) ? 0 : 1)
@@ -29,7 +34,7 @@ export function referenceWords(reference: CountReferenceView | null): string {
   if (reference === null) return 'No calibration is in force that day, so that there is nothing to compare with.'
   const { from, days, density, moisture } = reference
   const of = from === 'calibration' ? 'the calibration, until four days are good' : `the average of the last four good days, ${dayWords(days[0] ?? '')} to ${dayWords(days.at(-1) ?? '')}`
-  return `Compared with ${of}: density ${formatNumber(density, 1)}, moisture ${formatNumber(moisture, 1)}.`
+  return `compared with ${of}: density ${formatNumber(density, 1)}, moisture ${formatNumber(moisture, 1)}.`
 }
 
 /** One word for what a count is. */

@@ -3,6 +3,8 @@ import { line } from 'd3-shape'
 import type { JudgedCountView } from '#shared/schemas/gauge.ts'
 
 const DAY_MS = 86_400_000
+/** a panel reaches at most so many times its limit, so that one slip does not flatten a month */
+const FARTHEST = 3
 const noon = (day: string): number => Date.parse(`${day}T12:00:00Z`)
 
 export interface DriftPoint {
@@ -10,6 +12,8 @@ export interface DriftPoint {
   readonly x: number
   readonly y: number
   readonly kind: 'good' | 'bad' | 'void'
+  /** beyond the panel: it stands at the edge, and its value is said */
+  readonly beyond: number | null
   /** it counts for its day */
   readonly stands: boolean
 }
@@ -38,11 +42,12 @@ export function layOutDrift(counts: readonly JudgedCountView[], of: DriftOf, lim
   const days = shown.map(({ count }) => noon(count.day))
   const [from, to] = [Math.min(...days), Math.max(...days)]
   const x = scaleUtc([from === to ? from - DAY_MS : from, to], [left + 6, right - 6])
-  const reach = Math.max(limit * 1.7, ...shown.map(({ percent }) => Math.abs(percent) * 1.12))
+  const standing = shown.filter(({ count }) => count.void === null).map(({ percent }) => Math.abs(percent) * 1.12)
+  const reach = Math.min(limit * FARTHEST, Math.max(limit * 1.7, ...standing))
   const y = scaleLinear([-reach, reach], [bottom, top])
   const points = shown.map(({ count, percent }): DriftPoint => {
     const good = of === 'density' ? count.densityGood : count.moistureGood
-    return { id: count.id, x: x(noon(count.day)), y: y(percent), kind: count.void !== null ? 'void' : good ? 'good' : 'bad', stands: count.stands }
+    return { id: count.id, x: x(noon(count.day)), y: y(Math.max(-reach, Math.min(percent, reach))), kind: count.void !== null ? 'void' : good ? 'good' : 'bad', beyond: Math.abs(percent) > reach ? percent : null, stands: count.stands }
   })
   return {
     points,

@@ -1,6 +1,7 @@
 import { DRIFT_LIMITS } from '#shared/domain/standard-count.ts'
 import type { GaugeDetail } from '#shared/schemas/gauge.ts'
 import { TRUE_MINUS } from '#shared/units/format.ts'
+import { driftText } from '#web/components/gauge/gauge-words.ts'
 import { useMeasuredWidth } from '#web/components/drawing/use-measured-width.ts'
 import { layOutDrift, type DriftOf, type DriftPoint } from './drift-chart-layout.ts'
 
@@ -23,7 +24,7 @@ function Panel({ gauge, of, width, dated }: { gauge: GaugeDetail; of: DriftOf; w
   const { points, path, zero, limits, days, dayAt } = layOutDrift(gauge.counts, of, limit, frame)
   const bad = points.filter((point) => point.kind === 'bad').length
   const name = of === 'density' ? 'Density' : 'Moisture'
-  const words = `${name} count against its reference, ${points.length} ${points.length === 1 ? 'count' : 'counts'}, ${bad} out of ±${limit}\u2009%`
+  const words = `Drift of ${name.toLowerCase()}, ${points.length} ${points.length === 1 ? 'count' : 'counts'}, ${bad} out of ±${limit}\u2009%`
   return (
     <svg role="img" aria-label={words} width={width} height={height} viewBox={`0 0 ${width} ${height}`} className="block">
       <rect x={frame.left} y={limits[0]?.y} width={Math.max(0, frame.right - frame.left)} height={(limits[1]?.y ?? 0) - (limits[0]?.y ?? 0)} fill="var(--film)" />
@@ -61,6 +62,15 @@ function Panel({ gauge, of, width, dated }: { gauge: GaugeDetail; of: DriftOf; w
           <Mark key={point.id} point={point} />
         ))}
       </g>
+      <g fontSize={11} fill="var(--ink-2)">
+        {points.map(({ id, x, y, beyond }) =>
+          beyond === null ? null : (
+            <text key={id} x={x > width / 2 ? x - 8 : x + 8} y={y + 4} textAnchor={x > width / 2 ? 'end' : 'start'}>
+              {driftText(beyond)}
+            </text>
+          ),
+        )}
+      </g>
       <text x={frame.left} y={13} fontSize={TEXT} fontWeight={600} fill="var(--ink)">
         {name}, % from its reference
       </text>
@@ -72,14 +82,14 @@ function Panel({ gauge, of, width, dated }: { gauge: GaugeDetail; of: DriftOf; w
 export function DriftChart({ gauge }: { gauge: GaugeDetail }) {
   const [ref, width] = useMeasuredWidth(560)
   return (
-    <div ref={ref} className="grid w-full gap-1">
+    <div ref={ref} className="grid w-full grid-cols-[minmax(0,1fr)] gap-1">
       <Panel gauge={gauge} of="density" width={width} dated={false} />
       <Panel gauge={gauge} of="moisture" width={width} dated />
       <ul aria-label="Marks" className="m-0 flex list-none flex-wrap gap-x-5 gap-y-1 p-0 text-small text-ink-2">
         {([['good', 'within'], ['bad', 'out of limits'], ['void', 'void']] as const).map(([kind, words]) => (
           <li key={kind} className="flex items-center gap-2">
             <svg aria-hidden width="14" height="14" viewBox="0 0 14 14" fill="none">
-              <Mark point={{ id: kind, x: 7, y: 7, kind, stands: true }} />
+              <Mark point={{ id: kind, x: 7, y: 7, kind, beyond: null, stands: true }} />
             </svg>
             {words}
           </li>

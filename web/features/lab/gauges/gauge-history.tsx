@@ -1,10 +1,7 @@
-import { dayWords } from '#shared/domain/gauge-check.ts'
 import type { GaugeCorrection, GaugeDetail } from '#shared/schemas/gauge.ts'
-import { countText } from '#web/components/gauge/gauge-words.ts'
+import { countText, dateWords } from '#web/components/gauge/gauge-words.ts'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
 import { useUnits } from '#web/lib/site-context.tsx'
-
-const yearOf = (day: string): string => `${dayWords(day)}, ${day.slice(0, 4)}`
 
 /** Moisture corrections by material, those out of force too. */
 export function CorrectionsTable({ gauge, onWithdraw }: { gauge: GaugeDetail; onWithdraw: ((correction: GaugeCorrection) => void) | undefined }) {
@@ -55,7 +52,7 @@ export function GaugeHistory({ gauge }: { gauge: GaugeDetail }) {
     ...gauge.calibrations.map((each) => ({
       id: each.id,
       at: `${each.calibratedOn}T12`,
-      words: `${yearOf(each.calibratedOn)}: calibrated at density ${countText(each.density)} and moisture ${countText(each.moisture)}${each.dueOn === null ? '' : `, due ${yearOf(each.dueOn)}`}. Recorded by ${each.recordedBy}.`,
+      words: `${dateWords(each.calibratedOn)}: calibrated at density ${countText(each.density)} and moisture ${countText(each.moisture)}${each.dueOn === null ? '' : `, due ${dateWords(each.dueOn)}`}. Recorded by ${each.recordedBy}.`,
     })),
     ...gauge.outages.map((each) => ({
       id: each.id,

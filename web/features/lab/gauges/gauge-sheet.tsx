@@ -70,7 +70,7 @@ export function GaugeSheet({ gauge, onAct }: { gauge: Gauge; onAct: (act: GaugeA
           { label: 'Leak test', value: gauge.leakTestedOn === null ? 'not set' : dayWords(gauge.leakTestedOn), unit: gauge.leakTestedOn?.slice(0, 4) ?? '' },
         ]}
       />
-      <p className="mt-3 mb-4 text-ink-2">Today: {referenceWords(check.reference)}</p>
+      <p className="mt-3 mb-4 text-ink-2">{check.reference === null ? '' : 'A count today is '}{referenceWords(check.reference)}</p>
       <GaugeCaution />
       {error !== null && (
         <Banner tone="bad" className="mt-4" title="The log of this gauge could not be read." action={<button type="button" onClick={() => void refetch()}>Try again</button>}>
@@ -80,7 +80,7 @@ export function GaugeSheet({ gauge, onAct }: { gauge: Gauge; onAct: (act: GaugeA
       {data === undefined ? (
         error === null && <Skeleton label="The log is on its way" lines={[90, 90, 70]} />
       ) : (
-        <div className="mt-6 grid gap-7">
+        <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-7">
           {data.counts.some((count) => count.reference !== null) && (
             <section>
               <SectionHead level={3} aside="density within 1 %, moisture within 2 %">

@@ -52,7 +52,7 @@ export function GaugesPage() {
   const choose = (id: string) => setSearch({ gauge: id }, { replace: true })
   const chosen = data?.find((gauge) => gauge.id === search.get('gauge')) ?? data?.[0]
   const records = can('gauge.record')
-  const add = records && <Button kind={data?.length === 0 ? 'primary' : 'plain'} onClick={() => setAdding(true)}>New gauge</Button>
+  const add = records && <Button className="pointer-coarse:min-h-11" kind={data?.length === 0 ? 'primary' : 'plain'} onClick={() => setAdding(true)}>New gauge</Button>
   return (
     <LabFrame summary={data === undefined ? undefined : data.length === 0 ? 'Nuclear gauges and their standard counts' : registerWords(data)} actions={data !== undefined && data.length > 0 && add} failed={error} onRetry={() => void refetch()}>
       {data === undefined ? (
