@@ -17,6 +17,19 @@ const envSchema = z.object({
   /** proxies in front of the server whose word on the caller's address counts */
   TRUSTED_PROXIES: z.coerce.number().int().min(0).max(5).default(0),
   WEB_ROOT: z.string().default('.build/web'),
+  /** where photos and documents are kept: an S3 service; left out, the server runs without files */
+  S3_ENDPOINT: z.url({ protocol: /^https?$/, error: 'must look like https://host or http://host:port' }).optional(),
+  S3_BUCKET: z.string().optional(),
+  S3_REGION: z.string().default('us-east-1'),
+  S3_ACCESS_KEY: z.string().optional(),
+  S3_SECRET_KEY: z.string().optional(),
+  /** 1: the bucket in the path, as most services other than Amazon's want it; 0: in the host name */
+  S3_PATH_STYLE: z.enum(['0', '1']).default('1'),
+}).superRefine((env, context) => {
+  if (env.S3_ENDPOINT === undefined) return
+  for (const name of ['S3_BUCKET', 'S3_ACCESS_KEY', 'S3_SECRET_KEY'] as const) {
+    if (env[name] === undefined) context.addIssue({ code: 'custom', path: [name], message: 'must be set with S3_ENDPOINT' })
+  }
 })
 
 export type Env = z.infer<typeof envSchema>

@@ -15,6 +15,7 @@ const dataSource = createDataSource(env.DATABASE_URL)
 await dataSource.initialize()
 await dataSource.runMigrations()
 const server = createServer({ env, dataSource, clock, logger })
+if (!server.deps.objects.configured) logger.warn('S3_ENDPOINT is not set: photos and documents can be neither kept nor shown')
 if (env.SEED_DEMO === '1') await seedDemoWhenEmpty(server.deps, (line) => process.stdout.write(`${line}\n`))
 
 let stopping = false

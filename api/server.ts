@@ -3,6 +3,7 @@ import type { Server as HttpServer } from 'node:http'
 import { Server } from 'socket.io'
 import { createApp } from '#api/app.ts'
 import type { Deps } from '#api/deps.ts'
+import { createObjectStore } from '#api/files/object-store.ts'
 import { createAuthentication } from '#api/http/authentication.ts'
 import { createPublisher } from '#api/realtime/publish.ts'
 import { attachRealtime } from '#api/realtime/server.ts'
@@ -18,9 +19,9 @@ export interface HardpanServer {
 }
 
 /** The whole server, not yet listening: pages, API and sockets on one port. */
-export function createServer(given: Omit<Deps, 'publisher'>): HardpanServer {
+export function createServer(given: Omit<Deps, 'publisher' | 'objects'>): HardpanServer {
   const io: BoardServer = new Server()
-  const deps: Deps = { ...given, publisher: createPublisher(io) }
+  const deps: Deps = { ...given, publisher: createPublisher(io), objects: createObjectStore(given.env) }
   const authentication = createAuthentication(deps.dataSource, deps.env)
   const http = createHttpServer(createApp(deps, authentication))
   attachRealtime(io, http, deps, authentication)
@@ -34,6 +35,7 @@ export function createServer(given: Omit<Deps, 'publisher'>): HardpanServer {
       http.closeIdleConnections()
       await io.close()
       await authentication.close()
+      deps.objects.close()
     },
   }
 }

@@ -18,6 +18,7 @@ export const CHANGED_RESOURCES = [
   'inspection',
   'disposition',
   'view',
+  'attachment',
   'site',
 ] as const
 

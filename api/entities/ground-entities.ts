@@ -1,4 +1,5 @@
 import { AllocationEntity } from '#api/entities/allocation.entity.ts'
+import { AttachmentEntity } from '#api/entities/attachment.entity.ts'
 import { BorrowMaterialEntity } from '#api/entities/borrow-material.entity.ts'
 import { CalibrationEntity } from '#api/entities/calibration.entity.ts'
 import { CellEntity } from '#api/entities/cell.entity.ts'
@@ -65,6 +66,7 @@ export const groundEntities = [
   GaugeOutageEntity,
   StandardCountEntity,
   GaugeCorrectionEntity,
+  AttachmentEntity,
   SavedViewEntity,
   DefaultViewEntity,
 ]

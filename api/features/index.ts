@@ -1,5 +1,6 @@
 import type { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
+import { attachmentRoutes } from '#api/features/attachments/attachments.routes.ts'
 import { calibrationRoutes } from '#api/features/calibrations/calibrations.routes.ts'
 import { dispositionRoutes } from '#api/features/dispositions/dispositions.routes.ts'
 import { eventRoutes } from '#api/features/events/events.routes.ts'
@@ -41,5 +42,6 @@ export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   reworkRoutes,
   releaseRoutes,
   dispositionRoutes,
+  attachmentRoutes,
   viewRoutes,
 ]

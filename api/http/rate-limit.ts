@@ -1,6 +1,7 @@
 import type { Request, RequestHandler } from 'express'
 import { ipKeyGenerator, rateLimit } from 'express-rate-limit'
 import { tooManyRequests } from '#api/errors.ts'
+import { userOf } from '#api/http/require-user.ts'
 
 const WINDOW_MS = 15 * 60_000
 /** wrong passwords for one e-mail address from one network address, and for any of them, in the window */
@@ -44,4 +45,25 @@ export function limitSignIns(): RequestHandler[] {
     limitFailures({ limit: SIGN_IN_LIMITS.perAddress, keyOf: addressOf }),
     limitFailures({ limit: SIGN_IN_LIMITS.perAccount, keyOf: (req) => `${addressOf(req)} ${emailOf(req)}` }),
   ]
+}
+
+/** Files one person may send in the window, taken or refused. */
+export const UPLOAD_LIMIT = 200
+
+/** Keeps one account from filling the store, or from keeping the server at decoding pictures. */
+export function limitUploads(): RequestHandler {
+  return rateLimit({
+    windowMs: WINDOW_MS,
+    limit: UPLOAD_LIMIT,
+    keyGenerator: (req) => userOf(req).id,
+    standardHeaders: 'draft-7',
+    legacyHeaders: false,
+    handler: (_req, _res, next) => {
+      next(
+        tooManyRequests(`That is more than ${UPLOAD_LIMIT} files in a quarter of an hour. This one was not added; wait a little, then try again.`, {
+          retryAfterSeconds: WINDOW_MS / 1000,
+        }),
+      )
+    },
+  })
 }

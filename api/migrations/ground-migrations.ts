@@ -5,6 +5,7 @@ import { CreateTestsAndStakes1796083200009 } from '#api/migrations/1796083200009
 import { AddCoarsePartToCurves1796083200010 } from '#api/migrations/1796083200010-add-coarse-part-to-curves.ts'
 import { CreateCalibrations1796083200011 } from '#api/migrations/1796083200011-create-calibrations.ts'
 import { CreateGauges1796083200012 } from '#api/migrations/1796083200012-create-gauges.ts'
+import { CreateAttachments1796083200013 } from '#api/migrations/1796083200013-create-attachments.ts'
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
 import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
 import { CreateSavedViews1796083200017 } from '#api/migrations/1796083200017-create-saved-views.ts'
@@ -17,6 +18,7 @@ export const groundMigrations = [
   AddCoarsePartToCurves1796083200010,
   CreateCalibrations1796083200011,
   CreateGauges1796083200012,
+  CreateAttachments1796083200013,
   KeepVerdicts1796083200015,
   CreateOnePointChecks1796083200016,
   CreateSavedViews1796083200017,

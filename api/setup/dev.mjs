@@ -1,6 +1,7 @@
 import { noteAddress, takeCheckout } from './checkout.mjs'
 import { runLifetime } from './lifetime.mjs'
 import { runNode } from './node-child.mjs'
+import { openObjectStore } from './object-store.mjs'
 import { checkNode, ensurePackages } from './packages.mjs'
 import { inRoot, ROOT } from './paths.mjs'
 import { freePort, holdPort } from './ports.mjs'
@@ -19,9 +20,12 @@ await runLifetime(async (lifetime) => {
   await ensurePackages()
   lifetime.check()
   const database = await openDatabase(lifetime, process.env)
+  lifetime.check()
+  const objects = await openObjectStore(lifetime, process.env)
   const apiPort = await freePort()
   const api = runNode([inRoot('api/setup/watch-server.mjs'), 'api/main.ts'], {
     ...process.env,
+    ...objects,
     NODE_ENV: 'development',
     DATABASE_URL: database.url,
     SESSION_SECRET: secret,

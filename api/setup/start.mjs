@@ -3,6 +3,7 @@ import { noteAddress, takeCheckout } from './checkout.mjs'
 import { ensureClientBuilt } from './client-build.mjs'
 import { runLifetime } from './lifetime.mjs'
 import { runNode } from './node-child.mjs'
+import { openObjectStore } from './object-store.mjs'
 import { checkNode, ensurePackages } from './packages.mjs'
 import { inRoot } from './paths.mjs'
 import { holdPort } from './ports.mjs'
@@ -26,11 +27,14 @@ await runLifetime(async (lifetime) => {
   lifetime.check()
   const database = await openDatabase(lifetime, process.env)
   lifetime.check()
+  const objects = await openObjectStore(lifetime, process.env)
+  lifetime.check()
   if (!existsSync(inRoot(SERVER))) throw new SetupError(`${SERVER} is missing: this checkout is not whole.`)
   say('Starting the server.')
   await held.release()
   const code = await runNode([SERVER], {
     ...process.env,
+    ...objects,
     NODE_ENV: 'production',
     DATABASE_URL: database.url,
     SESSION_SECRET: secret,

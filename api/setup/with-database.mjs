@@ -2,19 +2,21 @@ import { takeCheckout } from './checkout.mjs'
 import { runLifetime } from './lifetime.mjs'
 import { lockHolder } from './lock.mjs'
 import { runNode } from './node-child.mjs'
+import { openObjectStore } from './object-store.mjs'
 import { checkNode, ensurePackages } from './packages.mjs'
 import { START_LOCK } from './paths.mjs'
 import { openDatabase, runningDatabaseUrl } from './private-database.mjs'
 import { SetupError } from './say.mjs'
 
 // node api/setup/with-database.mjs api/commands/<name>.ts [arguments]: runs it on DATABASE_URL, on the database of a running
-// npm start, or on the private database started for it.
+// npm start, or on the private database started for it; files as npm start keeps them.
 await runLifetime(async (lifetime) => {
   checkNode(process.versions.node)
   const args = process.argv.slice(2)
   if (args.length === 0) throw new SetupError('Say which file to run: node api/setup/with-database.mjs api/commands/<name>.ts')
   await ensurePackages()
-  return runNode(args, { ...process.env, ...(await findDatabase(lifetime)) }, lifetime)
+  const database = await findDatabase(lifetime)
+  return runNode(args, { ...process.env, ...database, ...(await openObjectStore(lifetime, process.env)) }, lifetime)
 })
 
 /** @param {import('./lifetime.mjs').Lifetime} lifetime */

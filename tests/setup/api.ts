@@ -4,6 +4,7 @@ import { io as connectSocket } from 'socket.io-client'
 import type { Socket } from 'socket.io-client'
 import request from 'supertest'
 import type { Test } from 'supertest'
+import { inject } from 'vitest'
 import type { DataSource } from 'typeorm'
 import type { UserEntity } from '#api/entities/user.entity.ts'
 import { readEnv } from '#api/env.ts'
@@ -19,6 +20,12 @@ export type TestSocket = Socket<ServerToClientEvents, ClientToServerEvents>
 
 type Agent = ReturnType<typeof request.agent>
 
+export interface Upload {
+  readonly bytes: Buffer
+  readonly name: string
+  readonly type?: string
+}
+
 /** A browser: keeps its cookies and sends the session's token with every change. */
 export interface Visitor {
   readonly agent: Agent
@@ -27,6 +34,8 @@ export interface Visitor {
   put(path: string, body?: object): Promise<request.Response>
   patch(path: string, body?: object): Promise<request.Response>
   delete(path: string, body?: object): Promise<request.Response>
+  /** sends a file as a multipart form */
+  upload(path: string, fields: Readonly<Record<string, string>>, file: Upload | null): Promise<request.Response>
   signIn(email: string, password?: string): Promise<request.Response>
   /** the Cookie header, for sockets */
   cookie(): string
@@ -55,6 +64,7 @@ export async function testApp(settings: Record<string, string> = {}): Promise<Te
     DATABASE_URL: 'mysql://only-to-satisfy-the-form@127.0.0.1/hardpan',
     SESSION_SECRET: 'only-for-the-tests-0123456789-abcdefghij',
     LOG_LEVEL: 'silent',
+    ...inject('objectStore'),
     ...settings,
   })
   const server = createServer({ env, dataSource, clock: () => new Date(), logger: pino({ level: 'silent' }) })
@@ -98,13 +108,23 @@ function createVisitor(url: string): Visitor {
   let token: string | null = null
   let cookies = ''
 
+  async function tokenOfSession(): Promise<string> {
+    if (token !== null) return token
+    const me = remember(await agent.get('/api/me'))
+    token = (me.body as { csrfToken: string }).csrfToken
+    return token
+  }
+
   async function send(method: 'post' | 'put' | 'patch' | 'delete', path: string, body?: object): Promise<request.Response> {
-    if (token === null) {
-      const me = await agent.get('/api/me')
-      token = (me.body as { csrfToken: string }).csrfToken
-      remember(me)
-    }
-    return remember(await agent[method](path).set('x-csrf-token', token).send(body))
+    const ours = await tokenOfSession()
+    return remember(await agent[method](path).set('x-csrf-token', ours).send(body))
+  }
+
+  async function upload(path: string, fields: Readonly<Record<string, string>>, file: Upload | null): Promise<request.Response> {
+    const ours = await tokenOfSession()
+    const sent = agent.post(path).set('x-csrf-token', ours).field({ ...fields })
+    if (file !== null) void sent.attach('file', file.bytes, { filename: file.name, ...(file.type === undefined ? {} : { contentType: file.type }) })
+    return remember(await sent)
   }
 
   function remember(answer: request.Response): request.Response {
@@ -120,6 +140,7 @@ function createVisitor(url: string): Visitor {
     put: (path, body) => send('put', path, body),
     patch: (path, body) => send('patch', path, body),
     delete: (path, body) => send('delete', path, body),
+    upload,
     async signIn(email, password = PASSWORD) {
       const answer = await send('post', '/api/session', { email, password })
       token = null

@@ -1,5 +1,6 @@
 import type { TestProject } from 'vitest/node'
 import { ensureClientBuilt } from '#api/setup/client-build.mjs'
+import { openTestObjectStore } from './object-store.ts'
 import { startServer } from './run-server.ts'
 import { createDatabase, dropDatabases, openTestServer, workerDatabaseName } from './test-server.ts'
 
@@ -19,10 +20,12 @@ export async function setup(project: TestProject): Promise<() => Promise<void>> 
   const server = await openTestServer()
   const name = workerDatabaseName('e2e')
   await dropDatabases(server.adminUrl, name)
-  const demo = await startServer({ databaseUrl: await createDatabase(server.adminUrl, name), env: { SEED_DEMO: '1', DEMO_NOW } })
+  const objects = await openTestObjectStore()
+  const demo = await startServer({ databaseUrl: await createDatabase(server.adminUrl, name), env: { ...objects.settings, SEED_DEMO: '1', DEMO_NOW } })
   project.provide('demoUrl', demo.url)
   return async () => {
     await demo.stop()
+    await objects.stop()
     await server.stop()
   }
 }

@@ -4,6 +4,7 @@ import { useLocation, useNavigate } from 'react-router-dom'
 import { toast } from 'sonner'
 import type { ChangedResource, MembershipChangedEvent, ServerEvent } from '#shared/realtime.ts'
 import { paths } from '#web/app/paths.ts'
+import { attachmentChanged } from '#web/data/attachment/cache-effects.ts'
 import { groundChanged } from '#web/data/board/cache-effects.ts'
 import { calibrationChanged } from '#web/data/calibration/cache-effects.ts'
 import { curveChanged } from '#web/data/curve/cache-effects.ts'
@@ -43,6 +44,7 @@ const EFFECTS: Readonly<Record<ChangedResource, (client: QueryClient, siteId: st
   member: memberChanged,
   inspection: inspectionChanged,
   disposition: dispositionChanged,
+  attachment: attachmentChanged,
   view: viewChanged,
   site: siteChanged,
 }
