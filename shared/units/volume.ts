@@ -14,6 +14,9 @@ const CUBIC_CENTIMETRES = {
 
 export type VolumeUnit = keyof typeof CUBIC_CENTIMETRES
 
+/** A unit as it is written after a figure. */
+export const VOLUME_UNIT_LABEL: Readonly<Record<VolumeUnit, string>> = { cm3: 'cm³', L: 'L', m3: 'm³', in3: 'in³', ft3: 'ft³', yd3: 'cy', gal: 'gal' }
+
 /**
  * Converts a volume. It says nothing of the volume's kind: bank, loose and compacted are never added.
  * @param value in `from`, any finite number

@@ -1,10 +1,17 @@
 import type { GroundState } from '#shared/domain/ground-state.ts'
 import type { MoistureMethod } from '#shared/domain/field-sheets.ts'
+import type { WallOffset } from '#shared/domain/wall-offset.ts'
 import type { Purpose, TestSummary } from '#shared/schemas/field-test.ts'
 
 export { markOf, resultWord } from '#web/components/ui/test-outcome.ts'
 
 type Judged = Pick<TestSummary, 'outcome' | 'treatedAsFail'>
+
+/** How the offset of a wall is signed, and what is done with it. */
+export const WALL_CONVENTION_WORDS: Readonly<Record<WallOffset['convention'], string>> = {
+  'block-minus-standard': 'Moisture count on the block beside the wall minus the day’s moisture standard count; it is subtracted.',
+  'standard-minus-block': 'The day’s moisture standard count minus the moisture count on the block beside the wall; it is added.',
+}
 
 /** The state a result puts its ground into. */
 export function groundOf({ outcome, treatedAsFail }: Judged): GroundState {
@@ -14,6 +21,8 @@ export function groundOf({ outcome, treatedAsFail }: Judged): GroundState {
 
 export const METHOD_WORDS: Readonly<Record<TestSummary['method'], { readonly name: string; readonly standard: string }>> = {
   'sand-cone': { name: 'Sand cone', standard: 'ASTM D1556' },
+  'rubber-balloon': { name: 'Rubber balloon', standard: 'ASTM D2167' },
+  'drive-cylinder': { name: 'Drive cylinder', standard: 'ASTM D2937' },
   'nuclear-gauge': { name: 'Nuclear gauge', standard: 'ASTM D6938' },
   plain: { name: 'Density and moisture', standard: 'as the report states them' },
 }

@@ -4,6 +4,7 @@ import userEvent from '@testing-library/user-event'
 import { http, HttpResponse } from 'msw'
 import { createMemoryRouter, RouterProvider } from 'react-router-dom'
 import type { Role } from '#shared/policies/role.ts'
+import type { Calibration } from '#shared/schemas/calibration.ts'
 import type { CreateTest, RecordTestAnswer, TestDetail, TestPreview, TestSummary } from '#shared/schemas/field-test.ts'
 import type { Column } from '#shared/schemas/ground.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
@@ -148,12 +149,13 @@ export function buildDetail(overrides: Partial<TestDetail> = {}): TestDetail {
 }
 
 /** What the API was asked to save, and what it answers while a sheet is filled in. */
-export function answerSheet({ preview, curves = [buildCurve()] }: { preview?: Partial<TestPreview>; curves?: readonly Curve[] } = {}): CreateTest[] {
+export function answerSheet({ preview, curves = [buildCurve()], calibrations = [] }: { preview?: Partial<TestPreview>; curves?: readonly Curve[]; calibrations?: readonly Calibration[] } = {}): CreateTest[] {
   const sent: CreateTest[] = []
   const saved: RecordTestAnswer = { id: buildSummary().id, number: 'T-0219', outcome: 'fail', headline: 'Too dry, dense enough', revision: 8, marked: 2, orderId: null, orderNumber: null }
   apiStandIn.use(
     http.get('/api/me', () => HttpResponse.json({ user: USER, csrfToken: 'token' })),
     http.get(ADDRESS, () => HttpResponse.json(buildSiteView())),
+    http.get(`${ADDRESS}/calibrations`, () => HttpResponse.json({ calibrations })),
     http.get(`${ADDRESS}/gauges`, () => HttpResponse.json({ gauges: [] })),
     http.get(`${ADDRESS}/stakes`, () => HttpResponse.json({ stakes: [STAKE] })),
     http.get(`${ADDRESS}/curves`, () => HttpResponse.json({ curves })),

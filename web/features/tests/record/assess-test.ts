@@ -1,7 +1,10 @@
 import type { RawSheet, ReducedSheet } from '#shared/domain/field-sheets.ts'
 import { DEPTH_WARNING_WORDS, testLayer } from '#shared/domain/lift-schedule.ts'
+import { gaugeIdOf, usesGauge } from '#shared/domain/gauge-check.ts'
 import { oversizeSieve } from '#shared/domain/oversize.ts'
 import { reduceSheet } from '#shared/domain/reduce-sheet.ts'
+import { reduceDriveCylinder } from '#shared/domain/drive-cylinder.ts'
+import { reduceRubberBalloon } from '#shared/domain/rubber-balloon.ts'
 import { reduceSandCone } from '#shared/domain/sand-cone.ts'
 import { judge } from '#shared/domain/verdict.ts'
 import type { ReferencePair, Verdict } from '#shared/domain/verdict-types.ts'
@@ -12,7 +15,7 @@ import { toMicrometres } from '#shared/units/length.ts'
 import type { SiteContextValue } from '#web/lib/site-context.tsx'
 import { parseNumber } from '#web/lib/units.ts'
 import { placeTest, type Place } from './place-test.ts'
-import { formField, isFinite, reading, readSheet, textAt } from './read-sheet.ts'
+import { formField, isFinite, reading, readSheet, SECTION, textAt } from './read-sheet.ts'
 import type { TestForm } from './test-form.ts'
 
 /** What stands at one field: `missing` is not said before the field was left or saving was tried. */
@@ -45,12 +48,14 @@ interface Known {
   readonly stakes: readonly Stake[]
   readonly curves: readonly Curve[]
   readonly follows: CreateTest['follows']
+  /** the site has a register of gauges, so that a gauge test names its gauge */
+  readonly registered: boolean
 }
 
 const CLIENT_DEPTH_TOLERANCE_UM = 25_400
 
 /** Everything that follows from what is typed, worked out again at every key. */
-export function assessTest(form: TestForm, { context, stakes, curves, follows }: Known): Assessment {
+export function assessTest(form: TestForm, { context, stakes, curves, follows, registered }: Known): Assessment {
   const { units, site } = context
   const problems = new Map<string, Problem>()
   const refuse = (field: string, message: string, missing = false): void => {
@@ -64,6 +69,9 @@ export function assessTest(form: TestForm, { context, stakes, curves, follows }:
   if (form.purpose === '') refuse('purpose', 'Choose what the test is for.', true)
 
   const sheet = readSheet(form)
+  // the owner's check may be read with a gauge of the owner's own
+  if (registered && usesGauge(sheet) && gaugeIdOf(sheet) === null && form.purpose !== 'verification') refuse('gauge.gaugeId', 'Choose the gauge it was read with.', true)
+  if (form.moisture.method === 'gauge' && form.moisture.wall.by !== '' && form.moisture.wall.convention === '') refuse('moisture.wall.convention', 'Choose how the offset is signed: see the gauge’s manual.', true)
   const reduction = reduceSheet(sheet)
   if (!reduction.ok) {
     for (const { field, code, message } of reduction.problems) {
@@ -165,29 +173,46 @@ function readDepth(form: TestForm, parse: SiteContextValue['units']['parse']['th
   return null
 }
 
-/** The hole as soon as its own readings are there, before the soil is weighed. */
-function holeVolume(sheet: RawSheet): number | null {
-  if (sheet.method !== 'sand-cone') return null
-  const hole = reduceSandCone({ ...sheet, moistSoil: 1 })
-  return hole.ok ? hole.holeVolumeCm3 : null
+function holeOf(sheet: RawSheet): ReturnType<typeof reduceSandCone> | null {
+  switch (sheet.method) {
+    case 'sand-cone':
+      return reduceSandCone({ ...sheet, moistSoil: 1 })
+    case 'rubber-balloon':
+      return reduceRubberBalloon({ ...sheet, moistSoil: 1 })
+    case 'drive-cylinder':
+      return reduceDriveCylinder({ ...sheet, cylinderAndSoil: 2, cylinder: 1 })
+    case 'nuclear-gauge':
+    case 'plain':
+      return null
+  }
 }
 
+/** The hole as soon as its own readings are there, before the soil is weighed. */
+function holeVolume(sheet: RawSheet): number | null {
+  const hole = holeOf(sheet)
+  return hole?.ok ? hole.holeVolumeCm3 : null
+}
+
+/** Where a flag is shown; what is said of the hole or its stones stands in the section of the method. */
 const FLAG_FIELD: Readonly<Record<string, string>> = {
-  'hole-small': 'sandCone.hole',
-  'hole-large': 'sandCone.hole',
-  'particle-large': 'sandCone.largestParticle',
+  'cylinder-gravel': 'cylinder.largestParticle',
+  'not-constant-mass': 'moisture.dryAndTin',
   'outside-calibration': 'gauge.wetDensity',
   'rod-depth': 'gauge.rodDepth',
+  'wall-offset-sign': 'moisture.wall.offset',
+  'wall-backscatter': 'gauge.wetDensity',
   'standard-count-density': 'gauge.standardCounts.density',
   'standard-count-moisture': 'gauge.standardCounts.moisture',
   'carbide-range': 'moisture.readingPercent',
 }
 
+const HOLE_FIELD: Readonly<Record<string, string>> = { 'hole-small': 'hole', 'hole-large': 'hole', 'particle-large': 'largestParticle' }
+
 function flagsOf(sheet: RawSheet, reasons: ReducedSheet['flags'], { place, lift, surfaceUm, depthUm }: Pick<Assessment, 'place' | 'lift' | 'surfaceUm' | 'depthUm'>): Map<string, string> {
-  const hole = sheet.method === 'sand-cone' ? reduceSandCone({ ...sheet, moistSoil: 1 }) : null
+  const hole = holeOf(sheet)
   const flags = new Map<string, string>()
   for (const { code, message } of [...reasons, ...(hole?.ok ? hole.flags : [])]) {
-    const field = FLAG_FIELD[code]
+    const field = HOLE_FIELD[code] === undefined ? FLAG_FIELD[code] : `${SECTION[sheet.method]}.${HOLE_FIELD[code]}`
     if (field !== undefined && !flags.has(field)) flags.set(field, `${message} You may save it, flagged.`)
   }
   if (place && lift !== null && surfaceUm !== null && depthUm !== null && depthUm > 0) {

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import type { FieldMethod } from '#shared/domain/field-sheets.ts'
+import { fieldMethodSchema } from '#shared/schemas/field-sheet.ts'
 import type { Habits, MethodHabits, TestForm } from './test-form.ts'
 
 const DRAFT = 'hardpan.draft.test'
@@ -55,10 +56,12 @@ const unitHabit = z.object({
   densityUnit: z.enum(['kg/m3', 'g/cm3', 'pcf', 'kN/m3', 'lb/yd3']).optional(),
   lengthUnit: z.enum(['mm', 'cm', 'in']).optional(),
   moistureMethod: z.enum(['oven', 'microwave', 'carbide', 'gauge', 'stated']).optional(),
+  volumeUnit: z.enum(['cm3', 'in3', 'ft3']).optional(),
   moistureMassUnit: z.enum(['g', 'kg', 'lb']).optional(),
+  gaugeId: z.string().optional(),
+  calibrations: z.partialRecord(z.enum(['sand-density', 'cone', 'cylinder', 'balloon']), z.string()).optional(),
 })
-const methodSchema = z.enum(['sand-cone', 'nuclear-gauge', 'plain'])
-const habitsSchema = z.object({ method: methodSchema.optional(), byMethod: z.partialRecord(methodSchema, unitHabit).optional() })
+const habitsSchema = z.object({ method: fieldMethodSchema.optional(), byMethod: z.partialRecord(fieldMethodSchema, unitHabit).optional() })
 
 /** How a person measured the last time, on this device. */
 export function readHabits(userId: string): Habits {

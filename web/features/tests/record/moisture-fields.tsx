@@ -6,11 +6,15 @@ import { Segmented } from '#web/components/ui/segmented.tsx'
 import { CalculatedField } from '#web/components/ui/text-fields.tsx'
 import { MOISTURE_WORDS } from '#web/features/tests/outcome-words.ts'
 import { useUnits } from '#web/lib/site-context.tsx'
+import { CorrectionOffer } from './correction-offer.tsx'
+import { DryingSteps } from './drying-steps.tsx'
+import { GaugeChoice } from './gauge-choice.tsx'
 import { MoistureCaution } from './method-caution.tsx'
 import { FieldGrid, ReadingField } from './reading-field.tsx'
 import { useRecord } from './record-context.tsx'
 import type { TestForm } from './test-form.ts'
 import { UnitChoice } from './unit-choice.tsx'
+import { WallFields } from './wall-fields.tsx'
 
 const METHODS: readonly MoistureMethod[] = ['oven', 'microwave', 'carbide', 'gauge', 'stated']
 
@@ -18,8 +22,8 @@ export function MoistureFields() {
   const { control } = useFormContext<TestForm>()
   const fieldMethod = useWatch({ control, name: 'method' })
   const { method } = useWatch({ control, name: 'moisture' })
-  // a gauge reads water beside its own wet density, never beside a hole
-  const options = METHODS.filter((each) => each !== 'gauge' || fieldMethod !== 'sand-cone').map((value) => ({ value, label: MOISTURE_WORDS[value].name }))
+  // a gauge reads water beside its own wet density, never beside a hole or a cylinder
+  const options = METHODS.filter((each) => each !== 'gauge' || fieldMethod === 'nuclear-gauge' || fieldMethod === 'plain').map((value) => ({ value, label: MOISTURE_WORDS[value].name }))
   const { name, standard } = MOISTURE_WORDS[method]
   return (
     <section>
@@ -46,9 +50,11 @@ export function MoistureFields() {
         <Controller control={control} name="moisture.method" render={({ field }) => <Segmented wide label="Moisture by" options={options} value={field.value} onChange={field.onChange} />} />
         <MoistureCaution method={method} />
       </div>
+      {method === 'gauge' && fieldMethod !== 'nuclear-gauge' && <GaugeChoice />}
       <FieldGrid>
         <MoistureReadings method={method} />
       </FieldGrid>
+      {method === 'gauge' && <WallFields />}
     </section>
   )
 }
@@ -65,8 +71,9 @@ function MoistureReadings({ method }: { method: MoistureMethod }) {
       return (
         <>
           <ReadingField name="moisture.wetAndTin" label="Wet soil and tin" unit={massUnit} />
-          <ReadingField name="moisture.dryAndTin" label="Dry soil and tin" unit={massUnit} />
           <ReadingField name="moisture.tin" label="Tin" unit={massUnit} />
+          <ReadingField name="moisture.dryAndTin" label="Dry soil and tin" unit={massUnit} />
+          {method === 'microwave' && <DryingSteps />}
         </>
       )
     case 'carbide':
@@ -80,7 +87,7 @@ function MoistureReadings({ method }: { method: MoistureMethod }) {
       return (
         <>
           <ReadingField name="moisture.moistureDensity" label="Moisture density" unit={DENSITY_UNIT_LABEL[densityUnit]} />
-          <ReadingField name="moisture.correctionK" label="Site correction K" hint="0 for none" />
+          <ReadingField name="moisture.correctionK" label="Site correction K" hint={<CorrectionOffer />} />
           {dryBasis}
         </>
       )

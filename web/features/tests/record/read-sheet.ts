@@ -1,4 +1,5 @@
 import type { CreateTest } from '#shared/schemas/field-test.ts'
+import type { WallOffset } from '#shared/domain/wall-offset.ts'
 import { parseNumber } from '#web/lib/units.ts'
 import type { TestForm } from './test-form.ts'
 
@@ -17,14 +18,14 @@ function optional(text: string): number | undefined {
 }
 
 /** The part of the form that a method's readings stand in. */
-export const SECTION = { 'sand-cone': 'sandCone', 'nuclear-gauge': 'gauge', plain: 'plain' } as const
+export const SECTION = { 'sand-cone': 'sandCone', 'rubber-balloon': 'balloon', 'drive-cylinder': 'cylinder', 'nuclear-gauge': 'gauge', plain: 'plain' } as const
 
 /** The field sheet as typed. */
 export function readSheet(form: TestForm): RawSheet {
-  const moisture = readMoisture(form.moisture)
+  const moisture = readMoisture(form)
   switch (form.method) {
     case 'sand-cone': {
-      const { massUnit, densityUnit, lengthUnit, ...typed } = form.sandCone
+      const { massUnit, densityUnit, lengthUnit, sandId, coneId, ...typed } = form.sandCone
       const largestParticle = optional(typed.largestParticle)
       return {
         method: 'sand-cone',
@@ -36,9 +37,14 @@ export function readSheet(form: TestForm): RawSheet {
         sandDensity: reading(typed.sandDensity),
         moistSoil: reading(typed.moistSoil),
         ...(largestParticle === undefined ? {} : { largestParticle, lengthUnit }),
+        ...calibrated(sandId, coneId),
         moisture,
       }
     }
+    case 'rubber-balloon':
+      return readBalloon(form.balloon, moisture)
+    case 'drive-cylinder':
+      return readCylinder(form.cylinder, moisture)
     case 'nuclear-gauge':
       return readGauge(form.gauge, moisture)
     case 'plain':
@@ -46,13 +52,59 @@ export function readSheet(form: TestForm): RawSheet {
   }
 }
 
-function readGauge({ mode, lengthUnit, densityUnit, ...typed }: TestForm['gauge'], moisture: MoistureSheet): RawSheet {
+function calibrated(...ids: readonly string[]): { calibrationIds?: string[] } {
+  const used = ids.filter((id) => id !== '')
+  return used.length === 0 ? {} : { calibrationIds: used }
+}
+
+function readBalloon({ volumeUnit, massUnit, lengthUnit, balloonId, ...typed }: TestForm['balloon'], moisture: MoistureSheet): RawSheet {
+  const largestParticle = optional(typed.largestParticle)
+  return {
+    method: 'rubber-balloon',
+    volumeUnit,
+    volumeBefore: reading(typed.volumeBefore),
+    volumeAfter: reading(typed.volumeAfter),
+    massUnit,
+    moistSoil: reading(typed.moistSoil),
+    ...(largestParticle === undefined ? {} : { largestParticle }),
+    lengthUnit,
+    ...calibrated(balloonId),
+    moisture,
+  }
+}
+
+function readCylinder({ massUnit, volumeBy, volumeUnit, lengthUnit, cylinderId, ...typed }: TestForm['cylinder'], moisture: MoistureSheet): RawSheet {
+  const largestParticle = optional(typed.largestParticle)
+  const size = volumeBy === 'stated' ? { volume: reading(typed.volume) } : { diameter: reading(typed.diameter), height: reading(typed.height) }
+  return {
+    method: 'drive-cylinder',
+    massUnit,
+    cylinderAndSoil: reading(typed.cylinderAndSoil),
+    cylinder: reading(typed.cylinder),
+    volumeBy,
+    volumeUnit,
+    ...size,
+    lengthUnit,
+    ...(largestParticle === undefined ? {} : { largestParticle }),
+    ...(volumeBy === 'stated' ? calibrated(cylinderId) : {}),
+    moisture,
+  }
+}
+
+/** The weighings before the last, as they are kept in the form. */
+export function earlierWeighings(text: string): number[] {
+  return text.split(' ').filter((mass) => mass !== '').map(reading)
+}
+
+function readGauge({ gaugeId, mode, lengthUnit, densityUnit, ...typed }: TestForm['gauge'], moisture: MoistureSheet): RawSheet {
   const second = optional(typed.secondWetDensity)
   const { density, moisture: moistureCount, referenceDensity, referenceMoisture } = typed.standardCounts
   const [densityReference, moistureReference] = [optional(referenceDensity), optional(referenceMoisture)]
-  const counted = [density, moistureCount, referenceDensity, referenceMoisture].some((text) => text.trim() !== '')
+  // the counts of a registered gauge stand in its register
+  const counted = gaugeId === '' && [density, moistureCount, referenceDensity, referenceMoisture].some((text) => text.trim() !== '')
   return {
     method: 'nuclear-gauge',
+    ...(gaugeId === '' ? {} : { gaugeId }),
     mode,
     lengthUnit,
     rodDepth: mode === 'backscatter' ? 0 : reading(typed.rodDepth),
@@ -73,18 +125,34 @@ function readGauge({ mode, lengthUnit, densityUnit, ...typed }: TestForm['gauge'
   }
 }
 
-function readMoisture(typed: TestForm['moisture']): MoistureSheet {
+function readMoisture({ method, gauge, moisture: typed }: TestForm): MoistureSheet {
   switch (typed.method) {
     case 'oven':
-    case 'microwave':
-      return { method: typed.method, massUnit: typed.massUnit, wetAndTin: reading(typed.wetAndTin), dryAndTin: reading(typed.dryAndTin), tin: reading(typed.tin) }
+    case 'microwave': {
+      const earlier = typed.method === 'microwave' ? earlierWeighings(typed.earlier) : []
+      const weighed = { massUnit: typed.massUnit, wetAndTin: reading(typed.wetAndTin), dryAndTin: reading(typed.dryAndTin), tin: reading(typed.tin) }
+      return { method: typed.method, ...weighed, ...(earlier.length === 0 ? {} : { earlier }) }
+    }
     case 'carbide':
       return { method: 'carbide', readingPercent: reading(typed.readingPercent) }
     case 'gauge':
-      return { method: 'gauge', densityUnit: typed.densityUnit, moistureDensity: reading(typed.moistureDensity), correctionK: reading(typed.correctionK) }
+      return {
+        method: 'gauge',
+        densityUnit: typed.densityUnit,
+        moistureDensity: reading(typed.moistureDensity),
+        correctionK: reading(typed.correctionK),
+        ...readWall(typed.wall),
+        // a sheet read with a gauge names it itself
+        ...(method === 'nuclear-gauge' || gauge.gaugeId === '' ? {} : { gaugeId: gauge.gaugeId }),
+      }
     case 'stated':
       return { method: 'stated', percent: reading(typed.percent) }
   }
+}
+
+/** Without a sign chosen there is no correction yet; the form asks for it. */
+function readWall({ by, convention, offset }: TestForm['moisture']['wall']): { wall?: WallOffset } {
+  return by === '' || convention === '' ? {} : { wall: { appliedBy: by, convention, offset: reading(offset) } }
 }
 
 /** True when every number of a sheet is one: then it can be sent. */
@@ -95,6 +163,8 @@ export function isFinite(value: unknown): boolean {
 
 /** The form's field that a sheet's field is typed in. */
 export function formField(method: TestForm['method'], field: string): string {
+  if (field === 'moisture.gaugeId') return 'gauge.gaugeId'
+  if (field.startsWith('moisture.earlier')) return 'moisture.dryAndTin'
   return field.startsWith('moisture.') ? field : `${SECTION[method]}.${field}`
 }
 

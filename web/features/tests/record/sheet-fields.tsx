@@ -1,10 +1,13 @@
 import { Controller, useFormContext, useWatch } from 'react-hook-form'
 import type { FieldMethod } from '#shared/domain/field-sheets.ts'
+import { fieldMethodSchema } from '#shared/schemas/field-sheet.ts'
 import { SectionHead } from '#web/components/ui/section-head.tsx'
 import { Segmented } from '#web/components/ui/segmented.tsx'
 import { TextArea } from '#web/components/ui/text-fields.tsx'
 import { useMe } from '#web/data/session/use-me.ts'
 import { METHOD_WORDS } from '#web/features/tests/outcome-words.ts'
+import { BalloonFields } from './balloon-fields.tsx'
+import { CylinderFields } from './cylinder-fields.tsx'
 import { GaugeFields } from './gauge-fields.tsx'
 import { readHabits } from './keep.ts'
 import { MethodCaution } from './method-caution.tsx'
@@ -16,8 +19,7 @@ import { OversizeAndDepth, ReferenceFields } from './reference-fields.tsx'
 import { SandConeFields } from './sand-cone-fields.tsx'
 import { moistureHabits, type TestForm } from './test-form.ts'
 
-const METHODS: readonly FieldMethod[] = ['sand-cone', 'nuclear-gauge', 'plain']
-const OPTIONS = METHODS.map((value) => ({ value, label: METHOD_WORDS[value].name }))
+const OPTIONS = fieldMethodSchema.options.map((value) => ({ value, label: METHOD_WORDS[value].name }))
 
 /** The sheet, top to bottom. Readings stay shut until the purpose is chosen. */
 export function SheetFields({ placed, unmoved }: { placed: boolean; unmoved: boolean }) {
@@ -40,6 +42,8 @@ export function SheetFields({ placed, unmoved }: { placed: boolean; unmoved: boo
         <Controller control={control} name="method" render={({ field }) => <Segmented wide label="Method" options={OPTIONS} value={field.value} onChange={chooseMethod} />} />
         <MethodCaution method={method} />
         {method === 'sand-cone' && <SandConeFields />}
+        {method === 'rubber-balloon' && <BalloonFields />}
+        {method === 'drive-cylinder' && <CylinderFields />}
         {method === 'nuclear-gauge' && <GaugeFields />}
         {method === 'plain' && <PlainFields />}
         <MoistureFields />

@@ -1,15 +1,18 @@
 import { useFormContext, type FieldPath } from 'react-hook-form'
 import { DENSITY_UNIT_LABEL } from '#shared/units/density.ts'
+import { VOLUME_UNIT_LABEL } from '#shared/units/volume.ts'
 import type { TestForm } from './test-form.ts'
 
 const MASS = ['g', 'kg', 'lb'] as const
 const DENSITY = ['g/cm3', 'kg/m3', 'pcf', 'kN/m3', 'lb/yd3'] as const
 const LENGTH = ['in', 'mm', 'cm'] as const
+const VOLUME = ['cm3', 'in3', 'ft3'] as const
 
 const CHOICES = {
   mass: MASS.map((unit) => ({ unit, label: unit })),
   density: DENSITY.map((unit) => ({ unit, label: DENSITY_UNIT_LABEL[unit] })),
   length: LENGTH.map((unit) => ({ unit, label: unit })),
+  volume: VOLUME.map((unit) => ({ unit, label: VOLUME_UNIT_LABEL[unit] })),
 } as const
 
 /** The unit that a part of the sheet was read in; what is typed stays as it is. */
