@@ -1,6 +1,6 @@
 import { Entity, ForeignKey, Index, Unique } from 'typeorm'
 import { SiteOwned } from '#api/entities/base.ts'
-import { BigCountColumn, BooleanColumn, DecimalColumn, DoubleColumn, IdColumn, InstantColumn, IntColumn, JsonColumn, TextColumn, WordColumn } from '#api/entities/columns.ts'
+import { BigCountColumn, BooleanColumn, DoubleColumn, IdColumn, InstantColumn, IntColumn, JsonColumn, TextColumn, WordColumn } from '#api/entities/columns.ts'
 import type { RawSheet } from '#shared/domain/field-sheets.ts'
 import type { Reason } from '#shared/domain/result.ts'
 import type { Outcome, Verdict } from '#shared/domain/verdict-types.ts'
@@ -85,7 +85,7 @@ export class FieldTestEntity extends SiteOwned {
   @IdColumn('gauge_id', { nullable: true })
   gaugeId!: string | null
 
-  @DecimalColumn('oversize_percent', 6, 2, { nullable: true })
+  @DoubleColumn('oversize_percent', { nullable: true })
   oversizePercent!: number | null
 
   @IdColumn('curve_id')

@@ -9,6 +9,7 @@ import { CreateAttachments1796083200013 } from '#api/migrations/1796083200013-cr
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
 import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
 import { CreateSavedViews1796083200017 } from '#api/migrations/1796083200017-create-saved-views.ts'
+import { KeepOversizeAsEntered1796083200020 } from '#api/migrations/1796083200020-keep-oversize-as-entered.ts'
 
 export const groundMigrations = [
   CreateSitePlan1796083200006,
@@ -22,4 +23,5 @@ export const groundMigrations = [
   KeepVerdicts1796083200015,
   CreateOnePointChecks1796083200016,
   CreateSavedViews1796083200017,
+  KeepOversizeAsEntered1796083200020,
 ]

@@ -69,6 +69,7 @@ export function standardCountFlags(counts: StandardCounts): Reason[] {
     if (reference === undefined) return []
     const drift = (100 * Math.abs(count - reference)) / reference
     if (settle(drift) <= allowed) return []
-    return [{ code: `standard-count-${name}`, message: `The ${name} standard count is ${drift.toFixed(1)} % from its reference; ${allowed} % is allowed.` }]
+    const far = drift < 1000 ? `${drift.toFixed(1)} %` : 'far'
+    return [{ code: `standard-count-${name}`, message: `The ${name} standard count is ${far} from its reference; ${allowed} % is allowed.` }]
   })
 }

@@ -5,8 +5,9 @@ export const TEXT_LIMITS = { name: 80, line: 200, remarks: 2_000 } as const
 
 /** Lower case, so that equal ids are equal texts. */
 export const idSchema = z.uuid('This record needs an identifier').toLowerCase()
-/** An instant as ISO-8601 text with its offset. */
-export const instantSchema = z.iso.datetime({ offset: true, error: 'Give a date and time' })
+const [EARLIEST, LATEST] = [Date.UTC(1900, 0), Date.UTC(2200, 0)]
+/** An instant as ISO-8601 text with its offset; a year of one or two digits is a slip, and another year to the database. */
+export const instantSchema = z.iso.datetime({ offset: true, error: 'Give a date and time' }).refine((text) => Date.parse(text) >= EARLIEST && Date.parse(text) < LATEST, 'Give the date with its year, such as 2026')
 export const nameSchema = z.string().trim().min(1, 'Give a name').max(TEXT_LIMITS.name, `At most ${TEXT_LIMITS.name} characters`)
 export const lineSchema = z.string().trim().max(TEXT_LIMITS.line, `At most ${TEXT_LIMITS.line} characters`)
 export const remarksSchema = z.string().trim().max(TEXT_LIMITS.remarks, `At most ${TEXT_LIMITS.remarks} characters`)

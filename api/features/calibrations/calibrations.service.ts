@@ -10,7 +10,7 @@ import type { Calibration, CreateCalibration } from '#shared/schemas/calibration
 /** Records a calibration with what its measurements come to. */
 export async function recordCalibration(write: SiteWrite, input: CreateCalibration): Promise<Calibration> {
   const { manager, siteId, user, now } = write
-  const performedAt = notInFuture(new Date(input.performedAt), now)
+  const performedAt = notInFuture(new Date(input.performedAt), now, 'body.performedAt')
   const validUntil = input.validUntil === null ? null : new Date(input.validUntil)
   const result = calibrate(input.sheet)
   refuseIf([

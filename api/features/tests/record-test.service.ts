@@ -64,7 +64,7 @@ type Assessed = Awaited<ReturnType<typeof assessTest>>
 
 /** Everything a test is before it is stored: its place, verdict, chain, stake and what is to be told about it. */
 async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, input: CreateTest) {
-  const sampledAt = notInFuture(new Date(input.sampledAt), now)
+  const sampledAt = notInFuture(new Date(input.sampledAt), now, 'body.sampledAt')
   await refuseUnnamedGauge(manager, siteId, input)
   const { cell, zone, at } = placeTest(plan, input)
   const curve = await loadCurve(manager, siteId, input.curveId)
