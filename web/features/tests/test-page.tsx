@@ -86,7 +86,7 @@ function TestSheet({ test }: { test: TestDetail }) {
           <TestVerdict test={test} />
         </div>
         <div className="bg-raised px-4 pt-5 pb-8 sm:px-[26px] lg:border-r lg:border-rule-2">
-          {sheetParts(test.sheet).map(({ title, aside, rows }) => (
+          {sheetParts(test.sheet, test.gauge).map(({ title, aside, rows }) => (
             <SheetSection key={title} title={title} aside={aside}>
               <RowList rows={rows} />
             </SheetSection>

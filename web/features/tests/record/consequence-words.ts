@@ -9,8 +9,15 @@ type Context = Pick<SiteContextValue, 'lookup' | 'units'>
 
 const verb = (n: number, one: string, many: string): string => (n === 1 ? one : many)
 
-/** What saving does to the ground, a sentence each. */
-export function consequences(preview: TestPreview, { outcome, purpose, lift }: { readonly outcome: Verdict['outcome'] | null; readonly purpose: Purpose; readonly lift: number }, { lookup }: Context): string[] {
+/** What saving does to the ground, and what its gauge keeps it from, a sentence each. */
+export function consequences(...asked: Parameters<typeof groundWords>): string[] {
+  const [{ gauge }, { purpose }] = asked
+  const words = groundWords(...asked)
+  if (gauge === null || gauge.state === 'good') return words
+  return [...words, purpose === 'required' && gauge.state !== 'not-named' ? `${gauge.message} Until that is put right it releases no ground.` : gauge.message]
+}
+
+function groundWords(preview: TestPreview, { outcome, purpose, lift }: { readonly outcome: Verdict['outcome'] | null; readonly purpose: Purpose; readonly lift: number }, { lookup }: Context): string[] {
   const words = preview.marks.map(({ kind, cells }) => {
     const what = cellsWords(cells, lookup)
     const n = cells.length

@@ -1,3 +1,4 @@
+import { useQuery } from '@tanstack/react-query'
 import { useEffect, useMemo, useState } from 'react'
 import { FormProvider, useForm, useWatch } from 'react-hook-form'
 import { useLocation, useNavigate } from 'react-router-dom'
@@ -6,6 +7,7 @@ import type { Curve } from '#shared/schemas/lab.ts'
 import type { Stake } from '#shared/schemas/lot.ts'
 import { paths } from '#web/app/paths.ts'
 import { Button } from '#web/components/ui/button.tsx'
+import { gaugeQueries } from '#web/data/gauge/queries.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { assessTest } from './assess-test.ts'
 import { FormNotices } from './form-notices.tsx'
@@ -48,7 +50,8 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
   const location = useLocation()
   const form = useForm<TestForm>({ defaultValues: start, mode: 'onTouched' })
   const values = useWatch({ control: form.control, compute: (all: TestForm) => all })
-  const assessment = useMemo(() => assessTest(values, { context, stakes, curves, follows }), [values, context, stakes, curves, follows])
+  const registered = (useQuery(gaugeQueries.list(site.id)).data?.length ?? 0) > 0
+  const assessment = useMemo(() => assessTest(values, { context, stakes, curves, follows, registered }), [values, context, stakes, curves, follows, registered])
   const saving = useSaving({ siteId: site.id, userId, draft, form, assessment })
   const lotVersion = useSheetDefaults(site.id, form, assessment.place, assessment.lift, curves)
   const previewed = usePreview(site.id, values, assessment, follows)

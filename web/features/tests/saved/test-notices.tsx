@@ -31,6 +31,11 @@ export function TestNotices({ test }: { test: TestDetail }) {
           {test.void.reason}
         </Banner>
       )}
+      {test.void === null && test.gauge !== null && test.gauge.state !== 'good' && (
+        <Banner tone="off" title={test.gauge.message} action={test.gauge.gaugeId !== null && <Link to={`${paths.gauges(site.id)}?gauge=${test.gauge.gaugeId}`}>Open the gauge</Link>}>
+          {test.gauge.state === 'not-named' ? 'It is noted where ground is released on it.' : 'Until that is put right the test releases no ground.'}
+        </Banner>
+      )}
       {test.void === null && test.superseded && (
         <Banner tone="off" title="Out of force.">
           Rework was reported done in its cell after it was taken; it speaks for nothing any more.
