@@ -14,12 +14,14 @@ import { convertDensity } from '#shared/units/density.ts'
 import { createCalendar } from '#seed/demo/demo-calendar.ts'
 import { Crew } from '#seed/demo/demo-crew.ts'
 import { GaugeLog } from '#seed/demo/demo-gauges.ts'
+import { attachDemoFiles } from '#seed/demo/demo-files.ts'
 import { demoShifts } from '#seed/demo/demo-panels.ts'
 import type { Shift } from '#seed/demo/demo-panels.ts'
 import { createPeople, DEMO_PEOPLE } from '#seed/demo/demo-people.ts'
 import type { DemoIds } from '#seed/demo/demo-people.ts'
 import { createChance } from '#seed/demo/demo-random.ts'
 import type { Chance } from '#seed/demo/demo-random.ts'
+import { checkFamily, recordFamily } from '#seed/demo/demo-family.ts'
 import { demoCurve, demoMaterials, demoSiteInput, emptySiteInput } from '#seed/demo/demo-site.ts'
 import { playToday } from '#seed/demo/demo-today.ts'
 import { Foreman } from '#seed/demo/demo-work.ts'
@@ -57,6 +59,7 @@ export async function seedDemo(server: Deps): Promise<void> {
   const people = await createPeople(server.dataSource.manager, chance, clock)
   const stage = { deps, people, chance }
   const fills = await openSite(stage, input, clock)
+  await recordFamily({ deps, people, siteId: input.id }, fills.ridge.materialId, clock)
   await openSite(stage, emptySiteInput(chance), clock)
 
   const crew = new Crew({ deps, siteId: input.id, people, chance, setClock: (at) => (clock = at) })
@@ -70,7 +73,10 @@ export async function seedDemo(server: Deps): Promise<void> {
   const carried = await playDays({ foreman, gauges }, calendar.days, pad, court)
   await gauges.today(calendar.today, calendar.days.length)
   await playToday({ foreman, crew, plan, fillOf, day: calendar.today, carried, shifts: today })
+  clock = now
+  await checkFamily({ deps, people, siteId: input.id }, fills.ridge.curveId, now)
   await gauges.correct(calendar.today, fills.ridge.materialId)
+  await attachDemoFiles({ deps, siteId: input.id, people, setClock: (at) => (clock = at) })
 }
 
 type Failures = Awaited<ReturnType<Foreman['shift']>>

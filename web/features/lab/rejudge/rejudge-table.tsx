@@ -143,7 +143,7 @@ function Verdict({ brief, purpose, strong = false, figures = false }: { brief: V
   return (
     <span className="flex items-center gap-2 leading-[1.4]">
       <TestMark outcome={markOf(brief)} verification={purpose === 'verification'} size={20} decorative className="-my-1 shrink-0" />
-      <span className={classNames(strong && 'font-semibold')}>{resultWord(brief)}</span>
+      <span className={classNames('md:whitespace-nowrap', strong && 'font-semibold')}>{resultWord(brief)}</span>
       {figures && (
         <span className="num ml-auto text-small whitespace-nowrap text-ink-2">
           {units.percent(brief.rc)}, {units.deviation(brief.moistureDeviation)}

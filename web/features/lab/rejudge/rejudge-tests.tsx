@@ -5,6 +5,7 @@ import { Button } from '#web/components/ui/button.tsx'
 import { EmptyState } from '#web/components/ui/empty-state.tsx'
 import { SectionHead } from '#web/components/ui/section-head.tsx'
 import { Segmented } from '#web/components/ui/segmented.tsx'
+import { SelectField } from '#web/components/ui/text-fields.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
 import { filterChoices, filterRejudged, sortRejudged, type RejudgeFilter } from './rejudge-filter.ts'
 import { RejudgeDialog } from './rejudge-dialog.tsx'
@@ -45,9 +46,16 @@ export function RejudgeTests({ rejudging, curve }: { rejudging: Rejudging; curve
         <EmptyState title={`No test is judged by ${curve.code}${done === null ? '' : ' any more'}`}>Void tests are left out. New tests take {by.code}.</EmptyState>
       ) : (
         <>
-          <div className="mb-3 flex flex-wrap items-center gap-3 print:hidden">
+          <div className="mb-3 max-md:hidden print:hidden">
             <Segmented label="Which tests" options={choices} value={filter} onChange={setAsked} />
           </div>
+          <SelectField className="mb-3 md:hidden print:hidden" label="Which tests" value={filter} onChange={(event) => setAsked(choices.find((choice) => choice.value === event.target.value)?.value ?? null)}>
+            {choices.map((choice) => (
+              <option key={choice.value} value={choice.value}>
+                {choice.label}
+              </option>
+            ))}
+          </SelectField>
           {shown.length === 0 ? <p className="m-0 text-ink-2">No verdict changes: only figures move.</p> : <RejudgeTable tests={shown} choosable={choosable} ticked={ticked} onTick={tick} selecting={may} />}
           {may && (
             <div className="sticky bottom-0 -mx-4 mt-3 flex flex-wrap items-center gap-3 border-t border-ink bg-raised px-4 py-3 sm:mx-0 sm:px-0 print:hidden">

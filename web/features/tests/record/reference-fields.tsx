@@ -3,6 +3,7 @@ import { oversizeSieve } from '#shared/domain/oversize.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 import { SectionHead } from '#web/components/ui/section-head.tsx'
 import { CalculatedField, SelectField } from '#web/components/ui/text-fields.tsx'
+import { CheckCurveLink } from '#web/features/tests/check-curve-link.tsx'
 import { useUnits } from '#web/lib/site-context.tsx'
 import { FieldGrid, ReadingField } from './reading-field.tsx'
 import { useRecord } from './record-context.tsx'
@@ -20,12 +21,13 @@ export function ReferenceFields() {
   const { curve } = assessment
   const shown = curves.filter((each) => each.status !== 'superseded' || each.id === curve?.id)
   const draft = curve?.status === 'draft' ? 'A draft: the lead has not approved it yet. You may save the test, flagged.' : undefined
+  const superseded = curve?.superseded ? `Superseded by ${curve.superseded.by.code}. You may save the test, flagged.` : undefined
   return (
     <section>
       <SectionHead aside={curve?.materialName}>Reference</SectionHead>
       <FieldGrid>
         <div className="max-sm:col-span-2">
-          <SelectField label="Curve" error={problemAt('curveId')} warning={draft} {...register('curveId')}>
+          <SelectField label="Curve" error={problemAt('curveId')} warning={draft ?? superseded} {...register('curveId')}>
             <option value="">Choose a curve</option>
             {shown.map((each) => (
               <option key={each.id} value={each.id}>
@@ -33,6 +35,7 @@ export function ReferenceFields() {
               </option>
             ))}
           </SelectField>
+          {curve !== null && <CheckCurveLink curveId={curve.id} />}
         </div>
         <CalculatedField label="Max dry unit weight" value={curve?.pair ? units.densityNumber(curve.pair.maxDryDensity) : null} unit={units.marks.density} />
         <CalculatedField label="Optimum moisture" value={curve?.pair ? units.number(curve.pair.optimumMoisture, 1) : null} unit="%" />
