@@ -14,6 +14,7 @@ import { isApiError } from '#web/lib/api-error.ts'
 import { usePageTitle } from '#web/lib/page-title.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { FrozenCriteria } from './saved/frozen-criteria.tsx'
+import { SheetCalibrations } from './saved/sheet-calibrations.tsx'
 import { sheetParts } from './saved/sheet-rows.ts'
 import { RowList, SheetSection } from './saved/sheet-section.tsx'
 import { TestActions } from './saved/test-actions.tsx'
@@ -55,11 +56,17 @@ export function TestPage() {
   )
 }
 
+/** The volume of the hole or the cylinder, in feet where the sheet was read in pounds or feet. */
+function volumeRow(sheet: TestDetail['sheet'], cm3: number) {
+  const customary = ('massUnit' in sheet && sheet.massUnit === 'lb') || ('volumeUnit' in sheet && sheet.volumeUnit === 'ft3')
+  return { label: sheet.method === 'drive-cylinder' ? 'Cylinder volume' : 'Hole volume', value: formatHoleVolume(cm3, customary ? 'us' : 'si') }
+}
+
 function TestSheet({ test }: { test: TestDetail }) {
   const { site, units } = useSite()
   const reduced = reduceSheet(test.sheet)
   const worked = [
-    ...(reduced.ok && reduced.holeVolumeCm3 !== undefined ? [{ label: 'Hole volume', value: formatHoleVolume(reduced.holeVolumeCm3, test.sheet.method === 'sand-cone' && test.sheet.massUnit === 'lb' ? 'us' : 'si') }] : []),
+    ...(reduced.ok && reduced.holeVolumeCm3 !== undefined ? [volumeRow(test.sheet, reduced.holeVolumeCm3)] : []),
     { label: 'Wet unit weight', value: units.density(test.wetDensity) },
     { label: 'Moisture', value: units.percent(test.moisture) },
     { label: 'Dry unit weight', value: units.density(test.dryDensity) },
@@ -91,6 +98,7 @@ function TestSheet({ test }: { test: TestDetail }) {
               <RowList rows={rows} />
             </SheetSection>
           ))}
+          <SheetCalibrations sheet={test.sheet} />
           <SheetSection title="Comes to" aside={`curve ${test.curveCode}`}>
             <RowList rows={worked} />
           </SheetSection>
