@@ -11,6 +11,7 @@ import { looseToCompactedFactor } from '#shared/domain/volume-state.ts'
 import type { CreateMaterial } from '#shared/schemas/lab.ts'
 import type { CreateSite } from '#shared/schemas/site.ts'
 import { convertDensity } from '#shared/units/density.ts'
+import { Apparatus } from '#seed/demo/demo-apparatus.ts'
 import { createCalendar } from '#seed/demo/demo-calendar.ts'
 import { Crew } from '#seed/demo/demo-crew.ts'
 import { GaugeLog } from '#seed/demo/demo-gauges.ts'
@@ -65,11 +66,13 @@ export async function seedDemo(server: Deps): Promise<void> {
   const crew = new Crew({ deps, siteId: input.id, people, chance, setClock: (at) => (clock = at) })
   const gauges = new GaugeLog({ deps, siteId: input.id, people, setClock: (at) => (clock = at) })
   await gauges.open(firstDay)
+  const apparatus = new Apparatus({ deps, siteId: input.id, people, setClock: (at) => (clock = at) })
+  await apparatus.open(firstDay)
   const plan = await crew.plan()
   const { pad, court, panels, ...today } = demoShifts(plan)
   for (const panel of panels) await crew.prepareFoundation(plan, plan.zones[panel.zone]?.id ?? '', panel.cells, firstDay.at(6.2))
   const fillOf = (shift: Shift): Fill => (shift.panel.zone === 1 && shift.lift < 7 ? fills.pitRun : fills.ridge)
-  const foreman = new Foreman({ plan, crew, chance, fillOf, gauges })
+  const foreman = new Foreman({ plan, crew, chance, fillOf, gauges, apparatus })
   const carried = await playDays({ foreman, gauges }, calendar.days, pad, court)
   await gauges.today(calendar.today, calendar.days.length)
   await playToday({ foreman, crew, plan, fillOf, day: calendar.today, carried, shifts: today })
@@ -111,7 +114,7 @@ async function openSite({ deps, people, chance }: Stage, input: CreateSite, samp
     if (role !== 'qc-lead') await writeToSite(deps, { ...lead, verb: 'people.manage' }, (write) => setMember(write, { email, role }))
   }
   const materials = demoMaterials(chance)
-  const fill = async (material: CreateMaterial, curve: typeof RIDGE | typeof PIT_RUN, machine: string): Promise<Fill> => {
+  const fill = async (material: CreateMaterial, curve: typeof RIDGE | typeof PIT_RUN, { machine, gravel }: Pick<Fill, 'machine' | 'gravel'>): Promise<Fill> => {
     await writeToSite(deps, { ...lead, verb: 'material.record' }, (write) => createMaterial(write, material))
     const { id } = await writeToSite(deps, { ...lead, verb: 'curve.record' }, (write) => createCurve(write, demoCurve(chance, { ...curve, materialId: material.id, sampledAt })))
     const { pair } = await writeToSite(deps, { ...lead, verb: 'curve.approve' }, (write) => approveCurve(write, id, 'spline'))
@@ -124,7 +127,8 @@ async function openSite({ deps, people, chance }: Stage, input: CreateSite, samp
       optimum: pair.optimumMoisture,
       zeroAirVoids: (moisture) => convertDensity(zeroAirVoidsDensity(moisture, curve.gs), 'kg/m3', 'pcf'),
       machine,
+      gravel,
     }
   }
-  return { ridge: await fill(materials.ridge, RIDGE, 'Padfoot roller'), pitRun: await fill(materials.pitRun, PIT_RUN, 'Smooth drum roller') }
+  return { ridge: await fill(materials.ridge, RIDGE, { machine: 'Padfoot roller', gravel: false }), pitRun: await fill(materials.pitRun, PIT_RUN, { machine: 'Smooth drum roller', gravel: true }) }
 }

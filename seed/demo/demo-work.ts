@@ -3,6 +3,7 @@ import type { Outcome } from '#shared/domain/verdict-types.ts'
 import type { Crew } from '#seed/demo/demo-crew.ts'
 import type { Day } from '#seed/demo/demo-calendar.ts'
 import type { Shift } from '#seed/demo/demo-panels.ts'
+import type { Apparatus } from '#seed/demo/demo-apparatus.ts'
 import type { Chance } from '#seed/demo/demo-random.ts'
 import type { GaugeLog } from '#seed/demo/demo-gauges.ts'
 import { gaugeSheet, sandConeSheet } from '#seed/demo/demo-sheets.ts'
@@ -20,13 +21,16 @@ export interface Fill {
   /** pcf at zero air voids, so that no reading of the demo is impossible by chance */
   readonly zeroAirVoids: (moisture: number) => number
   readonly machine: string
+  /** stones that no cylinder is driven into */
+  readonly gravel: boolean
 }
 
 export type Fault = 'too-dry' | 'too-wet' | 'too-loose' | 'impossible'
 
 /** Which of the demo's tests, by running count, go wrong, and how. */
 const FAULTS: Readonly<Record<number, Fault>> = { 11: 'too-loose', 29: 'too-dry', 47: 'too-wet', 68: 'impossible', 83: 'too-loose', 104: 'too-dry', 127: 'too-dry', 149: 'too-loose', 166: 'too-wet', 187: 'too-dry' }
-const SAND_CONE_EVERY = 9
+/** tests that no gauge is read at */
+const DUG_EVERY = 9
 const VERIFICATION_EVERY = 4
 const JUDGEMENT_EVERY = 19
 
@@ -43,6 +47,7 @@ export interface Work {
   readonly chance: Chance
   readonly fillOf: (shift: Shift) => Fill
   readonly gauges: Pick<GaugeLog, 'main' | 'spare'>
+  readonly apparatus: Pick<Apparatus, 'sheet'>
 }
 
 /** Plays shifts: fill in the morning, stakes and tests after noon, release before the day ends; failures wait for next morning. */
@@ -72,8 +77,9 @@ export class Foreman {
     }
   }
 
-  sheet(reading: Reading) {
-    return this.tests % SAND_CONE_EVERY === 0 ? sandConeSheet(reading, this.work.chance) : gaugeSheet(reading, this.work.gauges.main)
+  sheet(reading: Reading, gravel: boolean) {
+    const { apparatus, chance, gauges } = this.work
+    return this.tests % DUG_EVERY === 0 ? apparatus.sheet(reading, chance, { turn: this.tests / DUG_EVERY - 1, gravel }) : gaugeSheet(reading, gauges.main)
   }
 
   async place(shift: Shift, at: Date): Promise<string[]> {
@@ -93,7 +99,7 @@ export class Foreman {
   async testAt(shift: Shift, stake: Stake, at: Date, fault?: Fault): Promise<{ id: string; outcome: Outcome; orderId: string | null }> {
     this.tests++
     const fill = this.work.fillOf(shift)
-    return this.work.crew.test({ ...this.where(shift), curveId: fill.curveId, place: stake, stakeId: stake.id, at, sheet: this.sheet(this.reading(fill, fault)) })
+    return this.work.crew.test({ ...this.where(shift), curveId: fill.curveId, place: stake, stakeId: stake.id, at, sheet: this.sheet(this.reading(fill, fault), fill.gravel) })
   }
 
   /** A whole shift on a past day; answers the failures that wait for the next morning. */

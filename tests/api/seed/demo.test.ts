@@ -3,6 +3,7 @@ import type { DataSource } from 'typeorm'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { createDataSource } from '#api/data-source.ts'
 import { readEnv } from '#api/env.ts'
+import { listCalibrations } from '#api/features/calibrations/calibrations.queries.ts'
 import { loadGaugeChecks } from '#api/features/gauges/gauge-checks.queries.ts'
 import type { GaugeTest } from '#api/features/gauges/gauge-checks.queries.ts'
 import { listGauges, loadGaugeDetail } from '#api/features/gauges/gauges.queries.ts'
@@ -94,6 +95,21 @@ describe('the demo', () => {
     expect(counts.filter((count) => count.void === null && !count.good).map((count) => count.stands)).toEqual([false])
     expect(counts.filter((count) => count.void !== null)).toHaveLength(1)
     expect(counts.filter((count) => count.stands && count.good)).toHaveLength(37)
+  })
+
+  it('tests by cone, balloon and cylinder too, each whose calibration is in force', async () => {
+    const { manager } = demo.dataSource
+    const rows: { method: string; n: string }[] = await manager.query("SELECT `method`, COUNT(*) AS `n` FROM `field_test` WHERE `site_id` = ? AND `purpose` = 'required' GROUP BY 1", [demo.siteId])
+    const counted = new Map(rows.map((row) => [row.method, Number(row.n)]))
+    expect(counted.get('sand-cone')).toBeGreaterThanOrEqual(8)
+    expect(counted.get('rubber-balloon')).toBeGreaterThanOrEqual(4)
+    expect(counted.get('drive-cylinder')).toBeGreaterThanOrEqual(3)
+    const calibrations = await listCalibrations(manager, demo.siteId)
+    const inForce = calibrations.filter((each) => each.void === null && Date.parse(each.validUntil ?? '') >= NOW.getTime())
+    expect(inForce.map((each) => [each.sheet.kind, each.flags]).sort()).toEqual([['balloon', []], ['cone', []], ['cylinder', []], ['sand-density', []]])
+    expect(calibrations.filter((each) => each.void !== null)).toHaveLength(1)
+    const doubted: { n: string }[] = await manager.query("SELECT COUNT(*) AS `n` FROM `field_test` WHERE `site_id` = ? AND `flags` REGEXP 'calibration-|hole-|not-constant'", [demo.siteId])
+    expect(Number(doubted[0]?.n)).toBe(0)
   })
 
   it('adds up: board, lots, lifts, zones and sheet say the same', async () => {
