@@ -79,7 +79,8 @@ export async function seedDemo(server: Deps): Promise<void> {
   clock = now
   await checkFamily({ deps, people, siteId: input.id }, fills.ridge.curveId, now)
   await gauges.correct(calendar.today, fills.ridge.materialId)
-  await attachDemoFiles({ deps, siteId: input.id, people, setClock: (at) => (clock = at) })
+  clock = now
+  await attachDemoFiles({ deps, siteId: input.id, people })
 }
 
 type Failures = Awaited<ReturnType<Foreman['shift']>>

@@ -19,6 +19,8 @@ const noMatch = (query: string): MediaQueryList => Object.assign(new EventTarget
 
 window.matchMedia ??= noMatch
 window.ResizeObserver ??= StillObserver
+URL.createObjectURL ??= () => 'blob:a-picture'
+URL.revokeObjectURL ??= () => undefined
 Element.prototype.scrollIntoView ??= () => undefined
 Element.prototype.hasPointerCapture ??= () => false
 Element.prototype.setPointerCapture ??= () => undefined

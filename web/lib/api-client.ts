@@ -13,7 +13,7 @@ export type ApiRequest = {
   readonly signal?: AbortSignal
 }
 
-const CSRF_HEADER = 'x-csrf-token'
+export const CSRF_HEADER = 'x-csrf-token'
 let csrfToken: string | null = null
 
 /** Keeps the token of the session; null after signing in or out, since the session is a new one. */
@@ -48,13 +48,15 @@ async function send(path: string, { method = 'GET', query, body, signal }: ApiRe
   }
 }
 
-async function errorOf(response: Response): Promise<ApiError> {
+/** What an answer that is no success says. */
+export async function errorOf(response: Response): Promise<ApiError> {
   const parsed = errorBodySchema.safeParse(await response.json().catch(() => null))
   if (parsed.success) return new ApiError({ status: response.status, ...parsed.data })
   return new ApiError({ status: response.status, code: 'unreadable', message: `The server answered ${response.status} and gave no reason.` })
 }
 
-async function readJson<T>(response: Response, schema: ZodType<T>): Promise<T> {
+/** An answer's content by its schema. Throws ApiError. */
+export async function readJson<T>(response: Response, schema: ZodType<T>): Promise<T> {
   const parsed = schema.safeParse(await response.json().catch(() => undefined))
   if (parsed.success) return parsed.data
   throw new ApiError({
@@ -71,6 +73,11 @@ async function fetchCsrfToken(signal?: AbortSignal): Promise<string> {
   const { csrfToken: token } = await readJson(response, meResponseSchema)
   csrfToken = token
   return token
+}
+
+/** The session's token, for uploads, which do not go through fetch; `fresh` once the one at hand has run out. */
+export async function csrfTokenOf({ fresh = false } = {}): Promise<string> {
+  return fresh || csrfToken === null ? fetchCsrfToken() : csrfToken
 }
 
 /** Sends, and once more with a fresh token where the token had run out. */

@@ -14,7 +14,7 @@ export async function listAttachments({ manager, siteId, role }: SiteRead, query
   await loadSubject(manager, siteId, query)
   const rows = await manager.find(AttachmentEntity, {
     where: { siteId, subjectType: query.subject, subjectId: query.subjectId, ...shownTo(role) },
-    order: { addedAt: 'ASC', id: 'ASC' },
+    order: { addedAt: 'ASC', takenAt: 'ASC', fileName: 'ASC', id: 'ASC' },
   })
   return present(manager, rows)
 }

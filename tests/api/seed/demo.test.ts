@@ -1,6 +1,6 @@
 import { pino } from 'pino'
 import type { DataSource } from 'typeorm'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest'
 import { createDataSource } from '#api/data-source.ts'
 import { readEnv } from '#api/env.ts'
 import { listCalibrations } from '#api/features/calibrations/calibrations.queries.ts'
@@ -13,6 +13,7 @@ import { loadSitePlan } from '#api/features/ground/site-plan.ts'
 import { loadSheet } from '#api/features/ground/sheet.queries.ts'
 import { listLots } from '#api/features/lots/lots.queries.ts'
 import { verifyChain } from '#api/features/events/verify-chain.ts'
+import { createObjectStore } from '#api/files/object-store.ts'
 import { silentPublisher } from '#api/realtime/publish.ts'
 import { seedDemo } from '#seed/demo.ts'
 import { decodeSheet } from '#shared/ground-codec.ts'
@@ -31,14 +32,14 @@ let adminUrl: string
 let stopServer: () => Promise<void>
 let demo: Demo
 
-async function makeDemo(tag: string): Promise<Demo> {
+async function makeDemo(tag: string, files: Record<string, string> = inject('objectStore')): Promise<Demo> {
   const name = workerDatabaseName(tag)
   await dropDatabases(adminUrl, name)
   const dataSource = createDataSource(await createDatabase(adminUrl, name))
   await dataSource.initialize()
   await dataSource.runMigrations()
-  const env = readEnv({ DATABASE_URL: 'mysql://a:b@127.0.0.1/c', SESSION_SECRET: 'x'.repeat(32) })
-  await seedDemo({ env, dataSource, clock: () => NOW, publisher: silentPublisher, logger: pino({ level: 'silent' }) })
+  const env = readEnv({ DATABASE_URL: 'mysql://a:b@127.0.0.1/c', SESSION_SECRET: 'x'.repeat(32), ...files })
+  await seedDemo({ env, dataSource, clock: () => NOW, publisher: silentPublisher, logger: pino({ level: 'silent' }), objects: createObjectStore(env) })
   const [site]: { id: string }[] = await dataSource.query("SELECT `id` FROM `site` WHERE `name` = 'Alder Flats yard'")
   return { dataSource, siteId: site?.id ?? '' }
 }
@@ -139,6 +140,11 @@ describe('the demo', () => {
     expect(reworkOnTop).toBeGreaterThan(0)
   })
 
+  it('has pictures at some tests and a report of a curve, kept in the store', async () => {
+    const files: { subject_type: string; kind: string; n: string }[] = await demo.dataSource.query('SELECT `subject_type`, `kind`, COUNT(*) AS `n` FROM `attachment` WHERE `site_id` = ? GROUP BY 1, 2 ORDER BY 1', [demo.siteId])
+    expect(files).toEqual([{ subject_type: 'curve', kind: 'document', n: '2' }, { subject_type: 'test', kind: 'photo', n: expect.stringMatching(/^1[0-9]$/) as string }])
+  })
+
   it('is proved by a fresh derivation and by its event chain', async () => {
     const { manager } = demo.dataSource
     expect(await findDifferences(manager, await loadSitePlan(manager, demo.siteId))).toEqual([])
@@ -146,7 +152,8 @@ describe('the demo', () => {
   })
 
   it('is the same again for the same clock', { timeout: 240_000 }, async () => {
-    const again = await makeDemo('demo_again')
+    // without a store for files, which have no say in the figures
+    const again = await makeDemo('demo_again', {})
     const figures = async (one: Demo) => {
       const { totals, lifts, zones, ready } = await boardOf(one)
       const tests: unknown[] = await one.dataSource.query('SELECT `number`, `cell`, `lift`, `u`, `v`, `rc`, `outcome`, `sampled_at` FROM `field_test` WHERE `site_id` = ? ORDER BY `seq`', [one.siteId])

@@ -1,5 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { signInResponseSchema, type SignInRequest } from '#shared/schemas/session.ts'
+import { uploads } from '#web/data/attachment/uploads.ts'
 import { apiJson, apiVoid, keepCsrfToken } from '#web/lib/api-client.ts'
 import { sessionQueries } from './queries.ts'
 
@@ -23,6 +24,7 @@ export function useSignOut() {
     mutationFn: () => apiVoid('/api/session', { method: 'DELETE' }),
     onSuccess: async () => {
       keepCsrfToken(null)
+      uploads.clear()
       client.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== sessionQueries.all()[0] })
       await client.fetchQuery({ ...sessionQueries.me(), staleTime: 0 })
     },

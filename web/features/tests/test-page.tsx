@@ -1,9 +1,11 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useParams } from 'react-router-dom'
 import { formatHoleVolume } from '#shared/units/format.ts'
+import { fileSideOfTest } from '#shared/policies/attachment.ts'
 import { reduceSheet } from '#shared/domain/reduce-sheet.ts'
 import type { TestDetail } from '#shared/schemas/field-test.ts'
 import { paths } from '#web/app/paths.ts'
+import { SubjectFiles } from '#web/components/files/subject-files.tsx'
 import { Banner } from '#web/components/ui/banner.tsx'
 import { buttonClasses } from '#web/components/ui/button-classes.ts'
 import { Button } from '#web/components/ui/button.tsx'
@@ -111,6 +113,7 @@ function TestSheet({ test }: { test: TestDetail }) {
             </SheetSection>
           )}
           <VerdictHistory test={test} />
+          <SubjectFiles of={{ subject: 'test', subjectId: test.id }} side={fileSideOfTest(test.purpose)} title="Photos and documents" none="No photo yet. One of the hole and one of the place show later where this was." />
           <TestChain test={test} />
           <TestEvents testId={test.id} />
         </div>

@@ -1,5 +1,6 @@
 import { useState } from 'react'
 import type { Curve } from '#shared/schemas/lab.ts'
+import { SubjectFiles } from '#web/components/files/subject-files.tsx'
 import { Button } from '#web/components/ui/button.tsx'
 import { FactsRow } from '#web/components/ui/figure.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
@@ -60,6 +61,9 @@ export function CurveSheet({ curve }: { curve: Curve }) {
       <FitsTable fits={fit} reported={reported} inUse={curve.pairFrom} />
       {reported !== null && <p className="mt-2 mb-0 text-ink-2">Laboratory’s own pair: {reported.reason}</p>}
       <FitWarnings warnings={fit.warnings} />
+      <div className="mt-6">
+        <SubjectFiles of={{ subject: 'curve', subjectId: curve.id }} side="contractor" title="Laboratory report" none="No report yet. Add the laboratory’s sheet as a PDF, or a photo of it." />
+      </div>
       {approving && <ApproveDialog curve={curve} onClose={() => setApproving(false)} />}
     </section>
   )

@@ -6,7 +6,9 @@ import type { CreateTest, TestDetail } from '#shared/schemas/field-test.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 import type { Stake } from '#shared/schemas/lot.ts'
 import { paths } from '#web/app/paths.ts'
+import { FilesToSend } from '#web/components/files/files-to-send.tsx'
 import { Button } from '#web/components/ui/button.tsx'
+import { uploads } from '#web/data/attachment/uploads.ts'
 import { gaugeQueries } from '#web/data/gauge/queries.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { assessTest } from './assess-test.ts'
@@ -79,6 +81,7 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
     flagAt: (field) => assessment.flags.get(field),
   }
 
+  const record = { subject: 'test', subjectId: start.id } as const
   const focusFirst = (): void => {
     const [first] = assessment.problems.keys()
     if (first === 'purpose') document.querySelector<HTMLInputElement>('#purpose-choice input')?.focus()
@@ -86,9 +89,14 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
   }
   const handleCancel = (): void => {
     keepDraft(draft, null)
+    uploads.dropAll(record)
     // opened by its address alone there is nothing to go back to
     if (location.key === 'default') void navigate(paths.tests(site.id))
     else void navigate(-1)
+  }
+  const handleStartAfresh = (): void => {
+    uploads.dropAll(record)
+    onStartAfresh()
   }
   const leave = (
     <Button onClick={handleCancel} className="max-lg:min-h-12 max-lg:px-5">
@@ -123,8 +131,9 @@ export function RecordForm({ userId, draft, start, restored, onStartAfresh, stak
           <div className="min-h-0 flex-1 overflow-y-auto lg:grid lg:grid-cols-[minmax(0,1fr)_minmax(400px,42%)] lg:overflow-hidden">
             <VerdictStrip previewed={previewed} />
             <div className="bg-raised px-4 pt-4 pb-6 sm:px-[26px] lg:overflow-y-auto lg:border-r lg:border-rule-2 lg:pt-5">
-              <FormNotices saving={saving} restored={restored} onStartAfresh={onStartAfresh} lotVersion={lotVersion} followed={followed} follows={follows} />
+              <FormNotices saving={saving} restored={restored} onStartAfresh={handleStartAfresh} lotVersion={lotVersion} followed={followed} follows={follows} />
               <SheetFields placed={placedAtStart} unmoved={!isSet(dirtyFields, 'placeBy')} />
+              <FilesToSend of={record} />
             </div>
             <div className="bg-sheet px-4 pt-[22px] pb-8 sm:px-[26px] max-lg:border-t max-lg:border-rule-2 lg:overflow-y-auto">
               <VerdictSide previewed={previewed} />

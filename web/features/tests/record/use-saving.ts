@@ -2,6 +2,7 @@ import { useState } from 'react'
 import { useNavigate } from 'react-router-dom'
 import type { UseFormReturn } from 'react-hook-form'
 import { paths } from '#web/app/paths.ts'
+import { uploads } from '#web/data/attachment/uploads.ts'
 import { useRecordTest } from '#web/data/test/mutations.ts'
 import type { Assessment } from './assess-test.ts'
 import { differingLift, serverProblems } from './server-problems.ts'
@@ -37,6 +38,7 @@ export function useSaving({ siteId, userId, draft, form, assessment }: SavingInp
         onSuccess: (answer) => {
           keepHabits(userId, values.method, habitsOf(values))
           keepDraft(draft, null)
+          uploads.start({ subject: 'test', subjectId: answer.id })
           void navigate(paths.test(siteId, answer.id), { replace: true, state: { saved: answer } })
         },
         onError: (error) => setQuestion(differingLift(error) ?? null),

@@ -6,7 +6,7 @@ import { eventQueries } from '#web/data/event/queries.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { SheetSection } from './sheet-section.tsx'
 
-const VERBS: Readonly<Record<string, string>> = { 'test.recorded': 'Recorded', 'test.voided': 'Voided', 'test.rejudged': 'Judged again', 'test.superseded': 'Put out of force by rework' }
+const VERBS: Readonly<Record<string, string>> = { 'test.recorded': 'Recorded', 'test.voided': 'Voided', 'test.rejudged': 'Judged again', 'test.superseded': 'Put out of force by rework', 'file.attached': 'File added', 'file.withdrawn': 'File withdrawn' }
 
 function eventWords({ verb, payload }: AuditEvent): string {
   const said = VERBS[verb] ?? (verb.split('.').at(-1) ?? verb)
