@@ -1,6 +1,6 @@
 import { Entity, ForeignKey, Unique } from 'typeorm'
 import { SiteOwned } from '#api/entities/base.ts'
-import { DecimalColumn, TextColumn } from '#api/entities/columns.ts'
+import { BooleanColumn, DecimalColumn, TextColumn } from '#api/entities/columns.ts'
 
 @Unique('uq_borrow_material_name', ['siteId', 'name'])
 @ForeignKey('SiteEntity', ['siteId'], ['id'], { name: 'fk_borrow_material_site' })
@@ -20,4 +20,11 @@ export class BorrowMaterialEntity extends SiteOwned {
 
   @DecimalColumn('shrink_percent', 6, 2)
   shrinkPercent!: number
+
+  /** specific gravity of the solids, null where it is not known */
+  @DecimalColumn('gs', 6, 3, { nullable: true })
+  gs!: number | null
+
+  @BooleanColumn('gs_measured')
+  gsMeasured!: boolean
 }

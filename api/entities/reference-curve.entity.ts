@@ -71,4 +71,14 @@ export class ReferenceCurveEntity extends SiteOwned {
 
   @TextColumn('supersede_reason', 2000, { nullable: true })
   supersedeReason!: string | null
+
+  /** the specimens as they were written down; null where only points were given */
+  @JsonColumn('entry', { nullable: true })
+  entry!: NonNullable<CreateCurve['entry']> | null
+
+  @JsonColumn('apparatus', { nullable: true })
+  apparatus!: NonNullable<CreateCurve['apparatus']> | null
+
+  @TextColumn('withdraw_reason', 2000, { nullable: true })
+  withdrawReason!: string | null
 }

@@ -6,6 +6,7 @@ import { AddCoarsePartToCurves1796083200010 } from '#api/migrations/179608320001
 import { CreateCalibrations1796083200011 } from '#api/migrations/1796083200011-create-calibrations.ts'
 import { CreateGauges1796083200012 } from '#api/migrations/1796083200012-create-gauges.ts'
 import { CreateAttachments1796083200013 } from '#api/migrations/1796083200013-create-attachments.ts'
+import { AddLabSheet1796083200014 } from '#api/migrations/1796083200014-add-lab-sheet.ts'
 import { KeepVerdicts1796083200015 } from '#api/migrations/1796083200015-keep-verdicts.ts'
 import { CreateOnePointChecks1796083200016 } from '#api/migrations/1796083200016-create-one-point-checks.ts'
 import { CreateSavedViews1796083200017 } from '#api/migrations/1796083200017-create-saved-views.ts'
@@ -20,6 +21,7 @@ export const groundMigrations = [
   CreateCalibrations1796083200011,
   CreateGauges1796083200012,
   CreateAttachments1796083200013,
+  AddLabSheet1796083200014,
   KeepVerdicts1796083200015,
   CreateOnePointChecks1796083200016,
   CreateSavedViews1796083200017,

@@ -6,7 +6,7 @@ import type { MaximumPair } from '#shared/domain/reference-curve.ts'
 /** A curve of the site as a check needs it. */
 export interface SiteCurve extends Omit<FamilyMember, 'pair'> {
   readonly materialId: string
-  readonly status: 'draft' | 'approved' | 'superseded'
+  readonly status: 'draft' | 'approved' | 'superseded' | 'withdrawn'
   readonly pair: MaximumPair | null
 }
 

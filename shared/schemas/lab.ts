@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { curveApparatusSchema, curveEntrySchema } from '#shared/schemas/curve-entry.ts'
 import { finiteSchema, idSchema, instantSchema, lineSchema, nameSchema, percentSchema, reasonSchema } from '#shared/schemas/common.ts'
 
 export const specificGravitySchema = finiteSchema.min(1.5, 'Specific gravity is between 1.5 and 5.5').max(5.5, 'Specific gravity is between 1.5 and 5.5')
@@ -12,8 +13,16 @@ export const createMaterialSchema = z.object({
   swellPercent: finiteSchema.min(0).max(150),
   /** percent of bank volume lost when compacted; negative where it grows */
   shrinkPercent: finiteSchema.min(-60).max(60),
+  /** specific gravity of the solids, where it is known; new curves begin with it */
+  gs: specificGravitySchema.nullish(),
+  gsMeasured: z.boolean().optional(),
 })
+/** PATCH …/materials/:id: what is left out stays. */
+export const updateMaterialSchema = createMaterialSchema.omit({ id: true }).partial()
+export type UpdateMaterial = z.infer<typeof updateMaterialSchema>
 export const materialSchema = createMaterialSchema.extend({
+  gs: z.number().nullable(),
+  gsMeasured: z.boolean(),
   /** loose to compacted volume, from swell and shrink */
   looseToCompacted: z.number(),
 })
@@ -41,7 +50,11 @@ export const createCurveSchema = z.object({
   materialId: idSchema,
   method: z.enum(['D698', 'T 99', 'D1557', 'T 180']),
   procedure: z.enum(['A', 'B', 'C', 'D']),
+  /** taken from `entry` where that is given */
   points: z.array(curvePointSchema).max(40),
+  /** the specimens as they were written down */
+  entry: curveEntrySchema.nullish(),
+  apparatus: curveApparatusSchema.nullish(),
   gs: specificGravitySchema,
   gsMeasured: z.boolean(),
   /** null where the stones are not known: a test with oversize is then refused */
@@ -53,6 +66,10 @@ export const createCurveSchema = z.object({
   sampledAt: instantSchema,
 })
 export type CreateCurve = z.infer<typeof createCurveSchema>
+/** PUT …/curves/:id: a draft put right, as a whole. */
+export const correctCurveSchema = createCurveSchema.omit({ id: true })
+export type CorrectCurve = z.infer<typeof correctCurveSchema>
+export const withdrawCurveSchema = z.object({ reason: reasonSchema })
 export const approveCurveSchema = z.object({
   /** the pair the lead confirms, reported to 0.1 and used so */
   use: z.enum(['spline', 'quadratic', 'cubic', 'reported']),
@@ -62,7 +79,13 @@ export type CurveUse = z.infer<typeof approveCurveSchema>['use']
 export const pairSchema = z.object({ maxDryDensity: z.number(), optimumMoisture: z.number() })
 export const curveSchema = createCurveSchema.extend({
   materialName: z.string(),
-  status: z.enum(['draft', 'approved', 'superseded']),
+  status: z.enum(['draft', 'approved', 'superseded', 'withdrawn']),
+  entry: curveEntrySchema.nullable(),
+  apparatus: curveApparatusSchema.nullable(),
+  /** where it departs from its method, or states what does not belong together */
+  flags: z.array(z.object({ code: z.string(), message: z.string() })),
+  /** why a draft was taken back */
+  withdrawReason: z.string().nullable(),
   fit: z.object({
     spline: pairSchema.nullable(),
     quadratic: pairSchema.nullable(),

@@ -9,6 +9,8 @@ export const MATERIAL: Material = {
   classification: 'Silty sand',
   swellPercent: 25,
   shrinkPercent: 10,
+  gs: null,
+  gsMeasured: false,
   looseToCompacted: 0.72,
 }
 
@@ -33,6 +35,10 @@ export function buildCurve(overrides: Partial<Curve> = {}): Curve {
     method: 'D698',
     procedure: 'A',
     points,
+    entry: null,
+    apparatus: null,
+    flags: [],
+    withdrawReason: null,
     gs: 2.7,
     gsMeasured: true,
     coarse: null,

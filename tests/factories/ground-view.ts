@@ -172,7 +172,7 @@ export function buildRelease(overrides: Partial<Release> = {}): Release {
 
 /** Half of its loose volume is left when it is compacted. */
 export function buildMaterial(overrides: Partial<Material> = {}): Material {
-  return { id: '6d5c1c1e-2f57-4a53-9b1e-2a9a0b7c1d21', name: 'North cut', source: '', classification: '', swellPercent: 25, shrinkPercent: 37.5, looseToCompacted: 0.5, ...overrides }
+  return { id: '6d5c1c1e-2f57-4a53-9b1e-2a9a0b7c1d21', name: 'North cut', source: '', classification: '', swellPercent: 25, shrinkPercent: 37.5, gs: null, gsMeasured: false, looseToCompacted: 0.5, ...overrides }
 }
 
 export function buildPlacement(overrides: Partial<Placement> = {}): Placement {

@@ -5,6 +5,7 @@ import { ReferenceCurveEntity } from '#api/entities/reference-curve.entity.ts'
 import { SiteEntity } from '#api/entities/site.entity.ts'
 import { UserEntity } from '#api/entities/user.entity.ts'
 import { notFound } from '#api/errors.ts'
+import { sheetFlags } from '#api/features/lab/curve-sheet.ts'
 import { presentFit } from '#api/features/lab/fit-curve.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 
@@ -31,7 +32,7 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
   const codes = new Map((await manager.find(ReferenceCurveEntity, { where: { siteId, id: In(successors) }, select: { id: true, code: true } })).map(({ id, code }) => [id, code]))
   const judged = await countTests(manager, siteId, curves.map((curve) => curve.id))
   return curves.map((curve): Curve => {
-    const { id, code, materialId, method, procedure, points, gs, gsMeasured, coarse, reported, status, maxDryDensity, optimumMoisture } = curve
+    const { id, code, materialId, method, procedure, points, gs, gsMeasured, coarse, reported, status, maxDryDensity, optimumMoisture, entry, apparatus, withdrawReason } = curve
     return {
       id,
       code,
@@ -40,6 +41,10 @@ async function presentCurves(manager: EntityManager, siteId: string, curves: rea
       method,
       procedure,
       points,
+      entry,
+      apparatus,
+      flags: sheetFlags(curve),
+      withdrawReason,
       gs,
       gsMeasured,
       coarse,

@@ -1,21 +1,24 @@
 import { Router } from 'express'
 import type { Deps } from '#api/deps.ts'
 import { listCurves, loadCurve } from '#api/features/lab/curves.queries.ts'
-import { approveCurve, createCurve } from '#api/features/lab/curves.service.ts'
+import { approveCurve, correctCurve, createCurve, withdrawCurve } from '#api/features/lab/curves.service.ts'
 import { listMaterials } from '#api/features/lab/materials.queries.ts'
-import { createMaterial } from '#api/features/lab/materials.service.ts'
+import { createMaterial, updateMaterial } from '#api/features/lab/materials.service.ts'
 import { readSite, writeToSite } from '#api/features/site-head/write-to-site.ts'
 import { requireUser, userOf } from '#api/http/require-user.ts'
 import { validate } from '#api/http/validate.ts'
 import { recordParamsSchema, siteParamsSchema } from '#shared/schemas/common.ts'
 import {
   approveCurveSchema,
+  correctCurveSchema,
   createCurveSchema,
   createMaterialSchema,
   curveListSchema,
   curveSchema,
   materialListSchema,
   materialSchema,
+  updateMaterialSchema,
+  withdrawCurveSchema,
 } from '#shared/schemas/lab.ts'
 
 /** Mounted at /api/sites/:siteId. */
@@ -39,6 +42,15 @@ export function labRoutes(deps: Deps): Router {
       const write = { siteId, userId: userOf(req).id, verb: 'material.record', request: { id: body.id, body } } as const
       const material = await writeToSite(deps, write, (site) => createMaterial(site, body))
       res.status(201).json(materialSchema.parse(material))
+    }),
+  )
+
+  router.patch(
+    '/materials/:id',
+    requireUser,
+    validate({ params: recordParamsSchema, body: updateMaterialSchema }, async ({ params: { siteId, id }, body }, req, res) => {
+      const write = { siteId, userId: userOf(req).id, verb: 'material.record' } as const
+      res.json(materialSchema.parse(await writeToSite(deps, write, (site) => updateMaterial(site, id, body))))
     }),
   )
 
@@ -69,6 +81,24 @@ export function labRoutes(deps: Deps): Router {
       const read = { siteId, userId: userOf(req).id, verb: 'registers.see' } as const
       const curve = await readSite(deps, read, ({ manager }) => loadCurve(manager, siteId, id))
       res.json(curveSchema.parse(curve))
+    }),
+  )
+
+  router.put(
+    '/curves/:id',
+    requireUser,
+    validate({ params: recordParamsSchema, body: correctCurveSchema }, async ({ params: { siteId, id }, body }, req, res) => {
+      const write = { siteId, userId: userOf(req).id, verb: 'curve.record' } as const
+      res.json(curveSchema.parse(await writeToSite(deps, write, (site) => correctCurve(site, id, body))))
+    }),
+  )
+
+  router.post(
+    '/curves/:id/withdraw',
+    requireUser,
+    validate({ params: recordParamsSchema, body: withdrawCurveSchema }, async ({ params: { siteId, id }, body }, req, res) => {
+      const write = { siteId, userId: userOf(req).id, verb: 'curve.record' } as const
+      res.json(curveSchema.parse(await writeToSite(deps, write, (site) => withdrawCurve(site, id, body.reason))))
     }),
   )
 

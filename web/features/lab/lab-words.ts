@@ -6,7 +6,7 @@ import type { Units } from '#web/lib/units.ts'
 export const METHODS = ['D698', 'T 99', 'D1557', 'T 180'] as const
 export const LETTERS = ['A', 'B', 'C', 'D'] as const
 
-export const STATUS_WORDS: Readonly<Record<Curve['status'], string>> = { draft: 'Waits for approval', approved: 'Approved', superseded: 'Superseded' }
+export const STATUS_WORDS: Readonly<Record<Curve['status'], string>> = { draft: 'Waits for approval', approved: 'Approved', superseded: 'Superseded', withdrawn: 'Withdrawn' }
 export const FIT_WORDS: Readonly<Record<CurveUse, string>> = { spline: 'Smooth curve', quadratic: 'Quadratic', cubic: 'Cubic', reported: 'Laboratory’s own' }
 
 const SIEVE_WORDS = { 'no-4': 'No. 4', '3/8-in': '3/8 in', '3/4-in': '3/4 in' } as const

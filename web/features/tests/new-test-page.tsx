@@ -20,7 +20,7 @@ import { purposesFor } from './record/purpose-fields.tsx'
 import { RecordForm } from './record/record-form.tsx'
 import { emptyForm } from './record/test-form.ts'
 
-const RANK = { approved: 0, draft: 1, superseded: 2 } as const
+const RANK = { approved: 0, draft: 1, superseded: 2, withdrawn: 3 } as const
 const byStanding = (a: Curve, b: Curve): number => RANK[a.status] - RANK[b.status] || a.code.localeCompare(b.code)
 
 /** Recording a field test: the sheet at the left, what it comes to at the right. */
@@ -37,7 +37,7 @@ export function NewTestPage() {
   const followedId = opening.follows?.testId ?? ''
   const followed = useQuery({ ...testQueries.detail(site.id, followedId), enabled: followedId !== '' })
   const purposes = purposesFor(can)
-  const sorted = useMemo(() => [...(curves.data ?? [])].sort(byStanding), [curves.data])
+  const sorted = useMemo(() => (curves.data ?? []).filter((curve) => curve.status !== 'withdrawn').sort(byStanding), [curves.data])
 
   if (purposes.length === 0) {
     return (

@@ -55,7 +55,7 @@ describe('GET and POST /api/sites/:siteId/materials', () => {
     const body = materialInput({ name: 'Silty sand, cut 4', swellPercent: 25, shrinkPercent: 10 })
     const answer = await technician.post(open.path('/materials'), body)
     expect(answer.status).toBe(201)
-    expect(materialSchema.parse(answer.body)).toEqual({ ...body, looseToCompacted: looseToCompactedFactor(body) })
+    expect(materialSchema.parse(answer.body)).toEqual({ ...body, gs: null, gsMeasured: false, looseToCompacted: looseToCompactedFactor(body) })
     expect(materialSchema.parse(answer.body).looseToCompacted).toBeCloseTo(0.72, 12)
     expect((await technician.post(open.path('/materials'), body)).body).toEqual(answer.body)
     const { materials } = materialListSchema.parse((await open.people['owner-rep'].get(open.path('/materials'))).body)
