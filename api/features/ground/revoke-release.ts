@@ -2,6 +2,7 @@ import type { LoadedLot } from '#api/features/ground/lot-facts.queries.ts'
 import { loadTestNames } from '#api/features/ground/running-numbers.queries.ts'
 import type { SitePlan } from '#api/features/ground/site-plan.ts'
 import type { SiteWrite } from '#api/features/site-head/site-write.ts'
+import { groupBy } from '#shared/domain/group-by.ts'
 import type { BrokenRelease } from '#shared/domain/lot-facts.ts'
 
 const WORDS: Readonly<Record<BrokenRelease['reason'], string>> = {
@@ -15,11 +16,11 @@ export async function revokeBroken(write: SiteWrite, plan: SitePlan, { lot }: Lo
   if (broken.length === 0) return
   const { manager, siteId } = write
   const names = await loadTestNames(manager, siteId, broken.map((release) => release.testId))
-  for (const { cell, reason, testId } of broken) {
+  const wordsOf = ({ reason, testId }: BrokenRelease) => {
     const name = names.get(testId ?? '')
-    const words = name === undefined ? WORDS[reason] : `${WORDS[reason]} (${name})`
-    await revoke(write, lot.lift, [cell], words)
+    return name === undefined ? WORDS[reason] : `${WORDS[reason]} (${name})`
   }
+  for (const [words, cells] of groupBy(broken, wordsOf)) await revoke(write, lot.lift, cells.map((release) => release.cell), words)
   write.record('release.revoked', { type: 'lot', id: lot.id }, {
     lift: lot.lift,
     cells: broken.map((release) => ({ cell: plan.label(release.cell), reason: WORDS[release.reason], testId: release.testId })),

@@ -32,9 +32,10 @@ export interface Applied {
  * Carries the effects out, the new verdicts being stored already: first everything falls that no longer stands, then the
  * orders open again that were closed on lost passes, and only then new failures mark, so that none of them takes for a pass
  * what has become a failure in the same act.
+ * @param versions the new verdict's version by test
  * @param why what became of a test, after its number: "was judged again by RB-4"
  */
-export async function applyEffects(write: SiteWrite, plan: SitePlan, planned: readonly Replanned[], why: string): Promise<Applied[]> {
+export async function applyEffects(write: SiteWrite, plan: SitePlan, planned: readonly Replanned[], versions: ReadonlyMap<string, number>, why: string): Promise<Applied[]> {
   const touched = new Map(planned.map(({ test }) => [test.id, [] as number[]]))
   const add = (test: FieldTestEntity, cells: readonly number[]) => touched.get(test.id)?.push(...cells)
   for (const one of planned) add(one.test, await liftMarks(write, one))
@@ -44,9 +45,10 @@ export async function applyEffects(write: SiteWrite, plan: SitePlan, planned: re
   }
   const applied: Applied[] = []
   for (const one of planned) {
-    const made = await makeMarks(write, plan, one)
+    const version = versions.get(one.test.id) ?? 1
+    const made = await makeMarks(write, plan, one, version)
     add(one.test, made.touched)
-    applied.push({ planned: one, version: await latestVersion(write, one.test), marks: made.marks, order: made.order ?? numbered(one.order), touched: touched.get(one.test.id) ?? [] })
+    applied.push({ planned: one, version, marks: made.marks, order: made.order ?? numbered(one.order), touched: touched.get(one.test.id) ?? [] })
   }
   return applied
 }
@@ -98,7 +100,7 @@ interface Made {
 }
 
 /** A result that fails or is in doubt now marks its ground as a new one does, and a failure issues or joins its order. */
-async function makeMarks(write: SiteWrite, plan: SitePlan, { test, verdict, effect }: Replanned): Promise<Made> {
+async function makeMarks(write: SiteWrite, plan: SitePlan, { test, verdict, effect }: Replanned, version: number): Promise<Made> {
   const { manager, siteId } = write
   if (effect.marks !== 'make') return { marks: [], order: null, touched: [] }
   const [lotId] = await loadLotsOfCells(manager, siteId, test.lift, [test.cell])
@@ -106,7 +108,7 @@ async function makeMarks(write: SiteWrite, plan: SitePlan, { test, verdict, effe
   const marks = marksOf({ verdict, purpose: test.purpose, cell: test.cell, at: { u: test.u, v: test.v }, replacesId: null, lot })
   const rows = marks.flatMap(({ kind, cells }) => cells.map((cell) => ({ siteId, testId: test.id, cell, lift: test.lift, kind })))
   if (rows.length > 0) await manager.insert(TestMarkEntity, rows)
-  await manager.update(TestVerdictEntity, { siteId, testId: test.id, version: await latestVersion(write, test) }, { marks: marks as never })
+  await manager.update(TestVerdictEntity, { siteId, testId: test.id, version }, { marks: marks as never })
   const touched = rows.map((row) => row.cell)
   const failed = failedCells(marks)
   if (weightOf(verdict) !== 'fail' || failed.length === 0) return { marks, order: null, touched }
@@ -116,10 +118,6 @@ async function makeMarks(write: SiteWrite, plan: SitePlan, { test, verdict, effe
   if (open) await continueOrder(write, plan, open, failure, failed)
   const order = open ?? (await issueOrder(write, plan, failure, failed))
   return { marks, order: numbered(order), touched: [...touched, ...held] }
-}
-
-async function latestVersion({ manager, siteId }: SiteWrite, test: FieldTestEntity): Promise<number> {
-  return manager.countBy(TestVerdictEntity, { siteId, testId: test.id })
 }
 
 function numbered(order: ReworkOrderEntity | null): Applied['order'] {

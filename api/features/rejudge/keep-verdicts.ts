@@ -21,8 +21,11 @@ function flagsUnder(by: ReferenceCurveEntity, flags: readonly Reason[]): Reason[
   return [...flags.filter((flag) => !ABOUT_CURVE.includes(flag.code)), ...curveFlags(by, otherMaterial ? '' : null)]
 }
 
-/** Stores the new verdicts as the ones in force and keeps the old ones; the first one is written with the second. */
-export async function keepVerdicts(write: SiteWrite, planned: readonly Replanned[], { by }: CurvePair, reason: string): Promise<void> {
+/**
+ * Stores the new verdicts as the ones in force and keeps the old ones; the first one is written with the second.
+ * @returns the new verdict's version by test
+ */
+export async function keepVerdicts(write: SiteWrite, planned: readonly Replanned[], { by }: CurvePair, reason: string): Promise<ReadonlyMap<string, number>> {
   const { manager, siteId, user, now } = write
   const ids = planned.map(({ test }) => test.id)
   const kept = await manager.find(TestVerdictEntity, { where: { siteId, testId: In(ids) }, order: { version: 'ASC' }, select: { testId: true, version: true, specificationId: true } })
@@ -48,6 +51,7 @@ export async function keepVerdicts(write: SiteWrite, planned: readonly Replanned
       { curveId: by.id, outcome, treatedAsFail, near, headline, rc, moistureDeviation, verdict: verdict as never, flags: flags as never, updatedAt: now },
     )
   }
+  return new Map(rows.map((row) => [row.testId, row.version]))
 }
 
 /** The version of a zone's specification that has a test's frozen limits. */

@@ -38,8 +38,8 @@ async function judgeChosen(write: SiteWrite, pair: CurvePair, { tests }: Pick<Re
   const planned = await loadChosen(write, pair, [...new Set(tests)])
   const lifts = [...new Set(planned.map(({ test }) => test.lift))]
   const before = await readStates(write, lifts)
-  await keepVerdicts(write, planned, pair, reason)
-  const applied = await applyEffects(write, plan, planned, `was judged again by ${pair.by.code}`)
+  const versions = await keepVerdicts(write, planned, pair, reason)
+  const applied = await applyEffects(write, plan, planned, versions, `was judged again by ${pair.by.code}`)
   for (const one of applied) tell(write, plan, pair, one, reason)
   write.changed('curve', pair.from.id)
 

@@ -39,7 +39,7 @@ export function CurveSheet({ curve }: { curve: Curve }) {
         ]}
       />
       <p className="mt-3 mb-0">
-        {STATUS_WORDS[curve.status]}
+        {STATUS_WORDS[curve.status === 'superseded' ? 'approved' : curve.status]}
         {curve.approvedBy !== null && curve.approvedAt !== null && ` by ${curve.approvedBy} on ${units.fullDate(curve.approvedAt)}`}. Recorded by {curve.recordedBy}.{' '}
         {curve.testsJudged === 0 ? 'No test was judged by it yet.' : `${curve.testsJudged} ${curve.testsJudged === 1 ? 'test was' : 'tests were'} judged by it.`}
       </p>

@@ -19,7 +19,7 @@ export function CurveSuccession({ curve }: { curve: Curve }) {
   }
   const { by, at, who, reason } = curve.superseded
   return (
-    <Banner tone="off" className="mt-3" title={`Superseded by ${by.code}.`} action={<Link to={to}>{curve.testsJudged > 0 ? 'Judge its tests again' : 'See its tests'}</Link>}>
+    <Banner tone="off" className="my-3" title={`Superseded by ${by.code}.`} action={<Link to={to}>{curve.testsJudged > 0 ? 'Judge its tests again' : 'See its tests'}</Link>}>
       {units.fullDate(at)}, {who}: {reason}
     </Banner>
   )

@@ -4,28 +4,24 @@ import { paths } from '#web/app/paths.ts'
 import { Banner } from '#web/components/ui/banner.tsx'
 import { StateSwatch } from '#web/components/ui/state-swatch.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
-import { countOf, moveWords, orderLines, releaseWords, stateOfMove } from './rejudge-words.ts'
+import { countOf, moveLines, orderLines, releaseLines } from './rejudge-words.ts'
 
 /** What judging again does to ground, releases and orders; `done`: what it did. */
 export function RejudgeEffects({ answer, done = false }: { answer: RejudgeAnswer; done?: boolean }) {
   const orders = orderLines(answer.tests, done)
-  if (answer.moves.length === 0 && answer.releases.length === 0 && orders.length === 0) {
+  const releases = releaseLines(answer.releases)
+  if (answer.moves.length === 0 && releases.length === 0 && orders.length === 0) {
     return <p className="m-0">The ground {done ? 'stands' : 'would stand'} as it is: no cell, release or order changes.</p>
   }
   return (
     <ul aria-label={done ? 'What it did' : 'What it would do'} className="m-0 list-none p-0">
-      {answer.moves.map((move) => (
-        <li key={`${move.lift} ${move.from} ${move.to}`} className="flex items-center gap-3 border-b border-rule py-[7px]">
-          <StateSwatch state={stateOfMove(move.to)} />
-          <span>{moveWords(move)}</span>
+      {moveLines(answer.moves).map(({ to, words }) => (
+        <li key={words} className="flex items-center gap-3 border-b border-rule py-[7px]">
+          <StateSwatch state={to} />
+          <span>{words}</span>
         </li>
       ))}
-      {answer.releases.map((release) => (
-        <li key={release.number} className="border-b border-rule py-[7px]">
-          Release {releaseWords(release)}
-        </li>
-      ))}
-      {orders.map((line) => (
+      {[...releases, ...orders].map((line) => (
         <li key={line} className="border-b border-rule py-[7px]">
           {line}
         </li>

@@ -19,7 +19,7 @@ export function VerdictHistory({ test }: { test: TestDetail }) {
   const { data } = useQuery(rejudgeQueries.history(site.id, test.id))
   if (data === undefined || data.length === 0) return null
   return (
-    <SheetSection title="Verdicts" aside="the last one is in force">
+    <SheetSection title="Verdicts" aside="every one is kept">
       <ol className="m-0 list-none p-0">
         {data.toReversed().map((kept) => (
           <Entry key={kept.version} kept={kept} purpose={test.purpose} />

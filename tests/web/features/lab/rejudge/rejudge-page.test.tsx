@@ -64,7 +64,7 @@ describe('judging the tests of a superseded curve again', () => {
     await userEvent.click(screen.getByRole('button', { name: 'Judge 1 test again' }))
     const dialog = await screen.findByRole('dialog')
     const list = await within(dialog).findByRole('list', { name: 'What it would do' })
-    expect(within(list).getAllByRole('listitem').map((item) => item.textContent)).toEqual(['2 cells of lift 2: released to rework', 'Release A-012: 2 cells of lift 2 revoked', 'An order for T-0003'])
+    expect(within(list).getAllByRole('listitem').map((item) => item.textContent)).toEqual(['2 cells: released to rework, lift 2', 'Release A-012 revoked in 2 cells of lift 2', 'A rework order for T-0003'])
     expect(rehearsed).toEqual([{ by: SUCCESSOR_ID, tests: ['T-0003'] }])
     await userEvent.click(within(dialog).getByRole('button', { name: 'Judge again' }))
     expect((await within(dialog).findByRole('alert')).textContent).toBe('Say why, in a few words')
