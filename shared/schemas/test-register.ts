@@ -37,8 +37,8 @@ export type RegisterKey = z.infer<typeof registerKeySchema>
 export const directionSchema = z.enum(['asc', 'desc'])
 export const registerSortSchema = z.strictObject({ key: registerKeySchema, direction: directionSchema })
 export type RegisterSort = z.infer<typeof registerSortSchema>
-/** Newest first, by when they were recorded. */
-export const USUAL_SORT: RegisterSort = { key: 'recorded', direction: 'desc' }
+/** Newest first. */
+export const USUAL_SORT: RegisterSort = { key: 'sampled', direction: 'desc' }
 
 export const MOISTURE_METHODS = moistureSheetSchema.options.map((option) => option.shape.method.value)
 export const moistureMethodSchema = z.enum(MOISTURE_METHODS)

@@ -1,92 +1,99 @@
+import { useTable } from '@tanstack/react-table'
+import { useMemo, type KeyboardEvent } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
-import type { TestSummary } from '#shared/schemas/field-test.ts'
+import { registerKeySchema, type RegisterKey, type RegisterSort, type RegisterTest } from '#shared/schemas/test-register.ts'
 import { paths } from '#web/app/paths.ts'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
-import { TestMark } from '#web/components/ui/test-mark.tsx'
 import { classNames } from '#web/lib/class-names.ts'
 import { useSite } from '#web/lib/site-context.tsx'
-import { markOf, METHOD_WORDS, resultWord } from '#web/features/tests/outcome-words.ts'
+import { columnState, registerFeatures, tableColumns } from './register-columns.tsx'
+import { SortButton } from './sort-button.tsx'
+import './register-table.css'
 
-/** Result, mark and whether it is still in force. */
-export function ResultCell({ test }: { test: TestSummary }) {
-  const off = test.voided || test.superseded || !test.current
-  const standing = test.voided ? 'void' : test.superseded ? 'out of force' : test.current ? '' : 'retested'
-  return (
-    <span className="flex items-center gap-2 leading-[1.4] whitespace-nowrap">
-      <TestMark outcome={markOf(test)} verification={test.purpose === 'verification'} size={22} decorative className={classNames('-my-1', off && 'opacity-45')} />
-      <span className={classNames(test.voided && 'line-through', off && 'text-ink-2')}>{resultWord(test)}</span>
-      {standing !== '' && <span className="text-small text-ink-2">{standing}</span>}
-      {test.flagged && <span className="text-small font-semibold text-warn">flagged</span>}
-    </span>
-  )
+type RegisterTableProps = {
+  tests: readonly RegisterTest[]
+  columns: readonly RegisterKey[]
+  sort: RegisterSort
+  onSort: (sort: RegisterSort) => void
+  className?: string
 }
 
-/** The register; the whole row opens the sheet, its number is the link. */
-export function RegisterTable({ tests }: { tests: readonly TestSummary[] }) {
-  const { site, units, label, zone } = useSite()
+/** Arrow keys go from row to row; Enter on a number opens the sheet, as any link. */
+function moveByArrow(event: KeyboardEvent<HTMLElement>): void {
+  const step = { ArrowDown: 1, ArrowUp: -1 }[event.key]
+  const from = event.target instanceof Element ? event.target.closest('tbody a') : null
+  if (step === undefined || from === null) return
+  const links = [...event.currentTarget.querySelectorAll<HTMLElement>('tbody th a')]
+  const to = links[links.findIndex((link) => link === from) + step]
+  if (to === undefined) return
+  event.preventDefault()
+  to.focus()
+}
+
+/** The register; the whole row opens the sheet, its number is the link. Head and numbers stay in sight. */
+export function RegisterTable({ tests, columns, sort, onSort, className }: RegisterTableProps) {
+  const context = useSite()
   const navigate = useNavigate()
+  const defs = useMemo(() => tableColumns(context), [context])
+  const sorting = [{ id: sort.key, desc: sort.direction === 'desc' }]
+  const table = useTable({
+    features: registerFeatures,
+    data: tests,
+    columns: defs,
+    getRowId: (test) => test.id,
+    manualSorting: true,
+    manualPagination: true,
+    enableSortingRemoval: false,
+    enableMultiSort: false,
+    sortDescFirst: false,
+    state: { sorting, ...columnState(columns) },
+    onSortingChange: (update) => {
+      const [next] = typeof update === 'function' ? update(sorting) : update
+      const key = registerKeySchema.safeParse(next?.id)
+      if (key.success) onSort({ key: key.data, direction: next?.desc === true ? 'desc' : 'asc' })
+    },
+  })
+  const open = (test: RegisterTest): void => void navigate(paths.test(context.site.id, test.id))
   return (
-    <Table caption="Field tests" className="max-md:hidden">
-      <thead>
-        <tr>
-          <HeadCell>Test</HeadCell>
-          <HeadCell>Cell, lift</HeadCell>
-          <HeadCell>Zone</HeadCell>
-          <HeadCell className="max-xl:hidden">Method</HeadCell>
-          <HeadCell numeric>Dry {units.marks.density}</HeadCell>
-          <HeadCell numeric>RC %</HeadCell>
-          <HeadCell numeric>w %</HeadCell>
-          <HeadCell numeric>From opt.</HeadCell>
-          <HeadCell>Result</HeadCell>
-          <HeadCell>Sampled</HeadCell>
-          <HeadCell className="max-xl:hidden">By</HeadCell>
-        </tr>
-      </thead>
-      <tbody>
-        {tests.map((test) => (
-          <Row key={test.id} className="cursor-pointer hover:bg-film" onClick={() => void navigate(paths.test(site.id, test.id))}>
-            <RowHead>
-              <Link to={paths.test(site.id, test.id)} onClick={(event) => event.stopPropagation()} className="text-ink no-underline hover:underline">
-                {test.number}
-              </Link>
-            </RowHead>
-            <Cell className="whitespace-nowrap">{`${label(test.cell)}, ${test.lift}`}</Cell>
-            <Cell className="whitespace-nowrap">{zone(test.zoneId)?.shortName}</Cell>
-            <Cell className="whitespace-nowrap max-xl:hidden">{METHOD_WORDS[test.method].name}</Cell>
-            <Cell numeric>{units.densityNumber(test.dryDensity)}</Cell>
-            <Cell numeric>{units.number(test.rc, 1)}</Cell>
-            <Cell numeric>{units.number(test.moisture, 1)}</Cell>
-            <Cell numeric>{units.deviation(test.moistureDeviation)}</Cell>
-            <Cell className="align-middle">
-              <ResultCell test={test} />
-            </Cell>
-            <Cell className="whitespace-nowrap">{units.dateTime(test.sampledAt)}</Cell>
-            <Cell className="whitespace-nowrap max-xl:hidden">{test.recordedBy.name}</Cell>
-          </Row>
-        ))}
-      </tbody>
-    </Table>
-  )
-}
-
-/** The register on a phone: two lines a test. */
-export function RegisterList({ tests }: { tests: readonly TestSummary[] }) {
-  const { site, units, label } = useSite()
-  return (
-    <ul aria-label="Field tests" className="m-0 list-none border-t border-ink p-0 md:hidden">
-      {tests.map((test) => (
-        <li key={test.id}>
-          <Link to={paths.test(site.id, test.id)} className="block min-h-12 border-b border-rule py-[9px] text-ink no-underline">
-            <span className="flex items-center justify-between gap-2">
-              <b className="font-semibold">{test.number}</b>
-              <ResultCell test={test} />
-            </span>
-            <span className="block text-small text-ink-2">
-              {label(test.cell)}, lift {test.lift}, {units.percent(test.rc)}, {units.deviation(test.moistureDeviation)} from opt., {units.dateTime(test.sampledAt)}
-            </span>
-          </Link>
-        </li>
-      ))}
-    </ul>
+    <div onKeyDown={moveByArrow} className={classNames('flex min-h-0', className)}>
+      <Table caption="Field tests" className="register-table w-full overflow-auto">
+        <thead>
+          {table.getHeaderGroups().map((group) => (
+            <tr key={group.id}>
+              {group.headers.map((header) => {
+                const sorted = header.column.getIsSorted()
+                const numeric = header.column.columnDef.meta?.numeric ?? false
+                return (
+                  <HeadCell key={header.id} numeric={numeric} aria-sort={sorted === false ? undefined : sorted === 'asc' ? 'ascending' : 'descending'}>
+                    <SortButton sorted={sorted} numeric={numeric} onSort={() => header.column.toggleSorting()}>
+                      <table.FlexRender header={header} />
+                    </SortButton>
+                  </HeadCell>
+                )
+              })}
+            </tr>
+          ))}
+        </thead>
+        <tbody>
+          {table.getRowModel().rows.map((row) => (
+            <Row key={row.id} className="cursor-pointer hover:bg-film" onClick={() => open(row.original)}>
+              {row.getVisibleCells().map((cell) =>
+                cell.column.id === 'number' ? (
+                  <RowHead key={cell.id}>
+                    <Link to={paths.test(context.site.id, row.id)} onClick={(event) => event.stopPropagation()} className="text-ink no-underline hover:underline">
+                      <table.FlexRender cell={cell} />
+                    </Link>
+                  </RowHead>
+                ) : (
+                  <Cell key={cell.id} numeric={cell.column.columnDef.meta?.numeric ?? false} className="whitespace-nowrap">
+                    <table.FlexRender cell={cell} />
+                  </Cell>
+                ),
+              )}
+            </Row>
+          ))}
+        </tbody>
+      </Table>
+    </div>
   )
 }
