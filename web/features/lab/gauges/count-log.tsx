@@ -55,9 +55,7 @@ export function CountLog({ gauge, onVoid }: { gauge: GaugeDetail; onVoid: ((coun
             <HeadCell numeric>Density</HeadCell>
             <HeadCell numeric>Moisture</HeadCell>
             <HeadCell>Result</HeadCell>
-            <HeadCell>
-              <span className="sr-only">Act</span>
-            </HeadCell>
+            <HeadCell aria-label="Act" />
           </tr>
         </thead>
         <tbody>

@@ -16,9 +16,7 @@ export function CorrectionsTable({ gauge, onWithdraw }: { gauge: GaugeDetail; on
           <HeadCell numeric>Pairs</HeadCell>
           <HeadCell numeric>Spread</HeadCell>
           <HeadCell>In force</HeadCell>
-          <HeadCell>
-            <span className="sr-only">Act</span>
-          </HeadCell>
+          <HeadCell aria-label="Act" />
         </tr>
       </thead>
       <tbody>

@@ -23,9 +23,7 @@ export function GaugesTable({ gauges, chosen, onChoose, onCount }: GaugesTablePr
             Moisture
           </HeadCell>
           <HeadCell className="max-sm:hidden">Calibration</HeadCell>
-          <HeadCell>
-            <span className="sr-only">Act</span>
-          </HeadCell>
+          <HeadCell aria-label="Act" />
         </tr>
       </thead>
       <tbody>

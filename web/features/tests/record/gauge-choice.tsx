@@ -41,7 +41,7 @@ export function GaugeChoice() {
   if (gauges === undefined || gauges.length === 0) return null
   return (
     <div className="mb-3 grid items-start gap-x-[14px] gap-y-2 sm:grid-cols-[minmax(0,1fr)_minmax(0,2fr)]">
-      <SelectField label="Gauge" error={problemAt('gauge.gaugeId')} {...register('gauge.gaugeId')}>
+      <SelectField label="Gauge no." error={problemAt('gauge.gaugeId')} {...register('gauge.gaugeId')}>
         <option value="">Choose a gauge</option>
         {gauges.map((each) => (
           <option key={each.id} value={each.id}>
