@@ -46,6 +46,9 @@ export type BalloonCalibration = {
 export type CalibrationSheet = SandCalibration | ConeCalibration | CylinderCalibration | BalloonCalibration
 export type CalibrationKind = CalibrationSheet['kind']
 
+/** In the order they are listed. */
+export const CALIBRATION_KINDS: readonly CalibrationKind[] = ['sand-density', 'cone', 'cylinder', 'balloon']
+
 /**
  * What a calibration comes to: sand density kg/m³, sand in the cone g, cylinder volume cm³, the indicator's mean error in
  * percent of the known volume (above zero: it reads too much).

@@ -11,7 +11,7 @@ type TableProps = {
 /** A register. Wider than its place, it scrolls by itself and can be reached by keyboard. */
 export function Table({ caption, children, className }: TableProps) {
   return (
-    <div role="region" aria-label={caption} tabIndex={0} className={classNames('max-w-full overflow-x-auto -outline-offset-3', className)}>
+    <div role="region" aria-label={caption} tabIndex={0} className={classNames('relative max-w-full overflow-x-auto -outline-offset-3', className)}>
       <table className="w-full border-collapse bg-raised text-ink">
         <caption className="sr-only">{caption}</caption>
         {children}

@@ -36,7 +36,8 @@ export function CalibrationDialog({ onClose }: { onClose: () => void }) {
     apparatus: about.apparatus,
     sheet: result.ok ? sheet : undefined,
     performedAt: units.parse.instant(about.performedAt) ?? '',
-    validUntil: about.validUntil === '' ? null : (units.parse.instant(about.validUntil) ?? ''),
+    // a day is meant to its end
+    validUntil: about.validUntil === '' ? null : (units.parse.instant(`${about.validUntil}T23:59`) ?? ''),
     remarks: about.remarks,
   })
   const errorOf = (field: string) => (asked && !parsed.success ? parsed.error.issues.find((issue) => issue.path[0] === field)?.message : undefined)
@@ -68,12 +69,12 @@ export function CalibrationDialog({ onClose }: { onClose: () => void }) {
     >
       <div className="grid gap-4">
         <Segmented wide label="Calibration of" options={KINDS} value={form.kind} onChange={(kind) => setForm(emptyCalibrationForm(kind, site.unitSystem === 'us'))} />
-        <div className="grid items-start gap-3 sm:grid-cols-3">
-          <TextField label="Apparatus, cylinder or batch" hint="Such as Cone 2" maxLength={80} {...bind('apparatus')} />
+        <div className="grid items-start gap-3 sm:grid-cols-[minmax(0,1fr)_240px_160px]">
+          <TextField label="Apparatus, cylinder or batch" placeholder={KIND_WORDS[form.kind].example} maxLength={80} {...bind('apparatus')} />
           <TextField label="Performed" type="datetime-local" {...bind('performedAt')} />
-          <TextField label="In use until, if set" type="datetime-local" {...bind('validUntil')} />
+          <TextField label="In use until, if set" type="date" {...bind('validUntil')} />
         </div>
-        <div className="grid grid-cols-2 items-start gap-3 sm:grid-cols-3">
+        <div className={`grid grid-cols-2 items-start gap-3 ${form.kind === 'sand-density' ? 'sm:grid-cols-4' : 'sm:grid-cols-3'}`}>
           {massive && <UnitSelect label="Masses in" units={MASSES} value={form.massUnit} onChange={(massUnit) => set({ massUnit })} />}
           {form.kind === 'cylinder' && <UnitSelect label="Lengths in" units={LENGTHS} value={form.lengthUnit} onChange={(lengthUnit) => set({ lengthUnit })} />}
           {(form.kind === 'balloon' || form.kind === 'sand-density') && <UnitSelect label="Volumes in" units={VOLUMES} value={form.volumeUnit} onChange={(volumeUnit) => set({ volumeUnit })} />}

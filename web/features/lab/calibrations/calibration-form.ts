@@ -20,11 +20,11 @@ export const EMPTY_TRIAL: Trial = { a: '', b: '', c: '' }
 /** As many as are usual. */
 const TRIALS = 3
 
-export const KIND_WORDS: Readonly<Record<CalibrationKind, { readonly name: string; readonly gives: string; readonly standard: string; readonly columns: readonly string[] }>> = {
-  'sand-density': { name: 'Sand', gives: 'Bulk density', standard: 'ASTM D1556', columns: ['Container and sand'] },
-  cone: { name: 'Cone and plate', gives: 'Sand that fills them', standard: 'ASTM D1556', columns: ['Apparatus before', 'Apparatus after'] },
-  cylinder: { name: 'Drive cylinder', gives: 'Volume', standard: 'ASTM D2937', columns: ['Inner diameter', 'Height'] },
-  balloon: { name: 'Balloon', gives: 'Indicator', standard: 'ASTM D2167', columns: ['Known volume', 'Reading before', 'Reading in it'] },
+export const KIND_WORDS: Readonly<Record<CalibrationKind, { readonly name: string; readonly gives: string; readonly example: string; readonly standard: string; readonly columns: readonly string[] }>> = {
+  'sand-density': { name: 'Sand', gives: 'Bulk density', example: 'Sand, batch 4', standard: 'ASTM D1556', columns: ['Container and sand'] },
+  cone: { name: 'Cone and plate', gives: 'Sand that fills them', example: 'Cone 2', standard: 'ASTM D1556', columns: ['Apparatus before', 'Apparatus after'] },
+  cylinder: { name: 'Drive cylinder', gives: 'Volume', example: 'Cylinder 7', standard: 'ASTM D2937', columns: ['Inner diameter', 'Height'] },
+  balloon: { name: 'Balloon', gives: 'Indicator', example: 'Balloon B-1', standard: 'ASTM D2167', columns: ['Known volume', 'Reading before', 'Reading in it'] },
 }
 const COLUMNS = ['a', 'b', 'c'] as const
 

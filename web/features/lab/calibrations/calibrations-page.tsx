@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
 import type { Calibration } from '#shared/schemas/calibration.ts'
+import { calibrationState } from '#web/components/calibration/calibration-state.ts'
 import { Button } from '#web/components/ui/button.tsx'
 import { EmptyState } from '#web/components/ui/empty-state.tsx'
 import { Skeleton } from '#web/components/ui/skeleton.tsx'
@@ -9,6 +10,7 @@ import { useSiteClock } from '#web/data/site/use-site-clock.ts'
 import { LabFrame } from '#web/features/lab/lab-frame.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
 import { CalibrationDialog } from './calibration-dialog.tsx'
+import { CalibrationSheet } from './calibration-sheet.tsx'
 import { CalibrationsTable } from './calibrations-table.tsx'
 import { VoidCalibrationDialog } from './void-calibration-dialog.tsx'
 
@@ -17,10 +19,11 @@ export function CalibrationsPage() {
   const { site, can } = useSite()
   const now = useSiteClock(site.id)
   const [adding, setAdding] = useState(false)
+  const [opened, setOpened] = useState<Calibration | null>(null)
   const [voiding, setVoiding] = useState<Calibration | null>(null)
   const { data, error, refetch } = useQuery(calibrationQueries.list(site.id))
   const records = can('calibration.record')
-  const inUse = data?.filter((each) => each.void === null && (each.validUntil === null || Date.parse(each.validUntil) >= now())).length ?? 0
+  const inUse = data?.filter((each) => calibrationState(each, now()) === 'in-use').length ?? 0
   const add = records && (
     <Button kind="primary" className="pointer-coarse:min-h-11" onClick={() => setAdding(true)}>
       New calibration
@@ -43,10 +46,25 @@ export function CalibrationsPage() {
             </EmptyState>
           </div>
         ) : (
-          <CalibrationsTable calibrations={data} now={now()} onVoid={records ? setVoiding : undefined} />
+          <CalibrationsTable calibrations={data} now={now()} onOpen={setOpened} onVoid={records ? setVoiding : undefined} />
         )}
       </div>
       {adding && <CalibrationDialog onClose={() => setAdding(false)} />}
+      {opened !== null && (
+        <CalibrationSheet
+          calibration={opened}
+          now={now()}
+          onVoid={
+            records
+              ? () => {
+                  setVoiding(opened)
+                  setOpened(null)
+                }
+              : undefined
+          }
+          onClose={() => setOpened(null)}
+        />
+      )}
       {voiding !== null && <VoidCalibrationDialog calibration={voiding} onClose={() => setVoiding(null)} />}
     </LabFrame>
   )

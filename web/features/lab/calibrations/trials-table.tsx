@@ -12,7 +12,7 @@ export function TrialsTable({ form, unit, errorAt, onChange }: TrialsTableProps)
   const { columns } = KIND_WORDS[form.kind]
   const set = (row: number, column: keyof Trial, text: string) => onChange(form.trials.map((trial, i) => (i === row ? { ...trial, [column]: text } : trial)))
   return (
-    <div className="grid gap-3">
+    <div className={`grid gap-3 ${columns.length === 1 ? 'sm:grid-cols-3' : ''}`}>
       {form.trials.map((trial, row) => (
         // rows have no identity but their place
         <div key={row} className="grid items-start gap-3" style={{ gridTemplateColumns: `repeat(${columns.length}, minmax(0, 1fr))` }}>
@@ -23,8 +23,8 @@ export function TrialsTable({ form, unit, errorAt, onChange }: TrialsTableProps)
         </div>
       ))}
       {form.trials.length < MOST && (
-        <div>
-          <Button onClick={() => onChange([...form.trials, EMPTY_TRIAL])}>One more</Button>
+        <div className="self-end">
+          <Button className="pointer-coarse:min-h-12" onClick={() => onChange([...form.trials, EMPTY_TRIAL])}>One more</Button>
         </div>
       )}
     </div>
