@@ -15,6 +15,7 @@ import { testQueries } from '#web/data/test/queries.ts'
 import { isApiError } from '#web/lib/api-error.ts'
 import { usePageTitle } from '#web/lib/page-title.ts'
 import { useSite } from '#web/lib/site-context.tsx'
+import { CheckCurveLink } from './check-curve-link.tsx'
 import { FrozenCriteria } from './saved/frozen-criteria.tsx'
 import { SheetCalibrations } from './saved/sheet-calibrations.tsx'
 import { sheetParts } from './saved/sheet-rows.ts'
@@ -103,6 +104,7 @@ function TestSheet({ test }: { test: TestDetail }) {
           <SheetCalibrations sheet={test.sheet} />
           <SheetSection title="Comes to" aside={`curve ${test.curveCode}`}>
             <RowList rows={worked} />
+            {!test.voided && <CheckCurveLink curveId={test.curveId} testId={test.id} />}
           </SheetSection>
           <FrozenCriteria test={test} />
           <TestPlace test={test} />

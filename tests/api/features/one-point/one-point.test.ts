@@ -4,6 +4,7 @@ import { verifyChain } from '#api/features/events/verify-chain.ts'
 import type { Curve } from '#shared/schemas/lab.ts'
 import { onePointCheckSchema, onePointListSchema } from '#shared/schemas/one-point.ts'
 import type { CreateOnePoint } from '#shared/schemas/one-point.ts'
+import type { SiteChangedEvent } from '#shared/realtime.ts'
 import { convertDensity } from '#shared/units/density.ts'
 import { curveInput, pointsFromPcf } from '#tests/factories/curve.ts'
 import { fieldWork } from '#tests/factories/field-work.ts'
@@ -109,6 +110,14 @@ describe('POST /api/sites/:siteId/one-point-checks', () => {
     const first = await record(input)
     expect(await record(input)).toEqual(first)
     expect((await send({ ...input, remarks: 'Another' })).status).toBe(409)
+  })
+
+  it('is told to open boards after it is saved', async () => {
+    const socket = app.connect(open.people['qc-lead'])
+    await new Promise((resolve) => socket.on('connect', () => socket.emit('site:join', open.siteId, resolve)))
+    const heard = new Promise<SiteChangedEvent>((resolve) => socket.on('site:changed', (event) => event.resource === 'one-point' && resolve(event)))
+    const check = await record(onePoint(117.8, 10))
+    expect(await heard).toMatchObject({ siteId: open.siteId, resource: 'one-point', id: check.id })
   })
 
   it('flags the test its soil was taken at where the curve is off, and changes no verdict', async () => {

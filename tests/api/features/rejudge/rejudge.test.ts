@@ -257,6 +257,19 @@ describe('POST /api/sites/:siteId/curves/:id/rejudge', () => {
     expect((await historyOf(pass.id)).map((verdict) => verdict.curve.id)).toEqual([open.curve.id, heavier.id])
   })
 
+  it('is told to open boards: the test, its order and the ground', async () => {
+    const pass = await work.record()
+    await supersede(heavier)
+    const socket = app.connect(open.people.operator)
+    await new Promise((resolve) => socket.on('connect', () => socket.emit('site:join', open.siteId, resolve)))
+    const heard: string[] = []
+    socket.on('site:changed', (event) => heard.push(event.resource))
+    const patch = new Promise((resolve) => socket.on('ground:patch', resolve))
+    const { revision } = await done(rejudge(heavier, [pass.id]))
+    expect(await patch).toMatchObject({ siteId: open.siteId, revision })
+    await expect.poll(() => heard).toEqual(expect.arrayContaining(['test', 'order', 'curve', 'lot']))
+  })
+
   it('is a rehearsal that leaves nothing behind', async () => {
     const pass = await work.record()
     const tables = ['field_test', 'test_verdict', 'test_mark', 'rework_order', 'event', 'site_head', 'cell_lift', 'reference_curve']
