@@ -19,6 +19,8 @@ import { webClient } from '#api/http/web-client.ts'
 export const BODY_LIMIT = '256kb'
 /** A new site brings its surveyed surfaces: some 20,000 points each. */
 export const SITE_BODY_LIMIT = '4mb'
+/** A batch of a file of tests, each with a long remark. */
+export const IMPORT_BODY_LIMIT = '2mb'
 
 export function createApp(deps: Deps, authentication: Authentication): Express {
   const { env, logger, dataSource } = deps
@@ -33,6 +35,7 @@ export function createApp(deps: Deps, authentication: Authentication): Express {
   })
   app.use('/api', ...authentication.handlers)
   app.post('/api/sites', requireUser, express.json({ limit: SITE_BODY_LIMIT }))
+  app.post(['/api/sites/:siteId/tests/import', '/api/sites/:siteId/tests/import/preview'], requireUser, express.json({ limit: IMPORT_BODY_LIMIT }))
   app.use('/api', express.json({ limit: BODY_LIMIT }), requireCsrfToken)
   app.use('/api', sessionRoutes(deps, authentication.passport))
   for (const routes of apiFeatures) app.use('/api', routes(deps))

@@ -17,6 +17,7 @@ import { releaseRoutes } from '#api/features/releases/releases.routes.ts'
 import { reworkRoutes } from '#api/features/rework/rework.routes.ts'
 import { siteRoutes, sitesRoutes } from '#api/features/sites/sites.routes.ts'
 import { stakeRoutes } from '#api/features/stakes/stakes.routes.ts'
+import { testExchangeRoutes } from '#api/features/test-exchange/test-exchange.routes.ts'
 import { testRoutes } from '#api/features/tests/tests.routes.ts'
 import { viewRoutes } from '#api/features/views/views.routes.ts'
 
@@ -35,6 +36,7 @@ export const siteFeatures: readonly ((deps: Deps) => Router)[] = [
   groundRoutes,
   placementRoutes,
   inspectionRoutes,
+  testExchangeRoutes,
   testRoutes,
   rejudgeRoutes,
   stakeRoutes,

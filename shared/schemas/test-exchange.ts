@@ -5,7 +5,7 @@ import { createTestSchema, outcomeSchema, recordTestAnswerSchema } from '#shared
 import { testQuerySchema } from '#shared/schemas/test-register.ts'
 
 /** What one file, one batch of it and one look at it may hold. */
-export const EXCHANGE_LIMITS = { fileBytes: 5 * 1024 * 1024, inflatedBytes: 60 * 1024 * 1024, rows: 5_000, columns: 200, batchRows: 200, previewRows: 100, contextRows: 40 } as const
+export const EXCHANGE_LIMITS = { fileBytes: 5 * 1024 * 1024, inflatedBytes: 60 * 1024 * 1024, rows: 5_000, columns: 200, batchRows: 100, previewRows: 50, contextRows: 50 } as const
 
 const nameSchema = z.string().trim().min(1).max(TEXT_LIMITS.name)
 

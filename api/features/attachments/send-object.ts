@@ -1,6 +1,7 @@
 import { pipeline } from 'node:stream/promises'
 import type { Request, Response } from 'express'
 import type { ByteRange, ObjectStore } from '#api/files/object-store.ts'
+import { attachmentDisposition } from '#api/http/content-disposition.ts'
 
 export interface SentObject {
   readonly key: string
@@ -49,9 +50,8 @@ export async function sendObject(objects: ObjectStore, file: SentObject, req: Re
 }
 
 function disposition({ inline, fileName }: SentObject): string {
-  const plain = fileName.replace(/[^\x20-\x7e]|["\\%]/g, '_')
-  const encoded = encodeURIComponent(fileName).replace(/['()*!]/g, (mark) => `%${mark.charCodeAt(0).toString(16).toUpperCase()}`)
-  return `${inline ? 'inline' : 'attachment'}; filename="${plain}"; filename*=UTF-8''${encoded}`
+  const saved = attachmentDisposition(fileName)
+  return inline ? saved.replace(/^attachment/, 'inline') : saved
 }
 
 /** The one range asked for; null for the whole file, as also for several ranges and for a copy that is no longer this one. */

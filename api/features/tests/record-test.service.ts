@@ -60,10 +60,13 @@ export async function recordTest(write: SiteWrite, input: CreateTest): Promise<R
   }
 }
 
-type Assessed = Awaited<ReturnType<typeof assessTest>>
+export type Assessed = Awaited<ReturnType<typeof assessTest>>
 
-/** Everything a test is before it is stored: its place, verdict, chain, stake and what is to be told about it. */
-async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, input: CreateTest) {
+/**
+ * Everything a test is before it is stored: its place, verdict, chain, stake and what is to be told about it.
+ * @param follows the chain it follows on, where that is not on record yet
+ */
+export async function assessTest({ manager, siteId, now }: Pick<SiteWrite, 'manager' | 'siteId' | 'now'>, plan: SitePlan, input: CreateTest, follows?: Chain | null) {
   const sampledAt = notInFuture(new Date(input.sampledAt), now, 'body.sampledAt')
   await refuseUnnamedGauge(manager, siteId, input)
   const { cell, zone, at } = placeTest(plan, input)
@@ -73,7 +76,7 @@ async function assessTest({ manager, siteId, now }: SiteWrite, plan: SitePlan, i
   const specification = lot?.specification ?? zone.specification
   const { reduced, verdict } = judgeOrRefuse(input, plan, curve, specification)
   const liftFlags = checkLift(plan, cell, input)
-  const chain = await loadChain(manager, siteId, input.follows)
+  const chain = follows === undefined ? await loadChain(manager, siteId, input.follows) : follows
   const reworkReported = chain !== null && (await wasReworkReported(manager, siteId, chain.id, sampledAt))
   const chainFlags = chain ? checkFollowing(chain, { ...input, zoneId: zone.id, at, sampledAt, reworkReported }) : []
   const stakes = await checkStakes(manager, siteId, { ...input, at, zone, lotId, rules: specification.body })
