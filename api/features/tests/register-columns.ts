@@ -25,7 +25,9 @@ export async function loadBadGauges(manager: EntityManager, siteId: string): Pro
   return ['', ...[...checks].filter(([, check]) => check.state !== 'good').map(([id]) => id)]
 }
 
-const ofVerdict = (path: string): string => `CAST(JSON_VALUE(t.\`verdict\`, '$.${path}') AS DOUBLE)`
+/** What differs by less is equal: the last digits of a quotient are noise. */
+const double = (value: string): string => `ROUND(${value}, 9)`
+const ofVerdict = (path: string): string => double(`CAST(JSON_VALUE(t.\`verdict\`, '$.${path}') AS DOUBLE)`)
 const ofCurve = (select: string): string => `(SELECT ${select} FROM \`reference_curve\` k JOIN \`borrow_material\` m ON m.\`site_id\` = k.\`site_id\` AND m.\`id\` = k.\`material_id\` WHERE k.\`site_id\` = t.\`site_id\` AND k.\`id\` = t.\`curve_id\`)`
 const ofCell = (column: string): string => `(SELECT c.\`${column}\` FROM \`cell\` c WHERE c.\`site_id\` = t.\`site_id\` AND c.\`cell\` = t.\`cell\`)`
 const ZONE = '(SELECT z.`position` FROM `zone` z WHERE z.`site_id` = t.`site_id` AND z.`id` = t.`zone_id`)'
@@ -44,16 +46,16 @@ const SORTED_BY: Readonly<Record<RegisterKey, readonly string[]>> = {
   purpose: ['t.`purpose`'],
   method: ['t.`method`'],
   moistureMethod: ["JSON_VALUE(t.`sheet`, '$.moisture.method')"],
-  wetDensity: ['t.`wet_density`'],
-  dryDensity: ['t.`dry_density`'],
-  moisture: ['t.`moisture`'],
+  wetDensity: [double('t.`wet_density`')],
+  dryDensity: [double('t.`dry_density`')],
+  moisture: [double('t.`moisture`')],
   optimum: [ofVerdict('optimumUsed')],
-  deviation: ['t.`moisture_deviation`'],
+  deviation: [double('t.`moisture_deviation`')],
   maxDryDensity: [ofVerdict('maxDryDensityUsed')],
   curve: [ofCurve('k.`code`')],
   material: [ofCurve('m.`name`')],
   oversize: ['t.`oversize_percent`'],
-  rc: ['t.`rc`'],
+  rc: [double('t.`rc`')],
   rcLimit: [RC_LIMIT],
   saturation: [ofVerdict('saturation')],
   airVoids: [ofVerdict('airVoids')],

@@ -1,6 +1,7 @@
 import { TZDate } from '@date-fns/tz'
 import { FLAG_COUNT, LOT, type BadGauges } from '#api/features/tests/register-columns.ts'
 import { CURRENT, SUPERSEDED } from '#api/features/tests/tests.queries.ts'
+import { workDay } from '#shared/domain/lots.ts'
 import type { TestFilter } from '#shared/schemas/test-register.ts'
 
 /** The clock that a site's working days are counted on. */
@@ -14,16 +15,23 @@ export interface Where {
   readonly values: readonly unknown[]
 }
 
+const HALF_HOUR = 1_800_000
+
 type Part = readonly [string, ...unknown[]]
 
 /**
- * When a working day of a site begins: the hour of its cut on the site's clock.
+ * When a working day of a site begins: the first instant that workDay counts for it. On a day that turns the clocks the hour
+ * of the cut may come twice or not at all, so the clock's answer is moved by half hours until it is that instant.
  * @param day YYYY-MM-DD
  * @param plus whole days later
  */
 export function startOfDay(day: string, { timeZone, dayCutHour }: SiteDays, plus = 0): Date {
   const [year = 0, month = 1, date = 1] = day.split('-').map(Number)
-  return new Date(new TZDate(year, month - 1, date + plus, dayCutHour, 0, timeZone).getTime())
+  const wanted = new Date(Date.UTC(year, month - 1, date + plus)).toISOString().slice(0, 10)
+  let start = new TZDate(year, month - 1, date + plus, dayCutHour, 0, timeZone).getTime()
+  while (workDay(start - HALF_HOUR, timeZone, dayCutHour) >= wanted) start -= HALF_HOUR
+  while (workDay(start, timeZone, dayCutHour) < wanted) start += HALF_HOUR
+  return new Date(start)
 }
 
 /** The condition of a filter, on `field_test` t. */
@@ -34,7 +42,7 @@ export function whereOf(siteId: string, filter: TestFilter, days: SiteDays, badG
 
 const equals = (column: string, value: unknown): Part[] => (value === undefined ? [] : [[`t.\`${column}\` = ?`, value]])
 const among = (column: string, values: readonly unknown[] | undefined): Part[] => (values === undefined ? [] : [[`t.\`${column}\` IN (?)`, values]])
-const holds = (flag: 'true' | 'false' | undefined, condition: string, ...values: unknown[]): Part[] => (flag === undefined ? [] : [[flag === 'true' ? condition : `NOT ${condition}`, ...values]])
+const holds = (flag: 'true' | 'false' | undefined, condition: string, ...values: unknown[]): Part[] => (flag === undefined ? [] : [[flag === 'true' ? condition : `(${condition} IS NOT TRUE)`, ...values]])
 
 function placeParts(siteId: string, { zoneId, lift, cell, lotId }: TestFilter): Part[] {
   const parts = [...equals('zone_id', zoneId), ...equals('lift', lift), ...equals('cell', cell)]
