@@ -161,10 +161,14 @@ export function isFinite(value: unknown): boolean {
   return typeof value !== 'object' || value === null || Object.values(value).every(isFinite)
 }
 
+/** Where what is wrong with a calibration is said. */
+const CALIBRATION_FIELD: Partial<Record<TestForm['method'], string>> = { 'sand-cone': 'sandCone.sandId', 'rubber-balloon': 'balloon.balloonId', 'drive-cylinder': 'cylinder.cylinderId' }
+
 /** The form's field that a sheet's field is typed in. */
 export function formField(method: TestForm['method'], field: string): string {
   if (field === 'moisture.gaugeId') return 'gauge.gaugeId'
   if (field.startsWith('moisture.earlier')) return 'moisture.dryAndTin'
+  if (field.startsWith('calibrationIds')) return CALIBRATION_FIELD[method] ?? SECTION[method]
   return field.startsWith('moisture.') ? field : `${SECTION[method]}.${field}`
 }
 
