@@ -6,6 +6,9 @@ import { convertVolume } from '#shared/units/volume.ts'
 
 export type MouldSize = '4-in' | '6-in'
 
+/** The issue of D698 and D1557 a laboratory worked by; T 99 and T 180 are read in one. */
+export type MethodEdition = '2007' | '2000'
+
 /** How a laboratory compacts a specimen by one method and letter. */
 export interface CompactionMethod {
   readonly mould: MouldSize
@@ -36,11 +39,13 @@ const EFFORTS = {
 
 type Letter = { readonly mould: MouldSize; readonly mostOversize: number }
 
-/** D698-07 and D1557 alike: A and B in the 4 in mould up to 25 % on the No. 4 and 3/8 in, C in the 6 in up to 30 % on the 3/4 in. */
-const ASTM_LETTERS: Partial<Readonly<Record<CurveLetter, Letter>>> = {
-  A: { mould: '4-in', mostOversize: 25 },
-  B: { mould: '4-in', mostOversize: 25 },
-  C: { mould: '6-in', mostOversize: 30 },
+/**
+ * D698 and D1557 alike: A and B in the 4 in mould on the No. 4 and 3/8 in, C in the 6 in mould up to 30 % on the 3/4 in. The
+ * issue of 2007 lets A and B be used up to 25 % retained, that of 2000 up to 20 %.
+ */
+const ASTM_LETTERS: Readonly<Record<MethodEdition, Partial<Readonly<Record<CurveLetter, Letter>>>>> = {
+  '2007': { A: { mould: '4-in', mostOversize: 25 }, B: { mould: '4-in', mostOversize: 25 }, C: { mould: '6-in', mostOversize: 30 } },
+  '2000': { A: { mould: '4-in', mostOversize: 20 }, B: { mould: '4-in', mostOversize: 20 }, C: { mould: '6-in', mostOversize: 30 } },
 }
 
 /** T 99 and T 180: A and C in the 4 in mould, B and D in the 6 in; up to 40 % on the No. 4 (A, B) or 30 % on the 3/4 in (C, D). */
@@ -53,12 +58,16 @@ const AASHTO_LETTERS: Readonly<Record<CurveLetter, Letter>> = {
 
 const isAstm = (method: CurveMethod): boolean => method === 'D698' || method === 'D1557'
 
+/** Whether a method's limits depend on its issue. */
+export const hasEditions = isAstm
+
 /**
- * The apparatus and limits of a laboratory compaction method (D698-07, D1557, T 99, T 180).
+ * The apparatus and limits of a laboratory compaction method (D698, D1557, T 99, T 180).
+ * @param edition of D698 and D1557; T 99 and T 180 do not ask for it
  * @returns null where the method has no such letter: D698 and D1557 end at C
  */
-export function compactionMethod(method: CurveMethod, letter: CurveLetter): CompactionMethod | null {
-  const own = isAstm(method) ? ASTM_LETTERS[letter] : AASHTO_LETTERS[letter]
+export function compactionMethod(method: CurveMethod, letter: CurveLetter, edition: MethodEdition = '2007'): CompactionMethod | null {
+  const own = isAstm(method) ? ASTM_LETTERS[edition][letter] : AASHTO_LETTERS[letter]
   if (own === undefined) return null
   const { volumeCm3, toleranceCm3, blows } = MOULDS[own.mould]
   const effort = EFFORTS[method === 'D698' || method === 'T 99' ? 'standard' : 'modified']
@@ -78,8 +87,15 @@ export function compactionEnergy({ rammerLbf, dropIn, blows, layers, volumeCm3 }
   return (rammerLbf * (dropIn / 12) * blows * layers) / convertVolume(volumeCm3, 'cm3', 'ft3')
 }
 
+/** Energy a method names, ft·lbf/ft³; one mould and its blows come within 1 % of it. */
+const NOMINAL_ENERGY = { standard: 12_400, modified: 56_000 } as const
+/** From here on another effort was spent than the method's (our own bound: common practice knows none). */
+const ENERGY_TOLERANCE = 0.05
+
 /** What the laboratory used; null where it was not said. */
 export interface UsedApparatus {
+  readonly edition?: MethodEdition | undefined
+  readonly mould?: MouldSize | null | undefined
   readonly mouldVolumeCm3: number | null
   readonly layers: number | null
   readonly blows: number | null
@@ -87,42 +103,64 @@ export interface UsedApparatus {
   readonly oversizePercent: number | null
 }
 
+export type ApparatusFlag = Reason & { readonly field: 'mould' | 'mouldVolume' | 'layers' | 'blows' | 'energy' }
+
 export type ApparatusCheck =
   /** the method may not be used; `letter` is one that may, null where none does */
   | { readonly ok: false; readonly field: 'procedure' | 'oversizePercent'; readonly reason: Reason; readonly letter: CurveLetter | null }
   /** each flag is a departure a laboratory may have had its reasons for */
-  | { readonly ok: true; readonly flags: readonly (Reason & { readonly field: 'mouldVolume' | 'layers' | 'blows' })[] }
+  | { readonly ok: true; readonly flags: readonly ApparatusFlag[] }
 
 const SIEVE_NAMES = { 'no-4': 'No. 4', '3/8-in': '3/8 in', '3/4-in': '3/4 in' } as const
+const MOULD_NAMES = { '4-in': '4 in', '6-in': '6 in' } as const
 
 /**
  * Holds what a laboratory used to its method: refused where too much is retained on the sieve for the method to be used,
- * flagged where mould, layers or blows depart from it.
+ * flagged where mould, layers, blows or the energy they make depart from it.
  */
 export function checkApparatus(method: CurveMethod, letter: CurveLetter, used: UsedApparatus): ApparatusCheck {
-  const own = compactionMethod(method, letter)
+  const edition = used.edition ?? '2007'
+  const own = compactionMethod(method, letter, edition)
   if (own === null) {
     return { ok: false, field: 'procedure', letter: 'C', reason: { code: 'no-such-letter', message: `${method} has methods A, B and C.` } }
   }
-  const { oversizePercent, mouldVolumeCm3, layers, blows } = used
+  const { oversizePercent } = used
   if (oversizePercent !== null && settle(oversizePercent) > own.mostOversize) {
     const coarser = coarserLetter(method, own.sieve)
     const advice = coarser === null ? 'No method of this standard takes it.' : `Method ${coarser} may.`
+    const name = isAstm(method) ? `${method}-${edition.slice(2)}` : method
     return {
       ok: false,
       field: 'oversizePercent',
       letter: coarser,
-      reason: { code: 'too-coarse', message: `${method} method ${letter} takes at most ${own.mostOversize} % retained on the ${SIEVE_NAMES[own.sieve]}. ${advice}` },
+      reason: { code: 'too-coarse', message: `${name} method ${letter} takes at most ${own.mostOversize} % retained on the ${SIEVE_NAMES[own.sieve]}. ${advice}` },
     }
   }
-  const flags = [
-    ...(mouldVolumeCm3 !== null && Math.abs(mouldVolumeCm3 - own.volumeCm3) > own.volumeToleranceCm3
-      ? [{ field: 'mouldVolume', code: 'mould-volume', message: `Method ${letter} uses the ${own.mould === '4-in' ? '4 in' : '6 in'} mould, ${own.volumeCm3} ± ${own.volumeToleranceCm3}\u2009cm³.` } as const]
-      : []),
-    ...(layers !== null && layers !== own.layers ? [{ field: 'layers', code: 'layers', message: `${method} compacts ${own.layers} layers.` } as const] : []),
-    ...(blows !== null && blows !== own.blows ? [{ field: 'blows', code: 'blows', message: `In this mould ${method} gives ${own.blows} blows a layer.` } as const] : []),
-  ]
-  return { ok: true, flags }
+  return { ok: true, flags: departures(method, letter, own, used) }
+}
+
+function departures(method: CurveMethod, letter: CurveLetter, own: CompactionMethod, { mould = null, mouldVolumeCm3, layers, blows }: UsedApparatus): ApparatusFlag[] {
+  const flags: ApparatusFlag[] = []
+  const flag = (field: ApparatusFlag['field'], code: string, message: string) => flags.push({ field, code, message })
+  if (mould !== null && mould !== own.mould) flag('mould', 'mould', `${method} method ${letter} uses the ${MOULD_NAMES[own.mould]} mould.`)
+  if (mouldVolumeCm3 !== null && Math.abs(mouldVolumeCm3 - own.volumeCm3) > own.volumeToleranceCm3) {
+    flag('mouldVolume', 'mould-volume', `Method ${letter} uses the ${MOULD_NAMES[own.mould]} mould, ${own.volumeCm3} ± ${own.volumeToleranceCm3}\u2009cm³.`)
+  }
+  if (layers !== null && layers !== own.layers) flag('layers', 'layers', `${method} compacts ${own.layers} layers.`)
+  if (blows !== null && blows !== own.blows) flag('blows', 'blows', `In this mould ${method} gives ${own.blows} blows a layer.`)
+  if (layers !== null && blows !== null) {
+    const volumeCm3 = mouldVolumeCm3 ?? (mould === null ? own.volumeCm3 : MOULDS[mould].volumeCm3)
+    const share = compactionEnergy({ ...own, layers, blows, volumeCm3 }) / nominalEnergy(method)
+    if (Number.isFinite(share) && Math.abs(share - 1) > ENERGY_TOLERANCE) {
+      flag('energy', 'energy', `Layers, blows and mould make ${Math.round(100 * share)} % of the energy of ${method}: the maximum is another effort’s.`)
+    }
+  }
+  return flags
+}
+
+/** The energy a method names, ft·lbf/ft³ (titles of D698 and D1557). */
+export function nominalEnergy(method: CurveMethod): number {
+  return NOMINAL_ENERGY[method === 'D698' || method === 'T 99' ? 'standard' : 'modified']
 }
 
 /** The first letter whose sieve is coarser, or null. */

@@ -29,6 +29,9 @@ export const curveEntrySchema = z.discriminatedUnion('kind', [
 
 /** How the specimens were compacted, as far as the report says it. */
 export const curveApparatusSchema = z.object({
+  /** of D698 and D1557: what their methods take depends on it; 2007 where it is left out */
+  edition: z.enum(['2007', '2000']).optional(),
+  mould: z.enum(['4-in', '6-in']).nullable().optional(),
   layers: z.number().int().min(1).max(20).nullable(),
   /** blows a layer */
   blows: z.number().int().min(1).max(500).nullable(),

@@ -36,6 +36,8 @@ export function sheetFlags(sheet: LabSheet): Reason[] {
 function checkSheet({ method, procedure, entry, apparatus }: LabSheet): ApparatusCheck {
   const mouldVolumeCm3 = entry?.kind === 'masses' ? convertVolume(entry.mouldVolume, entry.volumeUnit, 'cm3') : null
   return checkApparatus(method, procedure, {
+    edition: apparatus?.edition,
+    mould: apparatus?.mould,
     mouldVolumeCm3,
     layers: apparatus?.layers ?? null,
     blows: apparatus?.blows ?? null,

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { checkApparatus, compactionEnergy, compactionMethod, methodLetters } from '#shared/domain/compaction-method.ts'
+import { checkApparatus, compactionEnergy, compactionMethod, methodLetters, nominalEnergy } from '#shared/domain/compaction-method.ts'
 import type { UsedApparatus } from '#shared/domain/compaction-method.ts'
 import { convertVolume } from '#shared/units/volume.ts'
 
@@ -62,6 +62,38 @@ describe('checkApparatus', () => {
     expect(flags('D698', 'A', used({ mouldVolumeCm3: 943.3, layers: 3, blows: 25 }))).toEqual([])
     expect(flags('D698', 'A', used({ mouldVolumeCm3: 958 }))).toEqual([])
     expect(flags('D698', 'A', used({ mouldVolumeCm3: 958.1 }))).toEqual(['mould-volume'])
-    expect(flags('D698', 'C', used({ mouldVolumeCm3: 944, layers: 5, blows: 25 }))).toEqual(['mould-volume', 'layers', 'blows'])
+    expect(flags('D698', 'C', used({ mouldVolumeCm3: 944, layers: 5, blows: 25 }))).toEqual(['mould-volume', 'layers', 'blows', 'energy'])
+  })
+
+  // D698-00a: A up to 20 % on the No. 4, then B up to 20 % on the 3/8 in: ru.scribd.com 492051314
+  it('reads the limits of the issue that was worked by', () => {
+    const older = (oversizePercent: number) => used({ edition: '2000', oversizePercent })
+    expect(checkApparatus('D698', 'A', older(20))).toMatchObject({ ok: true })
+    expect(checkApparatus('D698', 'A', older(22))).toMatchObject({ ok: false, letter: 'B', reason: { message: expect.stringContaining('D698-00 method A takes at most 20 %') as string } })
+    expect(checkApparatus('D698', 'A', used({ oversizePercent: 22 }))).toMatchObject({ ok: true })
+    expect(checkApparatus('D698', 'B', older(21))).toMatchObject({ ok: false, letter: 'C' })
+    // T 99 asks for no issue
+    expect(checkApparatus('T 99', 'A', older(39))).toMatchObject({ ok: true })
+  })
+
+  // D698-07: the 6 in mould is not allowed for A and B (kipdf.com m-3-1)
+  it('flags a mould of the other size', () => {
+    expect(flags('D698', 'A', used({ mould: '6-in' }))).toEqual(['mould'])
+    expect(flags('T 99', 'B', used({ mould: '6-in' }))).toEqual([])
+    expect(flags('T 99', 'B', used({ mould: '4-in' }))).toEqual(['mould'])
+  })
+
+  // 5.5 lbf · 1 ft · 25 · 5 · 30 = 20,625 ft·lbf/ft³, 166 % of the nominal 12,400 (arithmetic)
+  it('says where another effort was spent', () => {
+    const check = checkApparatus('D698', 'A', used({ layers: 5, blows: 25 }))
+    expect(check.ok && check.flags.find((flag) => flag.field === 'energy')?.message).toContain('166 %')
+    expect(nominalEnergy('T 180')).toBe(56_000)
+    // the methods’ own figures are no departure, nor is a mould at the edge of its tolerance
+    for (const method of ['D698', 'D1557', 'T 99', 'T 180'] as const) {
+      for (const letter of methodLetters(method)) {
+        const own = compactionMethod(method, letter)
+        expect(flags(method, letter, used({ layers: own?.layers ?? 0, blows: own?.blows ?? 0, mouldVolumeCm3: (own?.volumeCm3 ?? 0) + (own?.volumeToleranceCm3 ?? 0) }))).toEqual([])
+      }
+    }
   })
 })

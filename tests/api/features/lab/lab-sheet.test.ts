@@ -45,8 +45,8 @@ describe('a curve from mould masses', () => {
     expect(curve.entry).toEqual(entry())
     expect(curve.apparatus).toEqual({ layers: 3, blows: 25, oversizePercent: 4 })
     curve.points.forEach((point, i) => expect(convertDensity(point.dryDensity, 'kg/m3', 'pcf')).toBeCloseTo(P6_DRY[i] ?? 0, 2))
-    // the mould of 0.055 ft³ is neither the 4 in nor the 6 in one
-    expect(curve.flags.map((flag) => flag.code)).toEqual(['mould-volume'])
+    // the mould of 0.055 ft³ is neither the 4 in nor the 6 in one, and takes 60 % of the energy by volume
+    expect(curve.flags.map((flag) => flag.code)).toEqual(['mould-volume', 'energy'])
   })
 
   it('names the specimen that cannot be, and stores nothing', async () => {
@@ -61,6 +61,9 @@ describe('a curve from mould masses', () => {
     expect(coarse.status).toBe(400)
     expect(issues(coarse.body)).toContain('body.apparatus.oversizePercent')
     expect(issues(coarse.body)).toContain('Method B may')
+    const older = await open.people.technician.post(open.path('/curves'), input({ apparatus: { edition: '2000', layers: 3, blows: 25, oversizePercent: 22 } }))
+    expect(issues(older.body)).toContain('D698-00 method A takes at most 20 %')
+    expect((await record({ apparatus: { edition: '2007', mould: '6-in', layers: null, blows: null, oversizePercent: 22 } })).apparatus).toMatchObject({ edition: '2007', mould: '6-in' })
     const letter = await open.people.technician.post(open.path('/curves'), input({ procedure: 'D' }))
     expect(issues(letter.body)).toContain('body.procedure')
   })
