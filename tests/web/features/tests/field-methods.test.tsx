@@ -46,7 +46,7 @@ async function save(): Promise<CreateTest> {
   return sent[0] as CreateTest
 }
 
-describe('recording each method', () => {
+describe('recording each method', { timeout: 30_000 }, () => {
   it('takes a rubber balloon, with its verdict while typing', async () => {
     await open('Rubber balloon')
     await userEvent.click(screen.getByRole('radio', { name: 'Stated' }))

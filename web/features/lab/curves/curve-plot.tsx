@@ -1,7 +1,7 @@
 import { scaleLinear } from 'd3-scale'
 import { curveMonotoneX, line } from 'd3-shape'
 import { useId } from 'react'
-import { zeroAirVoidsDensity } from '#shared/domain/phase-relations.ts'
+import { saturationLineDensity } from '#shared/domain/phase-relations.ts'
 import type { LabPoint } from '#shared/domain/curve-points.ts'
 import type { MaximumPair } from '#shared/domain/reference-curve.ts'
 import { plotExtent, type PlotPoint } from '#web/components/drawing/acceptance-window-geometry.ts'
@@ -23,8 +23,13 @@ export type CurvePlotProps = {
 
 const HEIGHT = 360
 const TEXT = 12
+/** Lines of equal saturation beside the zero-air-voids line, told apart by their dashes. */
+const SATURATIONS = [
+  { percent: 90, dash: '10 3 2 3' },
+  { percent: 80, dash: '2 3' },
+] as const
 
-/** Dry density over moisture: the laboratory's points, the curve through them, its peak, and the zero-air-voids line. */
+/** Dry density over moisture: the laboratory's points, the curve through them, its peak, and the lines of 80, 90 and 100 % saturation. */
 export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlotProps) {
   const { site, units } = useSite()
   const clipId = useId()
@@ -41,10 +46,13 @@ export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlo
   const y = scaleLinear(extent.density, [frame.bottom, frame.top])
   const path = line<PlotPoint>((point) => x(point.moisture), (point) => y(point.density))
   const smooth = line<PlotPoint>((point) => x(point.moisture), (point) => y(point.density)).curve(curveMonotoneX)
-  const zav = Array.from({ length: 61 }, (_, index): PlotPoint => {
-    const moisture = extent.moisture[0] + (index / 60) * (extent.moisture[1] - extent.moisture[0])
-    return shown({ moisture, dryDensity: zeroAirVoidsDensity(moisture, gs, site.waterDensity) })
-  })
+  const lineOf = (saturation: number) =>
+    Array.from({ length: 61 }, (_, index): PlotPoint => {
+      const moisture = extent.moisture[0] + (index / 60) * (extent.moisture[1] - extent.moisture[0])
+      return shown({ moisture, dryDensity: saturationLineDensity(moisture, saturation, gs, site.waterDensity) })
+    })
+  const zav = lineOf(100)
+  const partly = SATURATIONS.map(({ percent, dash }) => ({ percent, dash, run: lineOf(percent) }))
   const box = ({ moisture, density }: PlotPoint): Box => ({ x: x(moisture) - 8, y: y(density) - 8, width: 16, height: 16 })
   const alongZav = zav.filter((point) => y(point.density) >= frame.top && y(point.density) <= frame.bottom)
   const zavAt = alongZav[Math.floor(alongZav.length * 0.25)] ?? alongZav[0]
@@ -56,6 +64,11 @@ export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlo
         ? []
         : [{ id: 'peak', text: `${units.density(pair.maxDryDensity)} at ${units.percent(pair.optimumMoisture)}`, fontSize: TEXT, places: [{ x: x(peak.moisture) - 60, y: y(peak.density) - 14 }, { x: x(peak.moisture) - 132, y: y(peak.density) - 12 }, { x: x(peak.moisture) + 10, y: y(peak.density) + 30 }] }]),
       ...(own === null ? [] : [{ id: 'own', text: 'laboratory’s own', fontSize: TEXT, places: [{ x: x(own.moisture) + 12, y: y(own.density) + 22 }, { x: x(own.moisture) - 110, y: y(own.density) + 34 }] }]),
+      ...partly.flatMap(({ percent, run }) => {
+        const at = run.findLast((point) => y(point.density) >= frame.top + TEXT && y(point.density) <= frame.bottom - TEXT)
+        if (at === undefined) return []
+        return [{ id: `s${percent}`, text: `${percent} %`, fontSize: TEXT, places: [{ x: x(at.moisture) - 34, y: y(at.density) - 8 }, { x: x(at.moisture) - 40, y: y(at.density) + 14 }] }]
+      }),
       ...(zavAt === undefined ? [] : [{ id: 'zav', text: zavText, fontSize: TEXT, places: [{ x: x(zavAt.moisture) + 12, y: y(zavAt.density) - 4 }, { x: frame.right - 150, y: frame.top + 2 * TEXT }] }]),
     ],
     [...marks.map(box), ...drawn.map(shown).map((point) => ({ ...box(point), y: y(point.density) - 3, height: 6 })), ...zav.map((point) => ({ x: x(point.moisture) - 5, y: y(point.density) - 3, width: 10, height: 6 }))],
@@ -69,6 +82,9 @@ export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlo
         </clipPath>
         <PlotAxes x={x} y={y} {...frame} fontSize={TEXT} grid xLabel="Moisture, %" />
         <g clipPath={`url(#${clipId})`} fill="none">
+          {partly.map(({ percent, dash, run }) => (
+            <path key={percent} d={path(run) ?? ''} stroke="var(--zav)" strokeWidth={1} strokeDasharray={dash} />
+          ))}
           <path d={path(zav) ?? ''} stroke="var(--zav)" strokeWidth={1.8} strokeDasharray="8 4" />
           <path d={smooth(drawn.map(shown)) ?? ''} stroke="var(--ink)" strokeWidth={2} />
           {peak !== null && <path d={`M${frame.left} ${y(peak.density)}H${x(peak.moisture)}V${frame.bottom}`} stroke="var(--ink)" strokeDasharray="3 3" />}
@@ -80,7 +96,7 @@ export function CurvePlot({ label, points, drawn, gs, pair, reported }: CurvePlo
         </g>
         <g fontSize={TEXT} fontWeight={600} paintOrder="stroke" stroke="var(--raised)" strokeWidth={3} strokeLinejoin="round">
           {labels.map(({ id, text, x: left, y: base }) => (
-            <text key={id} x={left} y={base} fill={id === 'zav' ? 'var(--zav)' : id === 'axis' ? 'var(--ink-2)' : 'var(--ink)'}>
+            <text key={id} x={left} y={base} fill={id === 'zav' || id.startsWith('s') ? 'var(--zav)' : id === 'axis' ? 'var(--ink-2)' : 'var(--ink)'}>
               {text}
             </text>
           ))}

@@ -1,17 +1,20 @@
 import { useState } from 'react'
-import type { Curve } from '#shared/schemas/lab.ts'
+import type { Curve, Material } from '#shared/schemas/lab.ts'
 import { SubjectFiles } from '#web/components/files/subject-files.tsx'
 import { Button } from '#web/components/ui/button.tsx'
 import { FactsRow } from '#web/components/ui/figure.tsx'
 import { useSite } from '#web/lib/site-context.tsx'
 import { ApproveDialog } from './approve-dialog.tsx'
 import { CurvePlot } from './curve-plot.tsx'
+import { CurveNotes } from './curve-notes.tsx'
 import { CurveSuccession } from './curve-succession.tsx'
+import { DraftActs } from './draft-acts.tsx'
 import { FitsTable, FitWarnings } from './fits-table.tsx'
+import { OversizePairs } from './oversize-pairs.tsx'
 import { pairWords, sieveWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 
 /** One reference curve: its points, the fit, the pair in force and how it came to be. */
-export function CurveSheet({ curve }: { curve: Curve }) {
+export function CurveSheet({ curve, materials }: { curve: Curve; materials: readonly Material[] }) {
   const { can, units } = useSite()
   const [approving, setApproving] = useState(false)
   const { fit, reported, coarse } = curve
@@ -24,11 +27,14 @@ export function CurveSheet({ curve }: { curve: Curve }) {
             {curve.materialName}, {curve.method} method {curve.procedure}, sampled {units.fullDate(curve.sampledAt)}
           </p>
         </div>
-        {curve.status === 'draft' && can('curve.approve') && (
-          <Button kind="primary" onClick={() => setApproving(true)}>
-            Approve
-          </Button>
-        )}
+        <div className="flex flex-wrap gap-2">
+          <DraftActs curve={curve} materials={materials} />
+          {curve.status === 'draft' && can('curve.approve') && (
+            <Button kind="primary" onClick={() => setApproving(true)}>
+              Approve
+            </Button>
+          )}
+        </div>
       </div>
       <FactsRow
         className="mt-4"
@@ -43,12 +49,14 @@ export function CurveSheet({ curve }: { curve: Curve }) {
         {curve.approvedBy !== null && curve.approvedAt !== null && ` by ${curve.approvedBy} on ${units.fullDate(curve.approvedAt)}`}. Recorded by {curve.recordedBy}.{' '}
         {curve.testsJudged === 0 ? 'No test was judged by it yet.' : `${curve.testsJudged} ${curve.testsJudged === 1 ? 'test was' : 'tests were'} judged by it.`}
       </p>
+      <CurveNotes curve={curve} />
       <CurveSuccession curve={curve} />
       <p className="mt-1 mb-4 text-ink-2">
         {coarse === null
           ? `Its stones (kept on the ${sieveWords(curve.method, curve.procedure)}) are not known: a test with 5 % of them or more cannot be judged by it.`
           : `Stones kept on the ${sieveWords(curve.method, curve.procedure)}: bulk specific gravity ${coarse.bulkGravity}, moisture ${units.percent(coarse.moisture)}.`}
       </p>
+      <OversizePairs curve={curve} />
       <CurvePlot
         label={`Compaction curve ${curve.code}, ${curve.points.length} points, ${pairWords(curve.pair, units)}`}
         points={curve.points}

@@ -16,7 +16,7 @@ import { LabFrame } from '#web/features/lab/lab-frame.tsx'
 import { pairWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 import { MaterialDialog } from './material-dialog.tsx'
 
-function MaterialsTable({ materials }: { materials: readonly Material[] }) {
+function MaterialsTable({ materials, onChoose }: { materials: readonly Material[]; onChoose: ((material: Material) => void) | undefined }) {
   const { units } = useSite()
   return (
     <Table caption="Borrow materials">
@@ -25,6 +25,7 @@ function MaterialsTable({ materials }: { materials: readonly Material[] }) {
           <HeadCell className="pl-0">Material</HeadCell>
           <HeadCell>Source</HeadCell>
           <HeadCell>Classification</HeadCell>
+          <HeadCell numeric>Gs</HeadCell>
           <HeadCell numeric>Swell</HeadCell>
           <HeadCell numeric>Shrink</HeadCell>
           <HeadCell numeric>Loose to compacted</HeadCell>
@@ -33,9 +34,18 @@ function MaterialsTable({ materials }: { materials: readonly Material[] }) {
       <tbody>
         {materials.map((material) => (
           <Row key={material.id}>
-            <RowHead className="pl-0">{material.name}</RowHead>
+            <RowHead className="pl-0">
+              {onChoose === undefined ? (
+                material.name
+              ) : (
+                <button type="button" aria-label={`Edit ${material.name}`} onClick={() => onChoose(material)} className="link-ink pointer-coarse:min-h-11">
+                  {material.name}
+                </button>
+              )}
+            </RowHead>
             <Cell>{material.source}</Cell>
             <Cell>{material.classification}</Cell>
+            <Cell numeric>{material.gs === null ? '–' : `${units.number(material.gs, 2)}${material.gsMeasured ? '' : ', assumed'}`}</Cell>
             <Cell numeric>{units.percent(material.swellPercent)}</Cell>
             <Cell numeric>{units.percent(material.shrinkPercent)}</Cell>
             <Cell numeric>× {units.number(material.looseToCompacted, 3)}</Cell>
@@ -87,6 +97,7 @@ export function CurvesPage() {
   const { site, can } = useSite()
   const [search, setSearch] = useSearchParams()
   const [asked, setAsked] = useState<'material' | 'curve' | null>(null)
+  const [editing, setEditing] = useState<Material | null>(null)
   const materials = useQuery(materialQueries.list(site.id))
   const curves = useQuery(curveQueries.list(site.id))
   const choose = (id: string) => setSearch({ curve: id }, { replace: true })
@@ -130,16 +141,17 @@ export function CurvesPage() {
             </section>
             <section>
               <SectionHead>Borrow materials</SectionHead>
-              <MaterialsTable materials={materials.data} />
+              <MaterialsTable materials={materials.data} onChoose={can('material.record') ? setEditing : undefined} />
             </section>
           </div>
           {chosen !== undefined && (
             <div className="min-w-0 xl:border-l xl:border-rule-2 xl:pl-10">
-              <CurveSheet key={chosen.id} curve={chosen} />
+              <CurveSheet key={chosen.id} curve={chosen} materials={materials.data} />
             </div>
           )}
         </div>
       )}
+      {editing !== null && <MaterialDialog material={editing} onClose={() => setEditing(null)} />}
       {asked === 'material' && <MaterialDialog onClose={() => setAsked(null)} />}
       {asked === 'curve' && materials.data !== undefined && (
         <CurveDialog

@@ -12,7 +12,7 @@ import { CurvesPage } from '#web/features/lab/curves/curves-page.tsx'
 import { keepCsrfToken } from '#web/lib/api-client.ts'
 
 function open(role: Role = 'qc-lead', curves: readonly Curve[] = [buildCurve()], materials: readonly Material[] = [MATERIAL]) {
-  return openSheet(CurvesPage, { site: { role }, pattern: '/sites/:siteId/lab', address: `/sites/${SITE_ID}/lab`, answers: { '/curves': { curves }, '/materials': { materials } } })
+  return openSheet(CurvesPage, { site: { role }, pattern: '/sites/:siteId/lab', address: `/sites/${SITE_ID}/lab`, answers: { '/curves': { curves }, '/materials': { materials }, '/attachments': { attachments: [] } } })
 }
 
 function takePosts(path: string, answer: () => Response): unknown[] {
@@ -26,9 +26,12 @@ function takePosts(path: string, answer: () => Response): unknown[] {
   return sent
 }
 
-beforeEach(() => keepCsrfToken('token'))
+beforeEach(() => {
+  window.sessionStorage.clear()
+  keepCsrfToken('token')
+})
 
-describe('the Lab sheet', () => {
+describe('the Lab sheet', { timeout: 30_000 }, () => {
   it('lists curves and materials, and shows the first curve with its fits', async () => {
     open()
     const curves = await screen.findByRole('table', { name: 'Reference curves' })
@@ -76,6 +79,7 @@ describe('the Lab sheet', () => {
     open()
     await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
     const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
+    await userEvent.type(within(dialog).getByLabelText('Specific gravity of solids, Gs'), '2.70')
     const first = within(dialog).getByLabelText('Point 1, moisture, percent')
     await userEvent.click(first)
     await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n')
@@ -96,6 +100,7 @@ describe('the Lab sheet', () => {
     await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
     const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
     await userEvent.type(within(dialog).getByLabelText('Code'), 'RB-3')
+    await userEvent.type(within(dialog).getByLabelText('Specific gravity of solids, Gs'), '2.70')
     await userEvent.click(within(dialog).getByLabelText('Point 1, moisture, percent'))
     await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n14\t117.8\n16\t112.8')
     await userEvent.click(within(dialog).getByRole('button', { name: 'Save the curve' }))

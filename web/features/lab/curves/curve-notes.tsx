@@ -1,0 +1,25 @@
+import type { Curve } from '#shared/schemas/lab.ts'
+
+const WRITTEN = { dry: 'dry unit weights', wet: 'wet unit weights', masses: 'mould masses' } as const
+
+/** How the curve was compacted and written down, and where that departs from its method. */
+export function CurveNotes({ curve }: { curve: Curve }) {
+  const { entry, apparatus, flags, withdrawReason } = curve
+  const facts = [
+    ...(entry === null ? [] : [`Entered as ${WRITTEN[entry.kind]} of ${entry.specimens.length} specimens`]),
+    ...((apparatus?.layers ?? null) === null ? [] : [`${apparatus.layers} layers`]),
+    ...((apparatus?.blows ?? null) === null ? [] : [`${apparatus.blows} blows a layer`]),
+    ...((apparatus?.oversizePercent ?? null) === null ? [] : [`${apparatus.oversizePercent} % retained on its sieve`]),
+  ]
+  return (
+    <>
+      {withdrawReason !== null && <p className="mt-1 mb-0 font-medium">Withdrawn: {withdrawReason}</p>}
+      {facts.length > 0 && <p className="mt-1 mb-0 text-ink-2">{facts.join(', ')}.</p>}
+      {flags.map(({ code, message }) => (
+        <p key={`${code} ${message}`} className="mt-1 mb-0 font-medium text-warn">
+          {message}
+        </p>
+      ))}
+    </>
+  )
+}

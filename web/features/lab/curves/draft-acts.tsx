@@ -1,0 +1,58 @@
+import { zodResolver } from '@hookform/resolvers/zod'
+import { useState } from 'react'
+import { useForm } from 'react-hook-form'
+import { withdrawCurveSchema, type Curve, type Material } from '#shared/schemas/lab.ts'
+import { Banner } from '#web/components/ui/banner.tsx'
+import { Button } from '#web/components/ui/button.tsx'
+import { Dialog, DialogClose } from '#web/components/ui/dialog.tsx'
+import { TextArea } from '#web/components/ui/text-fields.tsx'
+import { useWithdrawCurve } from '#web/data/curve/mutations.ts'
+import { useSite } from '#web/lib/site-context.tsx'
+import { CurveDialog } from './curve-dialog.tsx'
+
+/** A draft that no test was judged by can be put right or taken back. */
+export function DraftActs({ curve, materials }: { curve: Curve; materials: readonly Material[] }) {
+  const { can } = useSite()
+  const [asked, setAsked] = useState<'correct' | 'withdraw' | null>(null)
+  const close = () => setAsked(null)
+  if (curve.status !== 'draft' || curve.testsJudged > 0 || !can('curve.record')) return null
+  return (
+    <>
+      <Button onClick={() => setAsked('correct')}>Correct</Button>
+      <Button kind="quiet" onClick={() => setAsked('withdraw')}>
+        Withdraw
+      </Button>
+      {asked === 'correct' && <CurveDialog materials={materials} curve={curve} onClose={close} onSaved={close} />}
+      {asked === 'withdraw' && <WithdrawDialog curve={curve} onClose={close} />}
+    </>
+  )
+}
+
+function WithdrawDialog({ curve, onClose }: { curve: Curve; onClose: () => void }) {
+  const { site } = useSite()
+  const withdraw = useWithdrawCurve(site.id, { saysOwnErrors: true })
+  const { register, handleSubmit, formState } = useForm<{ reason: string }>({ resolver: zodResolver(withdrawCurveSchema), defaultValues: { reason: '' } })
+  const handleWithdraw = handleSubmit(({ reason }) => withdraw.mutate({ id: curve.id, reason }, { onSuccess: onClose }))
+  return (
+    <Dialog open onOpenChange={(open) => !open && onClose()} title={`Withdraw ${curve.code}?`} description="The draft stays on record with your reason and judges nothing. This cannot be taken back.">
+      <form noValidate onSubmit={(event) => void handleWithdraw(event)} className="grid gap-[14px]">
+        {withdraw.error !== null && (
+          <Banner tone="bad" title="Not withdrawn.">
+            {withdraw.error.message}
+          </Banner>
+        )}
+        <TextArea label="Reason" error={formState.errors.reason?.message} {...register('reason')} />
+        <div className="flex flex-wrap gap-2 pb-2">
+          <DialogClose>
+            <Button kind="primary" size="touch">
+              Keep it
+            </Button>
+          </DialogClose>
+          <Button type="submit" kind="danger" size="touch" busyLabel={withdraw.isPending && 'Withdrawing'}>
+            Withdraw with reason
+          </Button>
+        </div>
+      </form>
+    </Dialog>
+  )
+}
