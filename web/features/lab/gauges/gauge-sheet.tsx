@@ -78,7 +78,11 @@ export function GaugeSheet({ gauge, onAct }: { gauge: Gauge; onAct: (act: GaugeA
         </Banner>
       )}
       {data === undefined ? (
-        error === null && <Skeleton label="The log is on its way" lines={[90, 90, 70]} />
+        error === null && (
+          <div className="mt-6">
+            <Skeleton label="The log is on its way" lines={[90, 90, 70]} />
+          </div>
+        )
       ) : (
         <div className="mt-6 grid grid-cols-[minmax(0,1fr)] gap-7">
           {data.counts.some((count) => count.reference !== null) && (
