@@ -48,6 +48,8 @@ describe('the calibration of the apparatus', () => {
     await waitFor(() => expect(screen.getAllByRole('option', { name: /^Cylinder \d, / })).toHaveLength(2))
     expect(choice()).toBe('')
     expect(volume()).toBe('')
+    // D2937 scope, scribd.com 233505500
+    expect(screen.getByText('Not for gravel above 4.75 mm (No. 4), organic or very hard soil.').tagName).toBe('P')
   })
 
   it('says where the sheet carries another value, by more than rounding', async () => {

@@ -52,6 +52,7 @@ export function CylinderFields() {
         )}
         <ReadingField name="cylinder.largestParticle" label="Largest particle, if seen" unit={volumeBy === 'stated' ? <UnitChoice name="cylinder.lengthUnit" of="length" label="Particle size in" /> : lengthUnit} />
       </FieldGrid>
+      <p className="mt-2 mb-0 text-small text-ink-2">Not for gravel above 4.75 mm (No. 4), organic or very hard soil.</p>
     </section>
   )
 }
