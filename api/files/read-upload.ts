@@ -14,8 +14,8 @@ const PDF_END_WITHIN = 2_048
 const kept = 'It was not added; the others were kept.'
 
 function wrongType(found: string | undefined): AppError {
-  const what = found === undefined ? 'What is in this file is no photo and no PDF' : `By its content this file is ${found}, whatever its name says`
-  return invalid(`${what}. Photos (JPEG, PNG, WebP) and PDF documents can be added. ${kept}`)
+  const content = found === undefined ? 'By its content' : `By its content (${found})`
+  return invalid(`${content} this file is neither a photo nor a PDF, whatever its name says. Photos (JPEG, PNG, WebP) and PDF documents can be added. ${kept}`)
 }
 
 const megabytes = (bytes: number) => `${bytes / 1_000_000} MB`

@@ -21,26 +21,27 @@ export interface SentObject {
  */
 export async function sendObject(objects: ObjectStore, file: SentObject, req: Request, res: Response): Promise<void> {
   const etag = `"${file.etag}"`
-  res.set({
-    'Cache-Control': 'private, no-cache',
-    ETag: etag,
-    'Content-Type': file.contentType,
-    'Content-Disposition': disposition(file),
-    'Content-Security-Policy': "default-src 'none'; sandbox",
-    'X-Content-Type-Options': 'nosniff',
-    'Accept-Ranges': file.bytes === null ? 'none' : 'bytes',
-  })
+  res.set({ 'Cache-Control': 'private, no-cache', ETag: etag })
   if (req.fresh) {
     res.status(304).end()
     return
   }
   const range = askedRange(req, file.bytes, etag)
   if (range === 'outside') {
-    res.status(416).set('Content-Range', `bytes */${file.bytes}`).removeHeader('Content-Type')
-    res.end()
+    res.status(416).set('Content-Range', `bytes */${file.bytes}`).end()
     return
   }
-  const body = await objects.get(file.key, range ?? undefined)
+  const body = await objects.get(file.key, range ?? undefined).catch((error: unknown) => {
+    res.removeHeader('ETag')
+    throw error
+  })
+  res.set({
+    'Content-Type': file.contentType,
+    'Content-Disposition': disposition(file),
+    'Content-Security-Policy': "default-src 'none'; sandbox",
+    'X-Content-Type-Options': 'nosniff',
+    'Accept-Ranges': file.bytes === null ? 'none' : 'bytes',
+  })
   if (range) res.status(206).set('Content-Range', `bytes ${range.start}-${range.end}/${file.bytes}`)
   if (file.bytes !== null) res.set('Content-Length', String(range ? range.end - range.start + 1 : file.bytes))
   await pipeline(body, res).catch((error: unknown) => {

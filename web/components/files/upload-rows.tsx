@@ -1,3 +1,4 @@
+import { useState } from 'react'
 import { TEXT_LIMITS } from '#shared/schemas/common.ts'
 import { Button } from '#web/components/ui/button.tsx'
 import { ProgressBar } from '#web/components/ui/progress-bar.tsx'
@@ -10,7 +11,7 @@ import { fileSize } from './file-words.ts'
 export function UploadRows({ list, label }: { list: readonly Upload[]; label: string }) {
   if (list.length === 0) return null
   return (
-    <ul aria-label={label} className="m-0 mb-3 list-none border-t border-rule p-0">
+    <ul aria-label={label} className="m-0 mb-3 list-none p-0">
       {list.map((upload) => (
         <UploadRow key={upload.id} upload={upload} />
       ))}
@@ -59,14 +60,13 @@ function Failure({ upload: { id, error, retryable } }: { upload: Upload }) {
   )
 }
 
+/** A format this browser cannot show leaves the film bare. */
 function Picture({ preview }: { preview: string | null }) {
-  if (preview === null) {
-    return (
-      <span aria-hidden className="flex aspect-[4/3] items-center justify-center border border-rule-2 bg-film text-small font-bold">
-        PDF
-      </span>
-    )
-  }
-  // a format this browser cannot show leaves the film bare
-  return <img src={preview} alt="" className="aspect-[4/3] w-full border border-rule-2 bg-film object-cover" />
+  const [bare, setBare] = useState(false)
+  if (preview !== null && !bare) return <img src={preview} alt="" onError={() => setBare(true)} className="aspect-[4/3] w-full border border-rule-2 bg-film object-cover" />
+  return (
+    <span aria-hidden className="flex aspect-[4/3] items-center justify-center border border-rule-2 bg-film text-small font-bold">
+      {preview === null && 'PDF'}
+    </span>
+  )
 }

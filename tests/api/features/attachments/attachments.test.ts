@@ -272,7 +272,8 @@ describe('a server whose store for files is away', () => {
       await lead.signIn(open.people['qc-lead'].user.email)
       const answer = await lead.upload(open.path('/attachments'), fieldsOf(), await photo())
       expect([answer.status, messageOf(answer)]).toEqual([503, expect.stringMatching(words)])
-      expect((await lead.get(open.path(`/attachments/${saved.id}/file`))).status).toBe(503)
+      const asked = await lead.get(open.path(`/attachments/${saved.id}/file`))
+      expect([asked.status, asked.type, asked.headers.etag]).toEqual([503, 'application/json', undefined])
       expect((await lead.get(open.path(`/attachments?subject=test&subjectId=${testId}`))).status).toBe(200)
       expect(await rows()).toHaveLength(1)
     } finally {

@@ -1,5 +1,5 @@
 import { QueryClientProvider } from '@tanstack/react-query'
-import { render, screen, waitFor, within } from '@testing-library/react'
+import { configure, render, screen, waitFor, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { delay, http, HttpResponse } from 'msw'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
@@ -47,6 +47,9 @@ const photo = (name: string, size = 1_200_000): File => {
 }
 const choose = async (...files: File[]): Promise<void> => userEvent.upload(await screen.findByLabelText('Add photos or PDF', { selector: 'input' }), files)
 const row = (name: string): HTMLElement => screen.getByRole('listitem', { name })
+
+// the first page of a file is drawn slowly where much else runs
+configure({ asyncUtilTimeout: 5_000 })
 
 beforeEach(() => keepCsrfToken('token'))
 afterEach(() => uploads.clear())
@@ -158,7 +161,7 @@ describe('adding files', () => {
 
   it('says what is wrong with one file and keeps the others', async () => {
     openFiles()
-    const message = 'By its content this file is application/zip, whatever its name says.'
+    const message = 'By its content this file is neither a photo nor a PDF, whatever its name says.'
     let tries = 0
     apiStandIn.use(http.post(ADDRESS, () => (++tries === 1 ? HttpResponse.json({ code: 'invalid', message, requestId: 'r' }, { status: 400 }) : arrive('Second'))))
     await choose(photo('a.jpg'), photo('b.jpg'), photo('huge.jpg', 15_000_001))
