@@ -22,7 +22,7 @@ import { createPeople, DEMO_PEOPLE } from '#seed/demo/demo-people.ts'
 import type { DemoIds } from '#seed/demo/demo-people.ts'
 import { createChance } from '#seed/demo/demo-random.ts'
 import type { Chance } from '#seed/demo/demo-random.ts'
-import { checkFamily, recordFamily } from '#seed/demo/demo-family.ts'
+import { checkFamily, recordDraft, recordFamily } from '#seed/demo/demo-family.ts'
 import { demoCurve, demoMaterials, demoSiteInput, emptySiteInput } from '#seed/demo/demo-site.ts'
 import { playToday } from '#seed/demo/demo-today.ts'
 import { Foreman } from '#seed/demo/demo-work.ts'
@@ -40,7 +40,7 @@ interface Stage {
 }
 
 const RIDGE = { code: 'RB-3', gs: 2.68, method: 'D698', procedure: 'A', pcf: [[8.6, 110.9], [10.4, 115.5], [12.4, 117.6], [14.5, 115.3], [16.6, 109.4]] } as const
-const PIT_RUN = { code: 'PR-1', gs: 2.66, method: 'D698', procedure: 'C', pcf: [[5, 121.2], [7, 125.9], [8.8, 127.6], [10.6, 125.8], [12.4, 121]] } as const
+const PIT_RUN = { code: 'PR-1', gs: 2.66, method: 'D698', procedure: 'C', pcf: [[5, 121.2], [7, 125.9], [8.8, 127.6], [10.6, 125.8], [12.4, 121]], coarse: { bulkGravity: 2.63, moisture: 1.4 } } as const
 
 /**
  * Makes the demo: five people, the site Alder Flats yard with six weeks of work that ends now, and an empty second site.
@@ -78,6 +78,7 @@ export async function seedDemo(server: Deps): Promise<void> {
   await playToday({ foreman, crew, plan, fillOf, day: calendar.today, carried, shifts: today })
   clock = now
   await checkFamily({ deps, people, siteId: input.id }, fills.ridge.curveId, now)
+  await recordDraft({ deps, people, siteId: input.id }, fills.pitRun.materialId, now)
   await gauges.correct(calendar.today, fills.ridge.materialId)
   clock = now
   await attachDemoFiles({ deps, siteId: input.id, people })

@@ -173,19 +173,20 @@ export function emptySiteInput(chance: Chance): CreateSite {
 
 export function demoMaterials(chance: Chance): { ridge: CreateMaterial; pitRun: CreateMaterial } {
   return {
-    ridge: { id: chance.id(), name: 'Ridge borrow', source: 'Cut at the east ridge', classification: 'Silty clay, CL', swellPercent: 28, shrinkPercent: 10 },
-    pitRun: { id: chance.id(), name: 'Pit run', source: 'Lower pit', classification: 'Silty sand with gravel, SM', swellPercent: 14, shrinkPercent: 6 },
+    ridge: { id: chance.id(), name: 'Ridge borrow', source: 'Cut at the east ridge', classification: 'Silty clay, CL', swellPercent: 28, shrinkPercent: 10, gs: 2.68, gsMeasured: true },
+    pitRun: { id: chance.id(), name: 'Pit run', source: 'Lower pit', classification: 'Silty sand with gravel, SM', swellPercent: 14, shrinkPercent: 6, gs: 2.66, gsMeasured: true },
   }
 }
 
-type CurveFor = Pick<CreateCurve, 'code' | 'materialId' | 'method' | 'procedure' | 'gs'> & { readonly pcf: readonly (readonly [number, number])[]; readonly sampledAt: Date }
+type CurveFor = Pick<CreateCurve, 'code' | 'materialId' | 'method' | 'procedure' | 'gs'> &
+  Partial<Pick<CreateCurve, 'coarse' | 'entry' | 'apparatus'>> & { readonly pcf?: readonly (readonly [number, number])[]; readonly sampledAt: Date }
 
-export function demoCurve(chance: Chance, { pcf, sampledAt, ...curve }: CurveFor): CreateCurve {
+export function demoCurve(chance: Chance, { pcf = [], sampledAt, ...curve }: CurveFor): CreateCurve {
   return {
+    coarse: null,
     ...curve,
     id: chance.id(),
     gsMeasured: true,
-    coarse: null,
     reported: null,
     points: pcf.map(([moisture, density]) => ({ moisture, dryDensity: convertDensity(density, 'pcf', 'kg/m3') })),
     sampledAt: sampledAt.toISOString(),
