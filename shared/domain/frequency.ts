@@ -18,7 +18,7 @@ export interface FrequencyOptions {
 
 /**
  * Tests the lot-scope rules ask of one lot: the largest of the rules, each rounded up "or fraction thereof"
- * (UFGS 31 00 00 part 3, checks 4.2), except for a remainder inside the tolerance. Running and per-lift-day rules
+ * (UFGS 31 00 00 part 3), except for a remainder inside the tolerance. Running and per-lift-day rules
  * are not counted in one lot: see owedRunning and shareMinimum.
  * @returns whole number; 0 for a lot without volume; at least 1 where any lot-scope rule is given
  */

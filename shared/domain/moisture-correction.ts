@@ -17,7 +17,7 @@ export interface MoistureCorrection {
 
 /**
  * The site correction of a gauge for a material from paired moistures: the mean of K = 1000 (w − wg) / (100 + wg) over the
- * pairs (formula from memory, checks.md 2.2; averaging several places is common practice), with its spread.
+ * pairs (formula from memory; averaging several places is common practice), with its spread.
  * @param pairs one or more, 0 to 500 percent
  */
 export function moistureCorrection(pairs: readonly MoisturePair[]): Result<MoistureCorrection> {

@@ -22,7 +22,7 @@ export function seededRandom(seed: string): () => number {
 }
 
 /**
- * The location a random number names along a length: start + R·length (random number tables, checks 6.3).
+ * The location a random number names along a length: start + R·length (random number tables).
  * @param start where the length begins, any unit
  * @param length in the same unit, 0 or more
  * @param random 0 or more and below 1

@@ -48,7 +48,7 @@ export interface DrawnStake extends GridPoint {
 /**
  * Stakes for the tests owed and not yet staked: the unspoken, unstaked cells in serpentine order, split into as many
  * groups of equal volume, one point in each, uniform over the cells' clipped areas (stratified random location after
- * ASTM D3665, checks 6.3). A point nearer to the lot's edge than the set-back is drawn again; where the cells are too
+ * ASTM D3665). A point nearer to the lot's edge than the set-back is drawn again; where the cells are too
  * small for it the set-back falls to a half, a quarter, none. Where every unspoken cell is staked these are taken
  * again, and where none is unspoken the whole lot is.
  * @returns whole mm in grid axes, one per group; none where nothing is owed or placed

@@ -71,7 +71,7 @@ function drift(name: keyof CountPair, count: CountPair, reference: CountPair): {
 
 /**
  * Compares a standard count with its reference: density within 1 %, moisture within 2 %; exactly on the limit is within
- * (gauge operating manual, checks.md 2.2).
+ * (gauge operating manuals).
  * @param count both above zero
  * @param reference both above zero
  */
@@ -113,7 +113,7 @@ function referenceFrom(calibration: GaugeCalibration, goodDays: readonly GoodDay
 const isPositive = ({ density, moisture }: CountPair): boolean => Number.isFinite(density) && Number.isFinite(moisture) && density > 0 && moisture > 0
 
 /**
- * Judges every standard count of a gauge (gauge operating manual, checks.md 2.2): against the calibration's counts until
+ * Judges every standard count of a gauge (gauge operating manuals): against the calibration's counts until
  * four days since it are good, then against the average of the last four good days before its own. All counts of one day
  * have one reference. Of several counts in a day the last that is not void stands for it; only a good one that stands
  * enters an average. A new calibration starts again.
@@ -169,7 +169,7 @@ export type Stability =
 
 /**
  * The quick stability check: five counts one after another, of which the largest and the smallest lie less than 1 %
- * (density) and 2 % (moisture) apart (gauge operating manual, checks.md 2.2; the limit itself is out there, and we take the
+ * (density) and 2 % (moisture) apart (gauge operating manuals; the limit itself is out there, and we take the
  * percentage of the mean of the five).
  * @param counts five, each above zero
  * @returns the ranges in percent of the mean, and whether both are within

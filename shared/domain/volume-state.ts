@@ -29,12 +29,12 @@ export function addVolumes<Kind extends VolumeKind>(a: Volume<Kind>, b: Volume<N
   return { kind: a.kind, cm3: a.cm3 + b.cm3 }
 }
 
-/** Loose = bank · (1 + swell) (checks.md 5.1). */
+/** Loose = bank · (1 + swell) (published swell and shrink tables). */
 export function looseFromBank(bank: Volume<'bank'>, { swellPercent }: Pick<SwellShrink, 'swellPercent'>): Volume<'loose'> {
   return volumeOf('loose', bank.cm3 * (1 + swellPercent / 100))
 }
 
-/** Bank = compacted / (1 − shrink) (checks.md 5.1). */
+/** Bank = compacted / (1 − shrink) (published swell and shrink tables). */
 export function bankFromCompacted(
   compacted: Volume<'compacted'>,
   { shrinkPercent }: Pick<SwellShrink, 'shrinkPercent'>,
@@ -42,13 +42,13 @@ export function bankFromCompacted(
   return volumeOf('bank', compacted.cm3 / (1 - shrinkPercent / 100))
 }
 
-/** Load factor = bank / loose = 1 / (1 + swell), without unit (checks.md 5.1). */
+/** Load factor = bank / loose = 1 / (1 + swell), without unit (published swell and shrink tables). */
 export function loadFactor({ swellPercent }: Pick<SwellShrink, 'swellPercent'>): number {
   return 1 / (1 + swellPercent / 100)
 }
 
 /**
- * What one loose volume becomes when compacted: (1 − shrink) / (1 + swell), without unit (checks.md 5.1).
+ * What one loose volume becomes when compacted: (1 − shrink) / (1 + swell), without unit (published swell and shrink tables).
  * The same number as loose dry density over compacted dry density (domain section 1).
  */
 export function looseToCompactedFactor(material: SwellShrink): number {

@@ -1,7 +1,7 @@
 import type { Reason } from '#shared/domain/result.ts'
 
 /**
- * How an offset for a trench or wall is signed. Makers differ (checks.md 2.2): block minus standard is the moisture count on
+ * How an offset for a trench or wall is signed. Makers differ (gauge operating manuals): block minus standard is the moisture count on
  * the block beside the wall minus the day's moisture standard count, and is subtracted; standard minus block is the same
  * with the opposite sign, and is added.
  */

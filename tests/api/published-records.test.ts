@@ -46,18 +46,18 @@ async function record(overrides: Partial<CreateTest>): Promise<TestDetail> {
 
 type Row = readonly [test: string, dryPcf: number, moisture: number, percent: number]
 
-/** Field density reports state dry unit weight, moisture and percent of maximum to 0.1; checks.md takes ±0.1 for them. */
+/** Field density reports state dry unit weight, moisture and percent of maximum to 0.1; ours takes ±0.1 for them. */
 const REPORTS: readonly { readonly name: string; readonly source: string; readonly maxDryPcf: number; readonly optimum: number; readonly rows: readonly Row[] }[] = [
   {
     name: 'N-1',
-    source: 'weblink.coppelltx.gov DocView id=36304, D2922 and D3017 against D698 (checks.md N-1)',
+    source: 'weblink.coppelltx.gov DocView id=36304, D2922 and D3017 against D698 (N-1)',
     maxDryPcf: 107.4,
     optimum: 17,
     rows: [['1', 105.8, 15.1, 98.5]],
   },
   {
     name: 'N-2',
-    source: 'weblink.coppelltx.gov DocView id=88726 (checks.md N-2)',
+    source: 'weblink.coppelltx.gov DocView id=88726 (N-2)',
     maxDryPcf: 110.3,
     optimum: 16.9,
     rows: [
@@ -68,7 +68,7 @@ const REPORTS: readonly { readonly name: string; readonly source: string; readon
   },
   {
     name: 'N-3',
-    source: 'weblink.coppelltx.gov DocView id=88771 (checks.md N-3)',
+    source: 'weblink.coppelltx.gov DocView id=88771 (N-3)',
     maxDryPcf: 92.7,
     optimum: 25.3,
     rows: [
@@ -90,7 +90,7 @@ const REPORTS: readonly { readonly name: string; readonly source: string; readon
   },
   {
     name: 'N-5, over 100 %',
-    source: 'weblink.coppelltx.gov DocView id=88658 (checks.md N-5)',
+    source: 'weblink.coppelltx.gov DocView id=88658 (N-5)',
     maxDryPcf: 121.8,
     optimum: 12.1,
     rows: [
@@ -99,9 +99,9 @@ const REPORTS: readonly { readonly name: string; readonly source: string; readon
     ],
   },
   {
-    // #43 is printed as 97.1; 110.6 / 113.8 is 97.188 (checks.md N-7)
+    // #43 is printed as 97.1; 110.6 / 113.8 is 97.188 (N-7)
     name: 'N-7, retests',
-    source: 'weblink.coppelltx.gov DocView id=87075 (checks.md N-7)',
+    source: 'weblink.coppelltx.gov DocView id=87075 (N-7)',
     maxDryPcf: 113.8,
     optimum: 14.8,
     rows: [
@@ -136,7 +136,7 @@ describe.each(REPORTS)('field density report $name ($source)', ({ name, maxDryPc
   })
 })
 
-describe('sand cone S-1 (civilengineering-softstudies.com ?p=21, checks.md S-1)', () => {
+describe('sand cone S-1 (civilengineering-softstudies.com ?p=21)', () => {
   it('gives 111.69 pcf dry with the volume left unrounded, and 112.29 as the page rounds it', async () => {
     // 10.20 − 3.20 − 0.53 = 6.47 lb of sand at 99 pcf fill 0.065354 ft³; 8.11 lb of soil at 11.11 % moisture
     const saved = await record({

@@ -33,7 +33,7 @@ function found(result: FamilyFit): Extract<FamilyFit, { ok: true }> {
 }
 const reason = (result: FamilyFit) => (result.ok ? (result.unusable?.code ?? 'usable') : result.reason.code)
 
-// The rules are those of the AASHTO T 272 field procedure and of R 75 as checks.md 1.4 gives them.
+// The rules are those of the AASHTO T 272 field procedure and of R 75.
 describe('fitFamily', () => {
   it('gives a point on a curve that curve’s pair (T 272, first rule)', () => {
     fc.assert(

@@ -13,16 +13,16 @@ const layer = (feet2: number) => ({ areaMm2: squareFeet(feet2), volumeCm3: yards
 const fill = (volumeCm3: number) => ({ volumeCm3, areaMm2: squareFeet(10_000) })
 
 describe('tests required', () => {
-  it('counts one per 2,000 ft² or fraction thereof (UFGS 31 00 00, checks 4.2)', () => {
+  it('counts one per 2,000 ft² or fraction thereof (UFGS 31 00 00)', () => {
     expect(requiredTests([per2000SquareFeet], layer(10_000))).toBe(5)
     expect(requiredTests([per2000SquareFeet], layer(10_001))).toBe(6)
   })
 
-  it('doubles for hand-operated machines (UFGS 31 00 00, checks 4.2)', () => {
+  it('doubles for hand-operated machines (UFGS 31 00 00)', () => {
     expect(requiredTests([per2000SquareFeet], layer(10_000), { multiplier: 2 })).toBe(10)
   })
 
-  it('counts one per 500 yd³ (UFGS 31 00 00, checks 4.2), and no third test for exactly 1,000 yd³', () => {
+  it('counts one per 500 yd³ (UFGS 31 00 00), and no third test for exactly 1,000 yd³', () => {
     expect(requiredTests([per500Yards], fill(yards(1200)))).toBe(3)
     expect(requiredTests([per500Yards], fill(2 * yards(500)))).toBe(2)
     expect(requiredTests([per500Yards], fill(2 * yards(500) + 1))).toBe(3)

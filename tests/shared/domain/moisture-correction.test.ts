@@ -5,7 +5,7 @@ import { moistureCorrection } from '#shared/domain/moisture-correction.ts'
 
 describe('the site correction of gauge moisture', () => {
   it('is +18.18 where the gauge reads 10 % and the oven 12 %', () => {
-    // checks.md 2.2: 1000 (12 − 10) / 110 = 18.18, the formula from memory and computed there
+    // 1000 (12 − 10) / 110 = 18.18, the formula from memory and computed there
     expect(moistureCorrection([{ oven: 12, gauge: 10 }])).toMatchObject({ ok: true, value: { pairs: [expect.closeTo(18.1818, 4)] } })
   })
 

@@ -43,13 +43,13 @@ describe('moisture from tins', () => {
 
 describe('carbide and gauge', () => {
   test.each([
-    // Check row of checks 2.5, computed from w = 100·r/(100 − r) (kenkidryer.com, 2017-06-19).
+    // Check row, computed from w = 100·r/(100 − r) (kenkidryer.com, 2017-06-19).
     [5, 5.26], [10, 11.11], [12, 13.64], [15, 17.65], [20, 25],
   ])('a carbide reading of %d %% of wet mass is %d %% of dry mass', (reading, moisture) => {
     expect(moistureFromCarbide(reading)).toBeCloseTo(moisture, 2)
   })
 
-  test('gauge 10 %, oven 12 % makes K +18.18 (checks 2.2; form from memory, arithmetic computed)', () => {
+  test('gauge 10 %, oven 12 % makes K +18.18 (form from memory, arithmetic computed)', () => {
     expect(gaugeCorrectionK(12, 10)).toBeCloseTo(18.18, 2)
   })
 

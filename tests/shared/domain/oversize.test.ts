@@ -34,7 +34,7 @@ describe('oversize correction', () => {
     expect(result.optimumMoisture).toBeCloseTo(8.3, 1)
   })
 
-  test('the T 99 annex form Dd = 100·Df·k/(Df·Pc + k·Pf) is the same number (form from memory, checks 1.3)', () => {
+  test('the T 99 annex form Dd = 100·Df·k/(Df·Pc + k·Pf) is the same number (form from memory)', () => {
     fc.assert(
       fc.property(fc.double({ min: 1500, max: 2200, noNaN: true }), fc.integer({ min: 5, max: 30 }), fc.double({ min: 2.4, max: 3, noNaN: true }), (df, pc, gm) => {
         const k = 1000 * gm
@@ -75,7 +75,7 @@ describe('oversize correction', () => {
     expect(convertDensity(inPcf.maxDryDensity, 'pcf', 'kg/m3')).toBeCloseTo(corrected(fine, 20, stones).maxDryDensity, 8)
   })
 
-  test('the sieve follows the method (checks 1.1: D698-07, T 99/T 180)', () => {
+  test('the sieve follows the method (D698-07, T 99/T 180)', () => {
     expect(['A', 'B', 'C'].map((l) => oversizeSieve('D698', l as 'A'))).toEqual(['no-4', '3/8-in', '3/4-in'])
     expect(['A', 'B', 'C', 'D'].map((l) => oversizeSieve('T 180', l as 'A'))).toEqual(['no-4', 'no-4', '3/4-in', '3/4-in'])
   })

@@ -19,7 +19,7 @@ const valueOf = (result: { ok: boolean; value?: number }) => result.value ?? Num
 
 describe('zero air voids', () => {
   test.each([
-    // Z-1, Das 6.3P, Gs 2.66, 62.4 pcf: 7 % and 11 % as published (bartleby.com, checks 1.2); the rest recomputed
+    // Z-1, Das 6.3P, Gs 2.66, 62.4 pcf: 7 % and 11 % as published (bartleby.com); the rest recomputed
     // (165.984 / 1.399 is 118.6447, where the list of check values says 118.65).
     [7, 139.93], [11, 128.41], [15, 118.64], [19, 110.26], [23, 102.98],
   ])('Z-1: at %d % it is %d pcf', (moisture, pcf) => {

@@ -94,7 +94,7 @@ describe('nuclear gauge', () => {
     expect((100 * toPcf(result.dryDensity)) / 111.3).toBeCloseTo(94.96, 1)
   })
 
-  test('dry density is wet less moisture density, and %M = 100·M/DD (gauge manuals, checks 2.2)', () => {
+  test('dry density is wet less moisture density, and %M = 100·M/DD (gauge manuals)', () => {
     const moisture = { method: 'gauge', densityUnit: 'pcf', moistureDensity: 14.5, correctionK: 0 } as const
     const result = reduced({ ...GAUGE, secondWetDensity: undefined, moisture })
     expect(toPcf(result.dryDensity)).toBeCloseTo(121.6 - 14.5, 9)
@@ -104,7 +104,7 @@ describe('nuclear gauge', () => {
     expect(corrected.dryDensity).toBeLessThan(result.dryDensity)
   })
 
-  test('a standard count past 1 % density or 2 % moisture is flagged (state QC form of 04/2011, checks 2.2)', () => {
+  test('a standard count past 1 % density or 2 % moisture is flagged (state QC form of 04/2011)', () => {
     const counts = { density: 2828, moisture: 715, referenceDensity: 2800, referenceMoisture: 700 }
     expect(reduced({ ...GAUGE, standardCounts: counts }).flags.map((f) => f.code)).toEqual(['standard-count-moisture'])
     expect(reduced({ ...GAUGE, standardCounts: { ...counts, density: 2829, moisture: 714 } }).flags.map((f) => f.code)).toEqual(['standard-count-density'])

@@ -16,7 +16,7 @@ function fitted(input: CurveInput): FittedCurve {
   return fit
 }
 
-// Extra data, seen only on answer sites (checks.md preamble): judged by their recomputed columns.
+// Extra data, seen only on answer sites: judged by their recomputed columns.
 const P3_MASSES = [
   [1.68, 9.9], [1.71, 10.6], [1.77, 12.1], [1.83, 13.8], [1.86, 15.1], [1.88, 17.4], [1.87, 19.4], [1.85, 21.2],
 ] as const
@@ -104,7 +104,7 @@ describe('the fitted pair', () => {
     expect(roundToPlace(127.2 * 0.98, 1, 'even')).toBe(124.7)
   })
 
-  test('nominal energies: W·h·blows·layers/V (checks 1.1, computed)', () => {
+  test('nominal energies: W·h·blows·layers/V (computed)', () => {
     const energy = (lb: number, ft: number, blows: number, layers: number, ft3: number) => (lb * ft * blows * layers) / ft3
     expect(energy(5.5, 1, 25, 3, 1 / 30)).toBeCloseTo(12_375, 6)
     expect(energy(10, 1.5, 25, 5, 1 / 30)).toBeCloseTo(56_250, 6)

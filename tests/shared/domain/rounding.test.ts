@@ -11,9 +11,9 @@ const limit = (text: string) => parseLimit(text) ?? { value: Number.NaN, decimal
 
 describe('roundToPlace', () => {
   test.each([
-    // FAA training slide, slideplayer.com/slide/1650665 (checks 1.5).
+    // FAA training slide, slideplayer.com/slide/1650665.
     [4.61, 4.6], [4.64, 4.6], [4.65, 4.6], [4.66, 4.7], [4.69, 4.7], [4.75, 4.8],
-  ])('ties to even: %d rounds to %d (FAA slide, checks 1.5)', (value, expected) => {
+  ])('ties to even: %d rounds to %d (FAA slide)', (value, expected) => {
     expect(roundToPlace(value, 1, 'even')).toBe(expected)
   })
 
@@ -49,7 +49,7 @@ describe('roundToPlace', () => {
 
 describe('meets', () => {
   test.each([
-    // Consequences worked in checks 1.5 from ASTM E29.
+    // Consequences worked from ASTM E29.
     ['94.5', '95', even, false], ['94.51', '95', even, true], ['94.51', '95', absolute, false],
     ['94.95', '95.0', even, true], ['94.949', '95.0', even, false],
     // practice 3.4: 94.6 meets "95" and misses "95.0"; ties up where the agency says so.

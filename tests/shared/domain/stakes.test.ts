@@ -24,7 +24,7 @@ const draw = (change: Partial<Parameters<typeof drawStakes>[0]> = {}) =>
   drawStakes({ owed: 3, standing: [], cells: block(6, 4), sideMm: SIDE, setbackMm: 1000, seed, ...change })
 
 describe('random numbers', () => {
-  it('place a sublot of 250 at random number .022 5.5 into it (random number tables S 605-99, checks 6.3)', () => {
+  it('place a sublot of 250 at random number .022 5.5 into it (random number tables S 605-99)', () => {
     expect(randomLocation(0, 250, 0.022)).toBeCloseTo(5.5, 12)
     expect(randomLocation(500, 250, 0.022)).toBeCloseTo(505.5, 12)
   })

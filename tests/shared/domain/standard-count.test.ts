@@ -17,7 +17,7 @@ const count = (index: number, density: number, moisture = 600, change: Partial<S
 const verdicts = (counts: readonly StandardCount[]) => judgeCounts([CALIBRATION], counts).judged.map((each) => [each.count.id, each.judgement?.good, each.reference?.from])
 
 describe('a standard count against its reference', () => {
-  // gauge operating manual, as checks.md 2.2 states it: 1 % density, 2 % moisture
+  // gauge operating manual: 1 % density, 2 % moisture
   it('is within at 1 % of density and 2 % of moisture, exactly on the limit too', () => {
     expect(judgeCount({ density: 2_020, moisture: 588 }, CALIBRATION)).toMatchObject({ good: true, densityPercent: 1, moisturePercent: -2, reasons: [] })
     expect(judgeCount({ density: 2_020.1, moisture: 600 }, CALIBRATION)).toMatchObject({ good: false, densityGood: false, moistureGood: true })
@@ -113,7 +113,7 @@ describe('the counts of a gauge, day by day', () => {
 
 describe('the stability check of five counts', () => {
   const five = (last: number) => [2_000, 2_000, 2_000, 2_000, last].map((density) => ({ density, moisture: 600 }))
-  // checks.md 2.2: (max − min) < 1 % density, < 2 % moisture
+  // (max − min) < 1 % density, < 2 % moisture
   it('is stable below 1 % of density and 2 % of moisture', () => {
     expect(checkStability(five(2_019))).toMatchObject({ ok: true, stable: true })
     expect(checkStability(five(2_030))).toMatchObject({ ok: true, stable: false })

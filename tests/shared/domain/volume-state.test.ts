@@ -7,7 +7,7 @@ const cm3 = (value: number, unit: 'm3' | 'yd3' | 'ft3') => convertVolume(value, 
 const inUnit = (value: number, unit: 'm3' | 'yd3') => convertVolume(value, 'cm3', unit)
 
 describe('bank, loose and compacted volumes', () => {
-  // checks.md 5.1, published swell table: swell % → load factor
+  // published swell table: swell % → load factor
   it.each([
     [5, 0.952],
     [10, 0.909],

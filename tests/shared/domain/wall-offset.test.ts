@@ -15,7 +15,7 @@ const flagsOf = (raw: NuclearGaugeSheet) => {
 
 describe('the moisture correction beside a wall', () => {
   it('is signed as its convention says', () => {
-    // checks.md 2.2: one maker's offset = count on the block in the trench − daily moisture standard count, another's MS − M
+    // one maker's offset = count on the block in the trench − daily moisture standard count, another's MS − M
     expect(wallOffset(668, 641, 'block-minus-standard')).toBe(27)
     expect(wallOffset(668, 641, 'standard-minus-block')).toBe(-27)
   })

@@ -36,7 +36,7 @@ describe('exact constants', () => {
     expect(toCubicCentimetres(1, 'yd3')).toBe(764_555)
   })
 
-  test('mould volumes: 4.000 in and 6.000 in by 4.584 in are 944 and 2,124 cm³ (checks 1.1, dimensions from memory)', () => {
+  test('mould volumes: 4.000 in and 6.000 in by 4.584 in are 944 and 2,124 cm³ (dimensions from memory)', () => {
     const cylinder = (diameter: number, height: number) => (Math.PI / 4) * diameter ** 2 * height
     expect(convertVolume(cylinder(4, 4.584), 'in3', 'ft3')).toBeCloseTo(0.033336, 5)
     expect(convertVolume(cylinder(4, 4.584), 'in3', 'cm3')).toBeCloseTo(944, 0)
@@ -44,7 +44,7 @@ describe('exact constants', () => {
     expect(convertVolume(cylinder(6, 4.584), 'in3', 'cm3')).toBeCloseTo(2124, 0)
   })
 
-  test('FM 5-472 p. 4: the 4-in mould of 0.0333 ft³ is 943 cm³ and the 6-in of 0.075 ft³ 2,124 cm³ (checks 1.1)', () => {
+  test('FM 5-472 p. 4: the 4-in mould of 0.0333 ft³ is 943 cm³ and the 6-in of 0.075 ft³ 2,124 cm³', () => {
     expect(convertVolume(0.0333, 'ft3', 'cm3')).toBeCloseTo(943, 0)
     expect(convertVolume(0.075, 'ft3', 'cm3')).toBeCloseTo(2124, 0)
   })

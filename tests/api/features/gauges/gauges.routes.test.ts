@@ -121,7 +121,7 @@ describe('POST …/gauges/:id/counts', () => {
     for (const [index, density] of [2_005, 2_010, 2_015, 2_020].entries()) await counted(id, { density, countedAt: daysAgo(9 - index) })
     await counted(id, { density: 2_030, countedAt: daysAgo(5) })
     const { counts } = await detail(id)
-    // 1 % of 2,000 and of the average 2,012.5 (gauge operating manual, checks.md 2.2)
+    // 1 % of 2,000 and of the average 2,012.5 (gauge operating manual)
     expect(counts.map((count) => [count.good, count.reference?.from, count.reference?.density])).toEqual([...Array.from({ length: 4 }, () => [true, 'calibration', 2_000]), [true, 'average', 2_012.5]])
     expect(counts[4]).toMatchObject({ stands: true, countedBy: technician.user.name, void: null, day: workDay(Date.parse(daysAgo(5)), open.site.timeZone, open.site.dayCutHour) })
   })
@@ -205,7 +205,7 @@ describe('calibrations, times out of service, corrections', () => {
     const { id } = await record()
     const path = open.path(`/gauges/${id}/corrections`)
     const input = (pairs: { oven: number; gauge: number }[], days: number) => ({ id: randomUUID(), materialId: open.material.id, pairs, inForceFrom: daysAgo(days), remarks: '' })
-    // checks.md 2.2: gauge 10 %, oven 12 % gives +18.18
+    // gauge 10 %, oven 12 % gives +18.18
     await technician.post(path, input([{ oven: 12, gauge: 10 }], 5))
     const second = input([{ oven: 12, gauge: 10 }, { oven: 10, gauge: 10 }], 2)
     expect(gaugeSchema.parse((await technician.post(path, second)).body).corrections).toMatchObject([{ k: expect.closeTo(9.0909, 4), least: 0, materialName: open.material.name, inForce: true }])

@@ -51,7 +51,7 @@ describe('GET and POST /api/sites/:siteId/materials', () => {
   })
 
   it('keep a material with its factor from loose to compacted', async () => {
-    // 25 % swell, 10 % shrink: 0.90 / 1.25 (checks.md 5.1)
+    // 25 % swell, 10 % shrink: 0.90 / 1.25 (published swell tables)
     const body = materialInput({ name: 'Silty sand, cut 4', swellPercent: 25, shrinkPercent: 10 })
     const answer = await technician.post(open.path('/materials'), body)
     expect(answer.status).toBe(201)
@@ -80,15 +80,15 @@ describe('POST /api/sites/:siteId/curves', () => {
     ([moisture, dryDensity]) => ({ moisture: moisture!, dryDensity: dryDensity! }),
   )
   it.each<[string, CreateCurve['points'], number, number, number]>([
-    // checks.md P-3: 1713.2 kg/m³ at 15.26 %
+    // P-3: 1713.2 kg/m³ at 15.26 %
     ['P-3', P3, 2.7, convertDensity(1713.2, 'kg/m3', 'pcf'), 15.26],
-    // checks.md P-4: 127.62 pcf at 12.35 %; Gs assumed, so that no point lies above zero air voids
+    // P-4: 127.62 pcf at 12.35 %; Gs assumed, so that no point lies above zero air voids
     ['P-4', pointsFromPcf([[8.4, 122.2], [10.2, 126.3], [11.7, 127.4], [12.7, 127.5], [14, 125]]), 2.85, 127.62, 12.35],
-    // checks.md P-5: 125.06 pcf at 12.05 %
+    // P-5: 125.06 pcf at 12.05 %
     ['P-5', pointsFromPcf([[8.4, 90.22], [10.2, 112.98], [12.3, 124.76], [14.6, 105.24], [16.8, 93.24]]), 2.72, 125.06, 12.05],
-    // checks.md P-6: 107.54 pcf at 12.82 %
+    // P-6: 107.54 pcf at 12.82 %
     ['P-6', pointsFromPcf([[6.5, 104.14], [9.3, 106.46], [13.3, 107.52], [16.6, 106.03], [21.2, 99.01]]), 2.7, 107.54, 12.82],
-    // checks.md P-7: 111.71 pcf at 16.04 %
+    // P-7: 111.71 pcf at 16.04 %
     ['P-7', pointsFromPcf([[9.1, 106.97], [11.8, 109.84], [14.8, 111.24], [16.5, 111.59], [18.9, 107.32]]), 2.7, 111.71, 16.04],
   ])('answers the published spline of set %s', async (code, points, gs, maximum, optimum) => {
     const curve = await record({ code, points, gs })
@@ -103,7 +103,7 @@ describe('POST /api/sites/:siteId/curves', () => {
   it('shows the least-squares fits beside the spline and warns where they differ', async () => {
     const { curves } = curveListSchema.parse((await lead.get(open.path('/curves'))).body)
     const sharp = curves.find(({ code }) => code === 'P-5')
-    // checks.md P-5: quadratic 120.0 pcf at 12.53 %
+    // P-5: quadratic 120.0 pcf at 12.53 %
     expect(pcf(sharp?.fit.quadratic?.maxDryDensity)).toBeCloseTo(120, 1)
     expect(sharp?.fit.quadratic?.optimumMoisture).toBeCloseTo(12.53, 1)
     expect(sharp?.fit.warnings.map(({ code }) => code)).toContain('fits-differ')
@@ -204,7 +204,7 @@ describe('POST /api/sites/:siteId/curves/:id/approve', () => {
   it('puts the pair in force rounded to 0.1 pcf and 0.1 % and records who confirmed it', async () => {
     const points = pointsFromPcf([[8.4, 122.2], [10.2, 126.3], [11.7, 127.4], [12.7, 127.5], [14, 125]])
     const draft = await record({ points, gs: 2.85 })
-    // checks.md P-4: spline 127.62 at 12.35, quadratic 127.57 at 11.76
+    // P-4: spline 127.62 at 12.35, quadratic 127.57 at 11.76
     const curve = curveSchema.parse((await lead.post(open.path(`/curves/${draft.id}/approve`), { use: 'quadratic' })).body)
     expect(pcf(curve.pair?.maxDryDensity)).toBeCloseTo(127.6, 9)
     expect(curve.pair?.optimumMoisture).toBe(11.8)

@@ -20,7 +20,7 @@ beforeAll(async () => {
 
 afterAll(() => app.end())
 
-/** Smith, Elements of Soil Mechanics, example 14.2: 1.91 Mg/m³ at 13.7 %, stones of Gs 2.78 kept on the 20 mm (checks.md O-2). */
+/** Smith, Elements of Soil Mechanics, example 14.2: 1.91 Mg/m³ at 13.7 %, stones of Gs 2.78 kept on the 20 mm (O-2). */
 async function stonyCurve(code: string, coarse: CreateCurve['coarse']): Promise<Curve> {
   const lead = open.people['qc-lead']
   const reported = { maxDryDensity: 1910, optimumMoisture: 13.7, reason: 'Only the pair is published' }
@@ -46,7 +46,7 @@ async function record(curveId: string, oversizePercent: number | null): Promise<
   return testDetailSchema.parse((await technician.get(open.path(`/tests/${recordTestAnswerSchema.parse(answer.body).id}`))).body)
 }
 
-describe('a reference with stones in it (checks.md O-2)', () => {
+describe('a reference with stones in it (O-2)', () => {
   let curve: Curve
 
   beforeAll(async () => {

@@ -24,7 +24,7 @@ describe('recording a test', () => {
     answerSheet()
     openTestsPage(AT_STAKE)
     await enterS1()
-    // S-1 of checks.md: 6.47 lb / 99 pcf = 0.065354 ft³; the page prints 112.29 pcf from 0.065, unrounded it is 111.69
+    // S-1: 6.47 lb / 99 pcf = 0.065354 ft³; the page prints 112.29 pcf from 0.065, unrounded it is 111.69
     expect(screen.getByLabelText('Hole volume').textContent).toBe('0.0654')
     expect(screen.getByText('Dry unit wt').nextElementSibling?.textContent).toBe('111.7\u2009pcf')
     expect(screen.getByText('Compaction').nextElementSibling?.textContent).toBe('97.1\u2009%')

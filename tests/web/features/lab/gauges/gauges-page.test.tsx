@@ -96,7 +96,7 @@ describe('a standard count', () => {
     await userEvent.type(field(dialog, 'Density count'), '2,030')
     await userEvent.type(field(dialog, 'Moisture count'), '612')
     const judgement = await within(dialog).findByRole('status', { name: 'Judgement' })
-    // 30 of 2,000 is 1.5 %, 12 of 600 exactly 2 % (checks.md 2.2)
+    // 30 of 2,000 is 1.5 %, 12 of 600 exactly 2 %
     await waitFor(() => expect(judgement.textContent).toMatch(/Density, within ±1\u2009%\+1\.50\u2009%Out.*Moisture, within ±2\u2009%\+2\.00\u2009%Good.*count again/))
     expect(judgement.textContent).toContain('the calibration, until four days are good: density 2,000.0, moisture 600.0')
     await userEvent.clear(field(dialog, 'Density count'))
@@ -131,7 +131,7 @@ describe('a standard count', () => {
       await userEvent.type(field(dialog, `Density ${index}`), String(2_000 + index * 6))
       await userEvent.type(field(dialog, `Moisture ${index}`), '600')
     }
-    // 24 of 2,018 is 1.19 %, which is not below 1 % (checks.md 2.2)
+    // 24 of 2,018 is 1.19 %, which is not below 1 %
     expect(within(dialog).getByText(/Density ranges over 1\.19/).textContent).toMatch(/^Not stable/)
   })
 
@@ -167,7 +167,7 @@ describe('what else a gauge needs', () => {
     await within(dialog).findByRole('option', { name: MATERIAL.name })
     await userEvent.selectOptions(within(dialog).getByRole('combobox', { name: 'Material' }), MATERIAL.name)
     for (const [label, text] of [['Oven 1', '12'], ['Gauge 1', '10'], ['Oven 2', '10'], ['Gauge 2', '10']] as const) await userEvent.type(field(dialog, label), text)
-    // checks.md 2.2: +18.18 for the first pair, 0 for the second
+    // +18.18 for the first pair, 0 for the second
     expect(within(dialog).getByRole('status', { name: 'Correction' }).textContent).toBe('K 9.09, mean of 2 pairs, from 0.00 to 18.18.')
     await userEvent.click(within(dialog).getByRole('button', { name: 'Save the correction' }))
     await waitFor(() => expect(sent).toMatchObject([{ materialId: MATERIAL.id, pairs: [{ oven: 12, gauge: 10 }, { oven: 10, gauge: 10 }] }]))
