@@ -17,6 +17,7 @@ import { usePageTitle } from '#web/lib/page-title.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { CheckCurveLink } from './check-curve-link.tsx'
 import { FrozenCriteria } from './saved/frozen-criteria.tsx'
+import { PrintFoot, PrintHead } from './saved/print-parts.tsx'
 import { SheetCalibrations } from './saved/sheet-calibrations.tsx'
 import { sheetParts } from './saved/sheet-rows.ts'
 import { RowList, SheetSection } from './saved/sheet-section.tsx'
@@ -85,17 +86,18 @@ function TestSheet({ test }: { test: TestDetail }) {
         <Link to={paths.tests(site.id)} className="link-ink print:hidden">
           All results
         </Link>
+        <PrintHead test={test} />
         <TestActions test={test} />
         <Button kind="quiet" className="print:hidden max-sm:hidden" onClick={() => window.print()}>
           Print
         </Button>
       </header>
-      <div className="min-h-0 flex-1 overflow-y-auto lg:grid lg:grid-cols-[minmax(0,1fr)_minmax(400px,42%)]">
-        <div className="bg-sheet px-4 pt-[22px] pb-6 sm:px-[26px] lg:order-2">
+      <div className="test-parts min-h-0 flex-1 overflow-y-auto lg:grid lg:grid-cols-[minmax(0,1fr)_minmax(400px,42%)]">
+        <div className="verdict-side bg-sheet px-4 pt-[22px] pb-6 sm:px-[26px] lg:order-2">
           <TestNotices test={test} />
           <TestVerdict test={test} />
         </div>
-        <div className="bg-raised px-4 pt-5 pb-8 sm:px-[26px] lg:border-r lg:border-rule-2">
+        <div className="data-side bg-raised px-4 pt-5 pb-8 sm:px-[26px] lg:border-r lg:border-rule-2">
           {sheetParts(test.sheet, test.gauge).map(({ title, aside, rows }) => (
             <SheetSection key={title} title={title} aside={aside}>
               <RowList rows={rows} />
@@ -120,6 +122,7 @@ function TestSheet({ test }: { test: TestDetail }) {
           <TestEvents testId={test.id} />
         </div>
       </div>
+      <PrintFoot test={test} />
     </div>
   )
 }

@@ -10,7 +10,7 @@ const missed = (facts: Facts, ...codes: string[]): 'bad' | undefined => (facts.r
 export function VerdictFacts({ facts, units }: { facts: Facts | null; units: Units }) {
   return (
     <FactsRow
-      className="grid-cols-2! sm:max-lg:grid-cols-4! xl:grid-cols-4!"
+      className="grid-cols-2! sm:max-lg:grid-cols-4! xl:grid-cols-4! print:grid-cols-2!"
       facts={[
         { label: 'Dry unit wt', value: facts ? units.densityNumber(facts.dryDensity) : NO_VALUE, unit: units.marks.density, tone: facts ? missed(facts, 'too-loose', 'too-dense') : undefined },
         { label: 'Compaction', value: facts ? units.number(facts.rc, 1) : NO_VALUE, unit: '%', tone: facts ? missed(facts, 'too-loose', 'too-dense') : undefined },

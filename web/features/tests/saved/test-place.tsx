@@ -20,8 +20,8 @@ export function TestPlace({ test }: { test: TestDetail }) {
     ...(test.stakeLabel === null ? [] : [{ label: 'Stake', value: test.stakeLabel }]),
     ...(test.surfaceUm === null ? [] : [{ label: 'Ground elevation', value: units.elevation(test.surfaceUm) }]),
     { label: 'Depth below surface', value: units.thickness(test.depthUm) },
-    { label: 'Sampled', value: units.dateTime(test.sampledAt) },
-    { label: 'Recorded', value: units.dateTime(test.recordedAt) },
+    { label: 'Sampled', value: `${units.fullDate(test.sampledAt)}, ${units.time(test.sampledAt)}` },
+    { label: 'Recorded', value: `${units.fullDate(test.recordedAt)}, ${units.time(test.recordedAt)}` },
     { label: 'By', value: <span className="font-sans">{test.recordedBy.name}</span> },
   ]
   return (
