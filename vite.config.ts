@@ -9,6 +9,8 @@ export default defineConfig({
   // Beside the packages, not in web/, which is source only.
   cacheDir: `${ROOT}/node_modules/.vite`,
   plugins: [react(), tailwindcss()],
+  // a worker fetches what it seldom needs, such as the reader of workbooks, only then
+  worker: { format: 'es' },
   build: { outDir: '../.build/web', emptyOutDir: true, chunkSizeWarningLimit: 1500 },
   test: {
     projects: [

@@ -60,6 +60,13 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/tests/new-test-page.tsx')).NewTestPage,
   },
   {
+    path: PATTERNS.importTests,
+    title: 'Import results',
+    open: 'site',
+    verb: 'registers.see',
+    load: async () => (await import('#web/features/tests/exchange/import-page.tsx')).ImportPage,
+  },
+  {
     path: PATTERNS.test,
     title: 'Test',
     open: 'site',

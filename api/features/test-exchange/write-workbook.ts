@@ -16,7 +16,8 @@ export async function writeWorkbook(out: Writable, rows: AsyncIterable<RowValues
   const { units } = provenance.query
   const columns = columnsOfFile(units, 'xlsx')
   const site = exchangeSite(provenance.plan)
-  const book = new ExcelJS.stream.xlsx.WorkbookWriter({ stream: out, useStyles: true, useSharedStrings: false })
+  // strings in a table of their own, as spreadsheets write them: readers undo their escapes there only
+  const book = new ExcelJS.stream.xlsx.WorkbookWriter({ stream: out, useStyles: true, useSharedStrings: true })
   const sheet = book.addWorksheet('Tests', { views: [{ state: 'frozen', ySplit: 1, xSplit: 2 }] })
   sheet.columns = columns.map((key) => ({ key, header: headOfColumn(key, site, units), width: widthOf(key), style: styleOf(key) }))
   sheet.getRow(1).font = { bold: true }

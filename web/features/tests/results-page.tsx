@@ -11,6 +11,7 @@ import { testQueries } from '#web/data/test/queries.ts'
 import { viewQueries } from '#web/data/view/queries.ts'
 import { usePageTitle } from '#web/lib/page-title.ts'
 import { useSite } from '#web/lib/site-context.tsx'
+import { ExportDialog } from './exchange/export-dialog.tsx'
 import { countOf } from './outcome-words.ts'
 import { ColumnDialog } from './register/column-dialog.tsx'
 import { isNarrowed, queryOf } from './register/register-address.ts'
@@ -42,6 +43,7 @@ export function ResultsPage() {
   const { views, settled } = useViews(controls)
   const { data, error, refetch, isPlaceholderData } = useQuery({ ...testQueries.register(site.id, queryOf(address, lookup)), enabled: settled })
   const [choosing, setChoosing] = useState(false)
+  const [exporting, setExporting] = useState(false)
   const narrowed = isNarrowed(address)
   const record = (can('test.record-qc') || can('test.record-qa')) && (
     <Link to={paths.newTest(site.id)} className={buttonClasses('primary', 'regular', 'pointer-coarse:min-h-12')}>
@@ -57,7 +59,17 @@ export function ResultsPage() {
         <Button onClick={() => setChoosing(true)} className="max-md:hidden pointer-coarse:min-h-12">
           Columns
         </Button>
-        <span className="ml-auto flex flex-wrap gap-[10px]">{record}</span>
+        <span className="ml-auto flex flex-wrap gap-[10px]">
+          <Button onClick={() => setExporting(true)} disabled={data === undefined || data.total === 0} className="pointer-coarse:min-h-12">
+            Export
+          </Button>
+          {record !== false && (
+            <Link to={paths.importTests(site.id)} className={buttonClasses('plain', 'regular', 'pointer-coarse:min-h-12')}>
+              Import
+            </Link>
+          )}
+          {record}
+        </span>
       </div>
       <RegisterFilters controls={controls} page={data} />
       <div className="mt-[14px] flex flex-col md:min-h-0 md:flex-1" aria-busy={isPlaceholderData}>
@@ -76,6 +88,7 @@ export function ResultsPage() {
           </>
         )}
       </div>
+      {exporting && <ExportDialog query={queryOf(address, lookup)} total={data?.total} onClose={() => setExporting(false)} />}
       {choosing && <ColumnDialog columns={address.columns} onChange={show} onClose={() => setChoosing(false)} />}
     </div>
   )
