@@ -62,7 +62,7 @@ export function emptyCurveForm(material: Pick<Material, 'id' | 'gs' | 'gsMeasure
 
 /** The specific gravity a new curve of a material begins with; blank where the material does not know it. */
 export function gravityOf(material: Pick<Material, 'gs' | 'gsMeasured'> | undefined): Pick<CurveForm, 'gs' | 'gsMeasured'> {
-  return { gs: (material?.gs ?? null) === null ? '' : String(material.gs), gsMeasured: material?.gsMeasured ?? false }
+  return { gs: String(material?.gs ?? ''), gsMeasured: material?.gsMeasured ?? false }
 }
 
 /** A draft as it was entered, to be put right. */
@@ -70,7 +70,7 @@ export function formOfCurve(curve: Curve, units: Units): CurveForm {
   const us = units.system === 'us'
   const blank = emptyCurveForm(undefined, units.field.instant(curve.sampledAt), us)
   const { reported, coarse, apparatus } = curve
-  const text = (value: number | null | undefined) => ((value ?? null) === null ? '' : String(value))
+  const text = (value: number | null | undefined) => String(value ?? '')
   return {
     ...blank,
     code: curve.code,

@@ -2,14 +2,16 @@ import type { Curve } from '#shared/schemas/lab.ts'
 
 const WRITTEN = { dry: 'dry unit weights', wet: 'wet unit weights', masses: 'mould masses' } as const
 
+const given = (value: number | null | undefined, words: string): string[] => (value === null || value === undefined ? [] : [`${value} ${words}`])
+
 /** How the curve was compacted and written down, and where that departs from its method. */
 export function CurveNotes({ curve }: { curve: Curve }) {
   const { entry, apparatus, flags, withdrawReason } = curve
   const facts = [
     ...(entry === null ? [] : [`Entered as ${WRITTEN[entry.kind]} of ${entry.specimens.length} specimens`]),
-    ...((apparatus?.layers ?? null) === null ? [] : [`${apparatus.layers} layers`]),
-    ...((apparatus?.blows ?? null) === null ? [] : [`${apparatus.blows} blows a layer`]),
-    ...((apparatus?.oversizePercent ?? null) === null ? [] : [`${apparatus.oversizePercent} % retained on its sieve`]),
+    ...given(apparatus?.layers, 'layers'),
+    ...given(apparatus?.blows, 'blows a layer'),
+    ...given(apparatus?.oversizePercent, '% retained on its sieve'),
   ]
   return (
     <>
