@@ -64,7 +64,7 @@ export function CheckStep({ importing, open }: { importing: Importing; open: Ope
       {accepting.progress !== null && <ProgressBar label="Recording the tests" {...accepting.progress} of="tests" />}
       <LineFilter shown={shown} count={count} total={lines.length} onShow={setShown} />
       <LineList looked={shown === 'all' ? looked : looked.filter(({ state }) => state === shown)} importing={importing} />
-      <div className="sticky bottom-0 flex flex-wrap items-center gap-[10px] border-t border-ink bg-raised py-3">
+      <div className="bottom-0 flex flex-wrap items-center gap-[10px] border-t border-ink bg-raised py-3 pb-4 md:sticky">
         <Button kind="primary" disabled={unsettledCount > 0 || ready.length === 0 || accepting.progress !== null} busyLabel={accepting.progress !== null && 'Recording'} onClick={() => void handleAccept()} className="pointer-coarse:min-h-12">
           {ready.length === 0 ? 'Record the tests' : `Record ${ready.length.toLocaleString('en-US')} ${ready.length === 1 ? 'test' : 'tests'}`}
         </Button>

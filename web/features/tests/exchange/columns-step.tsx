@@ -67,7 +67,7 @@ export function ColumnsStep({ importing, open }: { importing: Importing; open: O
       </div>
       <FixedFields settings={settings} onChange={(fixed) => importing.settle({ fixed })} />
       <ColumnMap open={open} onChange={(columns) => importing.settle({ columns })} />
-      <div className="sticky bottom-0 flex flex-wrap gap-[10px] border-t border-ink bg-raised py-3">
+      <div className="bottom-0 flex flex-wrap gap-[10px] border-t border-ink bg-raised py-3 pb-4 md:sticky">
         <Button kind="primary" onClick={importing.check} disabled={read === 0} className="pointer-coarse:min-h-12">
           Check the rows
         </Button>

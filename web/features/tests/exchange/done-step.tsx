@@ -14,7 +14,7 @@ export function DoneStep({ accepted: { recorded, already: known }, already, asid
   const { site } = useSite()
   const before = already + known.length
   return (
-    <div className="max-w-[980px]">
+    <div className="max-w-[980px] pb-10">
       <SectionHead>{recorded.length === 1 ? 'One test was recorded' : `${recorded.length.toLocaleString('en-US')} tests were recorded`}</SectionHead>
       <p className="m-0 mb-4 text-ink-2">
         {before > 0 && `${before.toLocaleString('en-US')} stood here already and were left as they are. `}

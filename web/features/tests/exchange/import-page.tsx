@@ -36,7 +36,7 @@ function Import({ userId }: { userId: string }) {
   const { open } = importing
   const step = open === null ? 0 : open.checking ? 2 : 1
   return (
-    <div className="min-h-0 flex-1 overflow-y-auto bg-raised px-4 pt-5 pb-10 sm:px-[26px]">
+    <div className="min-h-0 flex-1 overflow-y-auto bg-raised px-4 pt-5 sm:px-[26px]">
       <div className="mb-4 flex flex-wrap items-center gap-x-[14px] gap-y-2">
         <h1 className="m-0 text-question font-extrabold">Import results</h1>
         <ol aria-label="Steps" className="m-0 flex list-none gap-3 p-0 text-ink-2">

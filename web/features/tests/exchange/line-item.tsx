@@ -21,7 +21,7 @@ export function LineItem({ looked, importing }: LineItemProps) {
   const result = previewed?.verdict ?? null
   return (
     <li className="border-b border-rule py-2">
-      <div className="grid grid-cols-1 items-baseline gap-x-4 gap-y-[2px] md:grid-cols-[112px_minmax(0,1.3fr)_minmax(0,1.7fr)_auto]">
+      <div className="grid grid-cols-1 items-baseline gap-x-4 gap-y-[2px] md:grid-cols-[150px_minmax(0,1.3fr)_minmax(0,1.7fr)_148px]">
         <span className="font-semibold">
           Line <span className="num">{line.line}</span>
           {line.reference !== '' && <span className="font-medium text-ink-2">, {line.reference}</span>}
@@ -33,7 +33,7 @@ export function LineItem({ looked, importing }: LineItemProps) {
           {result !== null && state === 'ready' && `. ${verdictWords(result, units)}`}
           {line.aside !== null && `: ${line.aside}`}
         </span>
-        <span className="flex flex-wrap gap-x-4">
+        <span className="flex flex-wrap gap-x-4 md:justify-end">
           {line.aside === null && state !== 'recorded' && (
             <button type="button" className={QUIET} aria-expanded={opened || needs} onClick={() => setOpened(!opened)} hidden={needs}>
               {opened ? 'Close' : 'Correct'}

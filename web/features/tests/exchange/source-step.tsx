@@ -55,7 +55,7 @@ export function SourceStep({ importing }: { importing: Importing }) {
   }
 
   return (
-    <div className="max-w-[760px]" aria-busy={busy}>
+    <div className="max-w-[760px] pb-10" aria-busy={busy}>
       {problem !== null && (
         <Banner tone="bad" title="This could not be read." className="mb-4">
           {problem} Nothing was stored.
