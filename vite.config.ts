@@ -21,6 +21,7 @@ export default defineConfig({
           include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'],
           benchmark: { include: ['tests/bench/**/*.bench.ts'] },
           environment: 'node',
+          testTimeout: 60_000,
         },
       },
       {
@@ -42,6 +43,8 @@ export default defineConfig({
           include: ['tests/web/**/*.test.{ts,tsx}'],
           environment: 'jsdom',
           setupFiles: ['tests/setup/web.ts'],
+          // typing as a person does is slow on a busy machine; nothing here is timed
+          testTimeout: 60_000,
         },
       },
       {

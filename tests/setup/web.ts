@@ -1,7 +1,10 @@
-import { cleanup } from '@testing-library/react'
+import { cleanup, configure } from '@testing-library/react'
 import { afterAll, afterEach, beforeAll, beforeEach, expect, vi } from 'vitest'
 import { apiStandIn } from './api-stand-in.ts'
 import './browser-gaps.ts'
+
+// what is waited for comes, however busy the machine is
+configure({ asyncUtilTimeout: 15_000 })
 
 beforeAll(() => apiStandIn.listen({ onUnhandledRequest: 'error' }))
 afterAll(() => apiStandIn.close())
