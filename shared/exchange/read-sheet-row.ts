@@ -97,6 +97,7 @@ function readGauge(row: RowReader, moisture: MoistureSheet): RawSheet {
 function readPlain(row: RowReader, moisture: MoistureSheet): RawSheet {
   const [wet, dry] = [row.has('wetDensity'), row.has('dryDensity')]
   if (wet && dry) row.fail('wetDensity', 'A plain sheet takes the wet density or the dry density, not both. Clear the one that was worked out.')
+  row.text('wetDensity')
   const key = wet && !dry ? 'wetDensity' : 'dryDensity'
   return { method: 'plain', densityUnit: row.unit<'pcf'>('density', [key]), densityIs: key === 'wetDensity' ? 'wet' : 'dry', density: row.number(key), moisture }
 }

@@ -7,8 +7,8 @@ import { columnOf, UNIT_COLUMN, type ColumnKey, type RowValues } from '#shared/e
 import { workbookText } from '#shared/exchange/workbook-text.ts'
 import { columnsOfFile, headOfColumn, unitOfColumn } from '#shared/exchange/write-row.ts'
 
-/** Rows between two looks at whether the reader keeps up. */
-const AT_ONCE = 250
+/** Rows between two looks at whether the reader keeps up, others served meanwhile. */
+const AT_ONCE = 50
 const TIME_FORMAT = 'yyyy-mm-dd hh:mm:ss'
 
 /** Writes the workbook of rows as it goes: typed numbers and times, a head that stays, what the units are, where it comes from. */
