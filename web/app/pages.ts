@@ -95,6 +95,20 @@ export const PAGES: readonly Page[] = [
     load: async () => (await import('#web/features/lab/curves/curves-page.tsx')).CurvesPage,
   },
   {
+    path: PATTERNS.newCurve,
+    title: 'New reference curve',
+    open: 'site',
+    verb: 'curve.record',
+    load: async () => (await import('#web/features/lab/curves/curve-entry-page.tsx')).CurveEntryPage,
+  },
+  {
+    path: PATTERNS.correctCurve,
+    title: 'Correct a curve',
+    open: 'site',
+    verb: 'curve.record',
+    load: async () => (await import('#web/features/lab/curves/curve-entry-page.tsx')).CurveEntryPage,
+  },
+  {
     path: PATTERNS.onePoint,
     title: 'One-point checks',
     open: 'site',

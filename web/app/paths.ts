@@ -12,6 +12,8 @@ export const PATTERNS = {
   rework: '/sites/:siteId/rework',
   reworkOrder: '/sites/:siteId/rework/:orderId',
   lab: '/sites/:siteId/lab',
+  newCurve: '/sites/:siteId/lab/curves/new',
+  correctCurve: '/sites/:siteId/lab/curves/:curveId/correct',
   onePoint: '/sites/:siteId/lab/one-point',
   rejudge: '/sites/:siteId/lab/curves/:curveId/rejudge',
   gauges: '/sites/:siteId/lab/gauges',
@@ -36,6 +38,10 @@ export const paths = {
   rework: (siteId: string) => `${site(siteId)}/rework`,
   reworkOrder: (siteId: string, orderId: string) => `${site(siteId)}/rework/${encodeURIComponent(orderId)}`,
   lab: (siteId: string) => `${site(siteId)}/lab`,
+  curve: (siteId: string, curveId: string) => `${site(siteId)}/lab?curve=${encodeURIComponent(curveId)}`,
+  newCurve: (siteId: string) => `${site(siteId)}/lab/curves/new`,
+  /** a draft put right, as a whole */
+  correctCurve: (siteId: string, curveId: string) => `${site(siteId)}/lab/curves/${encodeURIComponent(curveId)}/correct`,
   onePoint: (siteId: string) => `${site(siteId)}/lab/one-point`,
   /** superseding a curve, and judging its tests again */
   rejudge: (siteId: string, curveId: string) => `${site(siteId)}/lab/curves/${encodeURIComponent(curveId)}/rejudge`,

@@ -1,4 +1,4 @@
-import { checkApparatus } from '#shared/domain/compaction-method.ts'
+import { checkApparatus, hasEditions, type MethodEdition, type MouldSize } from '#shared/domain/compaction-method.ts'
 import type { Curve, CreateCurve, Material } from '#shared/schemas/lab.ts'
 import { createCurveSchema } from '#shared/schemas/lab.ts'
 import { convertVolume } from '#shared/units/volume.ts'
@@ -11,7 +11,10 @@ export type CurveForm = {
   readonly materialId: string
   readonly method: CreateCurve['method']
   readonly procedure: CreateCurve['procedure']
+  /** issue of D698 and D1557 */
+  readonly edition: MethodEdition
   readonly entry: EntryForm
+  readonly mould: MouldSize | ''
   readonly layers: string
   readonly blows: string
   readonly oversize: string
@@ -34,6 +37,7 @@ export function emptyCurveForm(material: Pick<Material, 'id' | 'gs' | 'gsMeasure
     materialId: material?.id ?? '',
     method: 'D698',
     procedure: 'A',
+    edition: '2007',
     entry: {
       kind: 'dry',
       moistureBy: 'stated',
@@ -45,6 +49,7 @@ export function emptyCurveForm(material: Pick<Material, 'id' | 'gs' | 'gsMeasure
       mouldVolume: '',
       rows: Array.from({ length: 5 }, () => EMPTY_ROW),
     },
+    mould: '',
     layers: '',
     blows: '',
     oversize: '',
@@ -77,6 +82,8 @@ export function formOfCurve(curve: Curve, units: Units): CurveForm {
     materialId: curve.materialId,
     method: curve.method,
     procedure: curve.procedure,
+    edition: apparatus?.edition ?? '2007',
+    mould: apparatus?.mould ?? '',
     entry: curve.entry === null ? { ...blank.entry, rows: curve.points.map((point) => ({ moisture: String(point.moisture), density: units.field.densityKgM3(point.dryDensity) })) } : entryForm(curve.entry, blank.entry),
     layers: text(apparatus?.layers),
     blows: text(apparatus?.blows),
@@ -132,7 +139,7 @@ export function readCurveForm(id: string, form: CurveForm, units: Units): ReadCu
     procedure: form.procedure,
     points: [...read.points],
     entry: read.entry.specimens.length === 0 ? null : read.entry,
-    apparatus: { layers: optional(form.layers), blows: optional(form.blows), oversizePercent: optional(form.oversize) },
+    apparatus: { ...(hasEditions(form.method) ? { edition: form.edition } : {}), mould: form.mould === '' ? null : form.mould, layers: optional(form.layers), blows: optional(form.blows), oversizePercent: optional(form.oversize) },
     gs: numberOf(form.gs),
     gsMeasured: form.gsMeasured,
     coarse: form.withCoarse ? { bulkGravity: numberOf(form.coarseGravity), moisture: numberOf(form.coarseMoisture) } : null,
@@ -156,10 +163,12 @@ function methodProblem(form: CurveForm, numberOf: (text: string) => number): { r
 }
 
 /** What the sheet says of its apparatus, held to the method. */
-export function checkMethod({ method, procedure, entry, layers, blows, oversize }: CurveForm, numberOf: (text: string) => number): ReturnType<typeof checkApparatus> {
+export function checkMethod({ method, procedure, edition, entry, mould, layers, blows, oversize }: CurveForm, numberOf: (text: string) => number): ReturnType<typeof checkApparatus> {
   const given = (text: string) => (Number.isFinite(numberOf(text)) ? numberOf(text) : null)
   const volume = entry.kind === 'masses' ? given(entry.mouldVolume) : null
   return checkApparatus(method, procedure, {
+    edition,
+    mould: mould === '' ? null : mould,
     mouldVolumeCm3: volume === null ? null : convertVolume(volume, entry.volumeUnit, 'cm3'),
     layers: given(layers),
     blows: given(blows),

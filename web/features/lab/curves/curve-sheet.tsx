@@ -1,5 +1,6 @@
 import { useState } from 'react'
-import type { Curve, Material } from '#shared/schemas/lab.ts'
+import { saturation } from '#shared/domain/phase-relations.ts'
+import type { Curve } from '#shared/schemas/lab.ts'
 import { SubjectFiles } from '#web/components/files/subject-files.tsx'
 import { Button } from '#web/components/ui/button.tsx'
 import { FactsRow } from '#web/components/ui/figure.tsx'
@@ -14,10 +15,12 @@ import { OversizePairs } from './oversize-pairs.tsx'
 import { pairWords, sieveWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
 
 /** One reference curve: its points, the fit, the pair in force and how it came to be. */
-export function CurveSheet({ curve, materials }: { curve: Curve; materials: readonly Material[] }) {
-  const { can, units } = useSite()
+export function CurveSheet({ curve }: { curve: Curve }) {
+  const { can, site, units } = useSite()
   const [approving, setApproving] = useState(false)
   const { fit, reported, coarse } = curve
+  const peak = curve.pair === null ? null : saturation(curve.pair.maxDryDensity, curve.pair.optimumMoisture, curve.gs, site.waterDensity)
+  const saturated = peak?.ok ? peak.value : null
   return (
     <section aria-label={`Curve ${curve.code}`}>
       <div className="flex flex-wrap items-start justify-between gap-3">
@@ -28,9 +31,9 @@ export function CurveSheet({ curve, materials }: { curve: Curve; materials: read
           </p>
         </div>
         <div className="flex flex-wrap gap-2">
-          <DraftActs curve={curve} materials={materials} />
+          <DraftActs curve={curve} />
           {curve.status === 'draft' && can('curve.approve') && (
-            <Button kind="primary" onClick={() => setApproving(true)}>
+            <Button kind="primary" className="pointer-coarse:min-h-11" onClick={() => setApproving(true)}>
               Approve
             </Button>
           )}
@@ -41,6 +44,7 @@ export function CurveSheet({ curve, materials }: { curve: Curve; materials: read
         facts={[
           { label: 'Max dry', value: curve.pair === null ? '–' : units.density(curve.pair.maxDryDensity) },
           { label: 'Optimum', value: curve.pair === null ? '–' : units.percent(curve.pair.optimumMoisture) },
+          { label: 'Saturation', value: saturated === null ? '–' : `${units.number(saturated, 0)} %` },
           { label: curve.gsMeasured ? 'Gs, measured' : 'Gs, assumed', value: String(curve.gs) },
         ]}
       />
@@ -66,7 +70,7 @@ export function CurveSheet({ curve, materials }: { curve: Curve; materials: read
         reported={reported}
       />
       {fit.refusal !== null && curve.points.length > 0 && <p className="mt-3 mb-0 font-medium text-warn">The points alone make no reference. {fit.refusal}</p>}
-      <FitsTable fits={fit} reported={reported} inUse={curve.pairFrom} />
+      <FitsTable fits={fit} gs={curve.gs} reported={reported} inUse={curve.pairFrom} />
       {reported !== null && <p className="mt-2 mb-0 text-ink-2">Laboratory’s own pair: {reported.reason}</p>}
       <FitWarnings warnings={fit.warnings} />
       <div className="mt-6">

@@ -1,7 +1,9 @@
 import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
-import { useSearchParams } from 'react-router-dom'
+import { Link, useSearchParams } from 'react-router-dom'
 import type { Curve, Material } from '#shared/schemas/lab.ts'
+import { paths } from '#web/app/paths.ts'
+import { buttonClasses } from '#web/components/ui/button-classes.ts'
 import { Button } from '#web/components/ui/button.tsx'
 import { EmptyState } from '#web/components/ui/empty-state.tsx'
 import { SectionHead } from '#web/components/ui/section-head.tsx'
@@ -10,7 +12,6 @@ import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.ts
 import { curveQueries } from '#web/data/curve/queries.ts'
 import { materialQueries } from '#web/data/material/queries.ts'
 import { useSite } from '#web/lib/site-context.tsx'
-import { CurveDialog } from './curve-dialog.tsx'
 import { CurveSheet } from './curve-sheet.tsx'
 import { LabFrame } from '#web/features/lab/lab-frame.tsx'
 import { pairWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
@@ -96,7 +97,7 @@ function CurvesTable({ curves, chosen, onChoose }: { curves: readonly Curve[]; c
 export function CurvesPage() {
   const { site, can } = useSite()
   const [search, setSearch] = useSearchParams()
-  const [asked, setAsked] = useState<'material' | 'curve' | null>(null)
+  const [asked, setAsked] = useState(false)
   const [editing, setEditing] = useState<Material | null>(null)
   const materials = useQuery(materialQueries.list(site.id))
   const curves = useQuery(curveQueries.list(site.id))
@@ -110,11 +111,11 @@ export function CurvesPage() {
     : undefined
   const actions = (
     <>
-      {can('material.record') && <Button onClick={() => setAsked('material')}>New material</Button>}
+      {can('material.record') && <Button className="pointer-coarse:min-h-11" onClick={() => setAsked(true)}>New material</Button>}
       {can('curve.record') && ready && materials.data.length > 0 && (
-        <Button kind="primary" onClick={() => setAsked('curve')}>
+        <Link to={paths.newCurve(site.id)} className={buttonClasses('primary', 'regular', 'pointer-coarse:min-h-11')}>
           New curve
-        </Button>
+        </Link>
       )}
     </>
   )
@@ -128,7 +129,7 @@ export function CurvesPage() {
         )
       ) : materials.data.length === 0 ? (
         <div className="max-w-[640px] px-4 sm:px-[26px]">
-          <EmptyState title="No material yet" action={can('material.record') ? <Button onClick={() => setAsked('material')}>New material</Button> : undefined}>
+          <EmptyState title="No material yet" action={can('material.record') ? <Button onClick={() => setAsked(true)}>New material</Button> : undefined}>
             Record the borrow material first, then its compaction curve. Fill can be placed and tests judged once both stand here.
           </EmptyState>
         </div>
@@ -146,23 +147,13 @@ export function CurvesPage() {
           </div>
           {chosen !== undefined && (
             <div className="min-w-0 xl:border-l xl:border-rule-2 xl:pl-10">
-              <CurveSheet key={chosen.id} curve={chosen} materials={materials.data} />
+              <CurveSheet key={chosen.id} curve={chosen} />
             </div>
           )}
         </div>
       )}
       {editing !== null && <MaterialDialog material={editing} onClose={() => setEditing(null)} />}
-      {asked === 'material' && <MaterialDialog onClose={() => setAsked(null)} />}
-      {asked === 'curve' && materials.data !== undefined && (
-        <CurveDialog
-          materials={materials.data}
-          onClose={() => setAsked(null)}
-          onSaved={(curve) => {
-            setAsked(null)
-            choose(curve.id)
-          }}
-        />
-      )}
+      {asked && <MaterialDialog onClose={() => setAsked(false)} />}
     </LabFrame>
   )
 }

@@ -1,29 +1,31 @@
 import { zodResolver } from '@hookform/resolvers/zod'
 import { useState } from 'react'
 import { useForm } from 'react-hook-form'
-import { withdrawCurveSchema, type Curve, type Material } from '#shared/schemas/lab.ts'
+import { Link } from 'react-router-dom'
+import { withdrawCurveSchema, type Curve } from '#shared/schemas/lab.ts'
+import { paths } from '#web/app/paths.ts'
 import { Banner } from '#web/components/ui/banner.tsx'
+import { buttonClasses } from '#web/components/ui/button-classes.ts'
 import { Button } from '#web/components/ui/button.tsx'
 import { Dialog, DialogClose } from '#web/components/ui/dialog.tsx'
 import { TextArea } from '#web/components/ui/text-fields.tsx'
 import { useWithdrawCurve } from '#web/data/curve/mutations.ts'
 import { useSite } from '#web/lib/site-context.tsx'
-import { CurveDialog } from './curve-dialog.tsx'
 
 /** A draft that no test was judged by can be put right or taken back. */
-export function DraftActs({ curve, materials }: { curve: Curve; materials: readonly Material[] }) {
-  const { can } = useSite()
-  const [asked, setAsked] = useState<'correct' | 'withdraw' | null>(null)
-  const close = () => setAsked(null)
+export function DraftActs({ curve }: { curve: Curve }) {
+  const { site, can } = useSite()
+  const [asked, setAsked] = useState(false)
   if (curve.status !== 'draft' || curve.testsJudged > 0 || !can('curve.record')) return null
   return (
     <>
-      <Button onClick={() => setAsked('correct')}>Correct</Button>
-      <Button kind="quiet" onClick={() => setAsked('withdraw')}>
+      <Link to={paths.correctCurve(site.id, curve.id)} className={buttonClasses('plain', 'regular', 'pointer-coarse:min-h-11')}>
+        Correct
+      </Link>
+      <Button kind="quiet" className="pointer-coarse:min-h-11" onClick={() => setAsked(true)}>
         Withdraw
       </Button>
-      {asked === 'correct' && <CurveDialog materials={materials} curve={curve} onClose={close} onSaved={close} />}
-      {asked === 'withdraw' && <WithdrawDialog curve={curve} onClose={close} />}
+      {asked && <WithdrawDialog curve={curve} onClose={() => setAsked(false)} />}
     </>
   )
 }

@@ -3,6 +3,11 @@ import type { DensityUnit } from '#shared/units/density.ts'
 import type { MassUnit } from '#shared/units/mass.ts'
 import type { VolumeUnit } from '#shared/units/volume.ts'
 
+/** The units a sheet may be written down in. */
+export const MASSES = ['g', 'kg', 'lb'] as const
+export const DENSITIES = ['pcf', 'kN/m3', 'kg/m3', 'g/cm3'] as const
+export const VOLUMES = ['cm3', 'ft3', 'in3'] as const
+
 export type EntryKind = 'dry' | 'wet' | 'masses'
 export type MoistureBy = 'stated' | 'one-tin' | 'two-tins'
 export type EntryColumn = 'moisture' | 'density' | 'wetDensity' | 'soil' | 'wet1' | 'dry1' | 'tin1' | 'wet2' | 'dry2' | 'tin2'

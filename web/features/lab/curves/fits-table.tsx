@@ -1,23 +1,30 @@
+import { saturation } from '#shared/domain/phase-relations.ts'
 import type { MaximumPair } from '#shared/domain/reference-curve.ts'
-import type { Curve, CurveUse } from '#shared/schemas/lab.ts'
+import type { CurveUse } from '#shared/schemas/lab.ts'
 import { Cell, HeadCell, Row, RowHead, Table } from '#web/components/ui/table.tsx'
-import { useUnits } from '#web/lib/site-context.tsx'
+import { useSite } from '#web/lib/site-context.tsx'
 import { FIT_WORDS } from '#web/features/lab/lab-words.ts'
 
 const USES: readonly CurveUse[] = ['spline', 'quadratic', 'cubic', 'reported']
 
-/** The pairs the fits give, side by side; the one in use is marked in words. */
-export function FitsTable({ fits, reported, inUse }: { fits: Readonly<Record<'spline' | 'quadratic' | 'cubic', MaximumPair | null>>; reported: Curve['reported']; inUse: CurveUse | null }) {
-  const units = useUnits()
+type FitsTableProps = { fits: Readonly<Record<'spline' | 'quadratic' | 'cubic', MaximumPair | null>>; gs: number; reported: MaximumPair | null; inUse: CurveUse | null }
+
+/** The pairs the fits give, side by side, with the saturation of each peak; the one in use is marked in words. */
+export function FitsTable({ fits, gs, reported, inUse }: FitsTableProps) {
+  const { site, units } = useSite()
+  const saturated = ({ maxDryDensity, optimumMoisture }: MaximumPair): string => {
+    const result = saturation(maxDryDensity, optimumMoisture, gs, site.waterDensity)
+    return result.ok ? units.number(result.value, 0) : '–'
+  }
   const pairs: Readonly<Record<CurveUse, MaximumPair | null>> = { ...fits, reported }
   return (
     <Table caption="Fits compared" className="mt-4">
       <thead>
         <tr>
-          <HeadCell>Fit</HeadCell>
+          <HeadCell className="pl-0">Fit</HeadCell>
           <HeadCell numeric>Max dry, {units.marks.density}</HeadCell>
-          <HeadCell numeric>Optimum moisture, %</HeadCell>
-          <HeadCell>Use</HeadCell>
+          <HeadCell numeric>Optimum, %</HeadCell>
+          <HeadCell numeric>Saturation, %</HeadCell>
         </tr>
       </thead>
       <tbody>
@@ -25,10 +32,13 @@ export function FitsTable({ fits, reported, inUse }: { fits: Readonly<Record<'sp
           const pair = pairs[use]
           return (
             <Row key={use} selected={use === inUse}>
-              <RowHead>{FIT_WORDS[use]}</RowHead>
+              <RowHead className="pl-0">
+                {FIT_WORDS[use]}
+                {use === inUse && <span className="font-medium text-ink-2">, this pair</span>}
+              </RowHead>
               <Cell numeric>{pair === null ? 'no maximum' : units.densityNumber(pair.maxDryDensity)}</Cell>
               <Cell numeric>{pair === null ? '–' : units.number(pair.optimumMoisture, 1)}</Cell>
-              <Cell>{use === inUse ? 'this pair' : ''}</Cell>
+              <Cell numeric>{pair === null ? '–' : saturated(pair)}</Cell>
             </Row>
           )
         })}

@@ -1,4 +1,5 @@
 import { useState } from 'react'
+import { unusualGravity } from '#shared/domain/typical-gravity.ts'
 import { createMaterialSchema, type Material } from '#shared/schemas/lab.ts'
 import { Banner } from '#web/components/ui/banner.tsx'
 import { Button } from '#web/components/ui/button.tsx'
@@ -7,6 +8,7 @@ import { NumberField, SelectField, TextField } from '#web/components/ui/text-fie
 import { useRecordMaterial, useUpdateMaterial } from '#web/data/material/mutations.ts'
 import { useSite } from '#web/lib/site-context.tsx'
 import { issuesOf } from '#web/features/lab/lab-words.ts'
+import { TypicalGravities } from './typical-gravities.tsx'
 
 type MaterialForm = { readonly name: string; readonly source: string; readonly classification: string; readonly swell: string; readonly shrink: string; readonly gs: string; readonly measured: string }
 
@@ -61,12 +63,13 @@ export function MaterialDialog({ material, onClose }: { material?: Material | un
         <NumberField label="Swell, bank to loose" unit="%" error={errorOf('swellPercent')} {...bind('swell')} />
         <NumberField label="Shrink, bank to compacted" unit="%" hint="Negative where it grows when compacted." error={errorOf('shrinkPercent')} {...bind('shrink')} />
         <div className="grid grid-cols-2 items-start gap-3">
-          <NumberField label="Specific gravity, if known" hint="Quartz sand 2.65, most clays 2.6 to 2.8" error={errorOf('gs')} {...bind('gs')} />
+          <NumberField label="Specific gravity, if known" warning={form.measured === 'measured' ? undefined : (unusualGravity(numberOf(form.gs)) ?? undefined)} error={errorOf('gs')} {...bind('gs')} />
           <SelectField label="It is" {...bind('measured')}>
             <option value="assumed">Assumed</option>
             <option value="measured">Measured</option>
           </SelectField>
         </div>
+        <TypicalGravities />
         {material !== undefined && <p className="m-0 text-small text-ink-2">Swell and shrink hold for fill placed from now on; what was placed keeps its volumes.</p>}
         {issuesOf(sending.error).map((message) => (
           <Banner key={message} tone="bad" title={message} />

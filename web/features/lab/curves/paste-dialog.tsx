@@ -3,29 +3,51 @@ import { Banner } from '#web/components/ui/banner.tsx'
 import { Button } from '#web/components/ui/button.tsx'
 import { Dialog, DialogClose } from '#web/components/ui/dialog.tsx'
 import { TextArea } from '#web/components/ui/text-fields.tsx'
-import { columnsOf, type EntryColumn, type EntryForm, type EntryRow } from './entry-columns.ts'
-import { guessColumns, readGrid, rowsOf } from './paste-grid.ts'
-import { readEntry } from './read-entry.ts'
+import type { EntryColumn, EntryForm, EntryRow } from './entry-columns.ts'
+import { EntryChoices } from './entry-fields.tsx'
+import { guessColumns, MOST_LINES, readGrid, rowsOf } from './paste-grid.ts'
+import { PastePreview } from './paste-preview.tsx'
+import { isBlank, MOST_ROWS, readEntry } from './read-entry.ts'
+import { suitEntry } from './suit-entry.ts'
 
 /** A sheet of specimens is a few kilobytes; what is far beyond it is no such sheet. */
 const MOST_BYTES = 512 * 1024
 
-type PasteDialogProps = { form: EntryForm; onTake: (rows: readonly EntryRow[]) => void; onClose: () => void }
+type PasteDialogProps = { form: EntryForm; onTake: (choices: Pick<EntryForm, 'kind' | 'moistureBy' | 'densityUnit' | 'massUnit' | 'tinUnit' | 'volumeUnit'>, rows: readonly EntryRow[]) => void; onClose: () => void }
+
+/** What keeps each row from entering the sheet, null where nothing does. */
+function marksOf(rows: readonly EntryRow[], form: EntryForm, room: number): (string | null)[] {
+  const { errors } = readEntry({ ...form, rows })
+  let left = room
+  return rows.map((row, i) => {
+    if (isBlank(row)) return 'Nothing of this sheet’s columns stands here.'
+    const message = errors[i]?.message
+    if (message !== undefined) return message
+    left -= 1
+    return left < 0 ? `A curve takes ${MOST_ROWS} specimens at most.` : null
+  })
+}
+
+function takeWords(good: number, aside: number): string {
+  if (good === 0) return 'Take over'
+  return `Take over ${good} ${good === 1 ? 'specimen' : 'specimens'}${aside > 0 ? `, set ${aside} aside` : ''}`
+}
 
 /** A pasted block or a CSV file, its columns named and each row marked, before anything enters the sheet. */
-export function PasteDialog({ form, onTake, onClose }: PasteDialogProps) {
+export function PasteDialog({ form: sheet, onTake, onClose }: PasteDialogProps) {
   const [text, setText] = useState('')
+  const [form, setForm] = useState(sheet)
   const [chosen, setChosen] = useState<readonly (EntryColumn | null)[] | null>(null)
   const [refused, setRefused] = useState<string | null>(null)
   const grid = readGrid(text)
   const columns = chosen ?? guessColumns(grid, form)
   const rows = rowsOf(grid, columns)
-  const { errors } = readEntry({ ...form, rows })
-  const marks = rows.map((row, i) => errors[i]?.message ?? (Object.values(row).every((each) => each === '') ? 'Nothing of this sheet’s columns stands here.' : null))
+  const marks = marksOf(rows, form, MOST_ROWS - sheet.rows.filter((row) => !isBlank(row)).length)
   const good = rows.filter((_, i) => marks[i] === null)
   const take = (next: string): void => {
     setText(next)
     setChosen(null)
+    setForm(suitEntry(readGrid(next), form))
   }
   const handleFile = async (file: File | undefined): Promise<void> => {
     if (file === undefined) return
@@ -41,11 +63,11 @@ export function PasteDialog({ form, onTake, onClose }: PasteDialogProps) {
       open
       onOpenChange={(open) => !open && onClose()}
       title="Paste or read a file"
-      description="A block from a spreadsheet, or a CSV file. Name its columns; nothing enters the sheet before you take it over."
+      description="A block from a spreadsheet, or a CSV file. Nothing enters the sheet before you take it over."
       actions={
         <>
-          <Button kind="primary" disabled={good.length === 0} onClick={() => onTake(good)}>
-            {good.length === 0 ? 'Take over' : `Take over ${good.length} ${good.length === 1 ? 'specimen' : 'specimens'}${good.length < rows.length ? `, set ${rows.length - good.length} aside` : ''}`}
+          <Button kind="primary" disabled={good.length === 0} onClick={() => onTake(form, good)}>
+            {takeWords(good.length, rows.length - good.length)}
           </Button>
           <DialogClose>
             <Button kind="quiet">Cancel</Button>
@@ -53,60 +75,27 @@ export function PasteDialog({ form, onTake, onClose }: PasteDialogProps) {
         </>
       }
     >
-      <div className="grid gap-3">
+      <div className="grid grid-cols-[minmax(0,1fr)] gap-3">
         <TextArea label="Block" rows={5} value={text} onChange={(event) => take(event.target.value)} />
-        <label className="flex flex-wrap items-center gap-3 font-semibold">
+        <label className="flex flex-wrap items-center gap-x-3 font-semibold">
           Or a CSV file
-          <input type="file" accept=".csv,.txt,text/csv,text/plain" className="min-h-11 font-normal" onChange={(event) => void handleFile(event.target.files?.[0])} />
+          <input type="file" accept=".csv,.txt,text/csv,text/plain" className="max-w-full py-1 font-normal file:mr-3 file:min-h-9 file:cursor-pointer file:rounded-ctl file:border-[1.5px] file:border-solid file:border-ink file:bg-raised file:px-4 file:font-semibold file:text-ink pointer-coarse:file:min-h-11" onChange={(event) => void handleFile(event.target.files?.[0])} />
         </label>
         {refused !== null && <Banner tone="bad" title={refused} />}
-        {rows.length > 0 && <Preview form={form} grid={grid} columns={columns} marks={marks} onColumns={setChosen} />}
+        {grid.more && <Banner title={`Only the first ${MOST_LINES} lines were read.`} />}
+        {rows.length > 0 && (
+          <>
+            <EntryChoices
+              form={form}
+              onChange={(change) => {
+                setForm({ ...form, ...change })
+                if (change.kind !== undefined || change.moistureBy !== undefined) setChosen(null)
+              }}
+            />
+            <PastePreview form={form} grid={grid} columns={columns} marks={marks} onColumns={setChosen} />
+          </>
+        )}
       </div>
     </Dialog>
-  )
-}
-
-type PreviewProps = { form: EntryForm; grid: ReturnType<typeof readGrid>; columns: readonly (EntryColumn | null)[]; marks: readonly (string | null)[]; onColumns: (columns: readonly (EntryColumn | null)[]) => void }
-
-function Preview({ form, grid, columns, marks, onColumns }: PreviewProps) {
-  const words = columnsOf(form)
-  const choose = (place: number, key: string) => onColumns(columns.map((column, at) => (at === place ? (words.find((each) => each.key === key)?.key ?? null) : column === key ? null : column)))
-  return (
-    <div className="overflow-x-auto" role="region" aria-label="Preview" tabIndex={0}>
-      <table className="w-full border-collapse text-small">
-        <thead>
-          <tr>
-            {columns.map((column, place) => (
-              <th key={place} scope="col" className="border-b border-ink p-1 text-left align-bottom">
-                {grid.heads !== null && <span className="block font-medium text-ink-2">{grid.heads[place]}</span>}
-                <select aria-label={`Column ${place + 1} is`} className="min-h-9 w-full border border-ink bg-raised font-semibold pointer-coarse:min-h-12" value={column ?? ''} onChange={(event) => choose(place, event.target.value)}>
-                  <option value="">Leave out</option>
-                  {words.map(({ key, head, unit }) => (
-                    <option key={key} value={key}>
-                      {head}, {unit}
-                    </option>
-                  ))}
-                </select>
-              </th>
-            ))}
-            <th scope="col" className="border-b border-ink p-1 text-left font-semibold">
-              Row
-            </th>
-          </tr>
-        </thead>
-        <tbody>
-          {grid.lines.map((line, i) => (
-            <tr key={i} className="border-b border-rule align-top">
-              {columns.map((column, place) => (
-                <td key={place} className={`num p-[6px] ${column === null ? 'text-ink-3' : ''}`}>
-                  {line[place]}
-                </td>
-              ))}
-              <td className={`p-[6px] font-medium ${marks[i] === null ? '' : 'text-bad'}`}>{marks[i] ?? 'ready'}</td>
-            </tr>
-          ))}
-        </tbody>
-      </table>
-    </div>
   )
 }

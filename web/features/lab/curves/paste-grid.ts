@@ -2,20 +2,21 @@ import Papa from 'papaparse'
 import { columnsOf, type EntryColumn, type EntryForm, type EntryRow } from './entry-columns.ts'
 
 /** Lines and places that are read at most: a laboratory's sheet has a few dozen. */
-const MOST_LINES = 200
+export const MOST_LINES = 200
 const MOST_PLACES = 24
 
-export type Grid = { readonly heads: readonly string[] | null; readonly lines: readonly (readonly string[])[] }
+export type Grid = { readonly heads: readonly string[] | null; readonly lines: readonly (readonly string[])[]; /** more lines stand there than are read */ readonly more: boolean }
 
 const looksNumeric = (text: string): boolean => /^[+\-−]?[\d.,' ]*\d[\d.,' ]*%?$/.test(text)
 
 /** A block copied from a spreadsheet or a CSV file: its heads, where the first line holds words, and its lines. */
 export function readGrid(text: string): Grid {
-  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, ''), { skipEmptyLines: 'greedy', preview: MOST_LINES, ...delimiterOf(text) })
+  const parsed = Papa.parse<string[]>(text.replace(/^\uFEFF/, ''), { skipEmptyLines: 'greedy', preview: MOST_LINES + 2, ...delimiterOf(text) })
   const lines = parsed.data.map((line) => line.slice(0, MOST_PLACES).map((place) => place.trim()))
   const first = lines[0] ?? []
   const hasHeads = first.some((place) => place !== '') && !first.some(looksNumeric)
-  return { heads: hasHeads ? first : null, lines: hasHeads ? lines.slice(1) : lines }
+  const figures = hasHeads ? lines.slice(1) : lines
+  return { heads: hasHeads ? first : null, lines: figures.slice(0, MOST_LINES), more: figures.length > MOST_LINES }
 }
 
 /** Tabs as spreadsheets copy them, semicolons where commas are decimal; runs of blanks where nothing else parts the figures. */

@@ -4,12 +4,14 @@ import { parseNumber } from '#web/lib/units.ts'
 import { columnsOf, type EntryColumn, type EntryForm, type EntryRow } from './entry-columns.ts'
 
 export const EMPTY_ROW: EntryRow = {}
+/** Specimens a curve takes at most, as the API does. */
+export const MOST_ROWS = 40
 
 const number = (text: string | undefined): number => {
   const typed = parseNumber(text ?? '')
   return typed.ok ? typed.value : Number.NaN
 }
-const isBlank = (row: EntryRow): boolean => Object.values(row).every((text) => text.trim() === '')
+export const isBlank = (row: EntryRow): boolean => Object.values(row).every((text) => text.trim() === '')
 
 function moistureOf({ moistureBy, tinUnit }: EntryForm, row: EntryRow): SpecimenMoisture {
   if (moistureBy === 'stated') return { percent: number(row.moisture?.replace('%', '')) }
@@ -51,6 +53,8 @@ export type ReadEntry = {
   readonly entry: CurveEntry
   /** of the rows that can be worked out */
   readonly points: readonly LabPoint[]
+  /** what each row comes to; undefined where it is blank or cannot be worked out yet */
+  readonly worked: readonly (LabPoint | undefined)[]
   /** beside each row, what keeps it from being a point */
   readonly errors: readonly (RowProblem | undefined)[]
   readonly mouldError: string | undefined
@@ -63,14 +67,11 @@ export type ReadEntry = {
 export function readEntry(form: EntryForm): ReadEntry {
   const filled = form.rows.filter((row) => !isBlank(row))
   const words = new Map(columnsOf(form).map((column) => [column.key, column]))
-  const points: LabPoint[] = []
+  const worked: (LabPoint | undefined)[] = []
   const errors = form.rows.map((row): RowProblem | undefined => {
-    if (isBlank(row)) return undefined
-    const one = reduceEntry(entryOf(form, [row]))
-    if (one.ok) {
-      points.push(...one.points)
-      return undefined
-    }
+    const one = isBlank(row) ? null : reduceEntry(entryOf(form, [row]))
+    worked.push(one?.ok ? one.points[0] : undefined)
+    if (one === null || one.ok) return undefined
     const problem = one.problems.find(({ field }) => field.startsWith('specimens.'))
     if (problem === undefined) return undefined
     const column = columnAt(problem.field)
@@ -82,5 +83,6 @@ export function readEntry(form: EntryForm): ReadEntry {
   const entry = entryOf(form, filled)
   const all = reduceEntry(entry)
   const at = (field: string) => (all.ok ? undefined : all.problems.find((problem) => problem.field === field)?.message)
-  return { entry, points, errors, mouldError: at('mould'), mouldVolumeError: at('mouldVolume'), flags: all.ok ? all.flags.map((flag) => flag.message) : [], whole: all.ok }
+  const points = worked.filter((point) => point !== undefined)
+  return { entry, points, worked, errors, mouldError: at('mould'), mouldVolumeError: at('mouldVolume'), flags: all.ok ? all.flags.map((flag) => flag.message) : [], whole: all.ok }
 }

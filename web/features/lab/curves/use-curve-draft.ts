@@ -35,9 +35,13 @@ export type CurveDraft = {
   readonly forget: () => void
 }
 
-/** A curve's sheet kept on the device while it is typed, so that a reload or a closed dialog loses nothing. */
-export function useCurveDraft(siteId: string, name: string, blank: () => CurveForm): CurveDraft {
-  const key = `hardpan.draft.curve.${siteId}.${name}`
+/** The place of a draft: one person, one site, one curve. */
+export function curveDraftKey(userId: string, siteId: string, curve: string): string {
+  return `hardpan.draft.curve.${userId}.${siteId}.${curve}`
+}
+
+/** A curve's sheet kept on the device while it is typed, so that a reload or a way elsewhere loses nothing. */
+export function useCurveDraft(key: string, blank: () => CurveForm): CurveDraft {
   const [start] = useState(() => {
     const empty = blank()
     const kept = readKept(key)

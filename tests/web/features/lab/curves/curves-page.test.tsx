@@ -40,25 +40,26 @@ describe('the Lab sheet', { timeout: 30_000 }, () => {
     const plot = screen.getByRole('img', { name: /Compaction curve RB-3/ })
     expect(plot.getAttribute('aria-label')).toBe('Compaction curve RB-3, 5 points, 120.0\u2009pcf at 12.0\u2009%')
     const fits = within(screen.getByRole('table', { name: 'Fits compared' })).getAllByRole('row').slice(1)
-    expect(fits[0]?.textContent).toBe('Smooth curve120.012.0this pair')
+    expect(fits[0]?.textContent).toBe('Smooth curve, this pair120.012.080')
   })
 
   it('is read-only for those who neither record nor approve', async () => {
     open('owner-rep')
     await screen.findByRole('table', { name: 'Reference curves' })
-    for (const name of ['New curve', 'New material', 'Approve']) expect(screen.queryByRole('button', { name })).toBeNull()
+    for (const name of ['New material', 'Approve', 'Withdraw']) expect(screen.queryByRole('button', { name })).toBeNull()
+    for (const name of ['New curve', 'Correct']) expect(screen.queryByRole('link', { name })).toBeNull()
   })
 
   it('lets a technician record, and leaves the approval to the lead', async () => {
     open('technician')
-    await screen.findByRole('button', { name: 'New curve' })
+    expect((await screen.findByRole('link', { name: 'New curve' })).getAttribute('href')).toBe(`/sites/${SITE_ID}/lab/curves/new`)
     expect(screen.queryByRole('button', { name: 'Approve' })).toBeNull()
   })
 
   it('says what to record first', async () => {
     open('technician', [], [])
     expect((await screen.findByText('No material yet')).textContent).toBe('No material yet')
-    expect(screen.queryByRole('button', { name: 'New curve' })).toBeNull()
+    expect(screen.queryByRole('link', { name: 'New curve' })).toBeNull()
   })
 
   it('approves the pair the lead chooses, knowingly where the fits differ', async () => {
@@ -73,40 +74,6 @@ describe('the Lab sheet', { timeout: 30_000 }, () => {
     await userEvent.click(within(dialog).getByRole('checkbox'))
     await userEvent.click(within(dialog).getByRole('button', { name: 'Approve this pair' }))
     await waitFor(() => expect(sent).toEqual([{ use: 'quadratic' }]))
-  })
-
-  it('shows the fit while points are typed: too few, then a pair, then a point that cannot be', async () => {
-    open()
-    await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
-    const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
-    await userEvent.type(within(dialog).getByLabelText('Specific gravity of solids, Gs'), '2.70')
-    const first = within(dialog).getByLabelText('Point 1, moisture, percent')
-    await userEvent.click(first)
-    await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n')
-    expect(within(dialog).getByText('A curve needs at least 4 points; there are 3.').textContent).toContain('there are 3')
-    await userEvent.click(within(dialog).getByLabelText('Point 4, moisture, percent'))
-    await userEvent.paste('14\t117.8\n16\t112.8')
-    expect(within(dialog).getByRole('img', { name: /5 points, 120\.0/ }).getAttribute('aria-label')).toBe('5 points, 120.0\u2009pcf at 12.0\u2009%')
-    const last = within(dialog).getByLabelText('Point 5, dry unit weight, pcf')
-    await userEvent.clear(last)
-    await userEvent.type(last, '130')
-    expect(within(dialog).getByText(/Point 5 lies above the zero-air-voids line/).textContent).toContain('assumed Gs of 2.7')
-  })
-
-  it('keeps what was typed where the server refuses it, and says why', async () => {
-    const message = 'This site already has a curve called RB-3. Nothing was saved; give this one another name.'
-    const sent = takePosts('/curves', () => HttpResponse.json({ code: 'conflict', message }, { status: 409 }))
-    open()
-    await userEvent.click(await screen.findByRole('button', { name: 'New curve' }))
-    const dialog = await screen.findByRole('dialog', { name: 'New reference curve' })
-    await userEvent.type(within(dialog).getByLabelText('Code'), 'RB-3')
-    await userEvent.type(within(dialog).getByLabelText('Specific gravity of solids, Gs'), '2.70')
-    await userEvent.click(within(dialog).getByLabelText('Point 1, moisture, percent'))
-    await userEvent.paste('8\t112.8\n10\t117.8\n12\t120\n14\t117.8\n16\t112.8')
-    await userEvent.click(within(dialog).getByRole('button', { name: 'Save the curve' }))
-    expect((await within(dialog).findByText(message)).textContent).toBe(message)
-    expect(sent[0]).toMatchObject({ code: 'RB-3', materialId: MATERIAL.id, coarse: null, reported: null })
-    expect((within(dialog).getByLabelText('Code') as HTMLInputElement).value).toBe('RB-3')
   })
 
   it('records a material, and names each field that is missing', async () => {
