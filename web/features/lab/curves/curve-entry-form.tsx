@@ -1,4 +1,4 @@
-import { useRef, useState } from 'react'
+import { useRef } from 'react'
 import type { Curve, Material } from '#shared/schemas/lab.ts'
 import { Banner } from '#web/components/ui/banner.tsx'
 import { Button } from '#web/components/ui/button.tsx'
@@ -7,16 +7,14 @@ import { SectionHead } from '#web/components/ui/section-head.tsx'
 import { issuesOf } from '#web/features/lab/lab-words.ts'
 import { ApparatusFields } from './apparatus-fields.tsx'
 import { CurveHeadFields } from './curve-head-fields.tsx'
-import { EntryFields } from './entry-fields.tsx'
 import { FitStrip, LiveFit, useLiveCurve } from './live-fit.tsx'
-import { PasteDialog } from './paste-dialog.tsx'
-import { pasteInto } from './paste-grid.ts'
-import { PointsTable } from './points-table.tsx'
-import { isBlank } from './read-entry.ts'
 import { ReferenceChoices } from './reference-choices.tsx'
+import { SpecimensSection } from './specimens-section.tsx'
 import { useCurveEntry, type CurveEntryState } from './use-curve-entry.ts'
 
 type CurveEntryFormProps = { userId: string; materials: readonly Material[]; /** a draft to be put right */ curve: Curve | undefined }
+
+const FIELDS = 'grid grid-cols-[minmax(0,1fr)] gap-3'
 
 /** Puts the focus where the sheet first needs it, once it says so. */
 function focusFirstError(sheet: HTMLFormElement | null): void {
@@ -61,14 +59,18 @@ export function CurveEntryForm({ userId, materials, curve }: CurveEntryFormProps
         <FitStrip live={live} />
         <div className="grid grid-cols-[minmax(0,1fr)] content-start gap-[22px] bg-raised px-4 pt-4 pb-6 sm:px-[26px] lg:overflow-y-auto lg:border-r lg:border-rule-2 lg:pt-5 pointer-coarse:[&_[role=radiogroup]_label]:min-h-12">
           <EntryNotices state={state} />
-          <section className="grid grid-cols-[minmax(0,1fr)] gap-3">
+          <section>
             <SectionHead>Sample</SectionHead>
-            <CurveHeadFields form={form} materials={materials} gs={state.gs} errorOf={errorOf} onChange={set} />
+            <div className={FIELDS}>
+              <CurveHeadFields form={form} materials={materials} gs={state.gs} errorOf={errorOf} onChange={set} />
+            </div>
           </section>
-          <Specimens state={state} />
-          <section className="grid grid-cols-[minmax(0,1fr)] gap-3">
+          <SpecimensSection state={state} />
+          <section>
             <SectionHead aside={form.method}>Apparatus</SectionHead>
-            <ApparatusFields form={form} check={state.method} errorOf={errorOf} onChange={set} />
+            <div className={FIELDS}>
+              <ApparatusFields form={form} check={state.method} errorOf={errorOf} onChange={set} />
+            </div>
           </section>
           <section>
             <SectionHead aside="may be left out">Reported pair and stones</SectionHead>
@@ -116,36 +118,5 @@ function EntryNotices({ state }: { state: CurveEntryState }) {
         />
       )}
     </div>
-  )
-}
-
-/** How the specimens were written down, and the table they are typed in or pasted to. */
-function Specimens({ state }: { state: CurveEntryState }) {
-  const [pasting, setPasting] = useState(false)
-  const { form, entry, setEntry, errorOf } = state
-  const { rows } = form.entry
-  return (
-    <section className="grid grid-cols-[minmax(0,1fr)] gap-3">
-      <SectionHead>Specimens</SectionHead>
-      <EntryFields form={form.entry} method={form} mouldError={errorOf('mould')} mouldVolumeError={errorOf('mouldVolume')} onChange={setEntry} />
-      <PointsTable form={form.entry} read={entry} onChange={(next) => setEntry({ rows: next })} onAskPaste={() => setPasting(true)} />
-      {errorOf('points') !== undefined && <p className="m-0 text-small font-medium text-bad">{errorOf('points')}</p>}
-      {entry.flags.map((flag) => (
-        <p key={flag} className="m-0 font-medium text-warn">
-          {flag}
-        </p>
-      ))}
-      {pasting && (
-        <PasteDialog
-          form={form.entry}
-          onClose={() => setPasting(false)}
-          onTake={(form, taken) => {
-            const kept = rows.filter((row) => !isBlank(row))
-            setEntry({ ...form, rows: pasteInto(kept, kept.length, taken) })
-            setPasting(false)
-          }}
-        />
-      )}
-    </section>
   )
 }

@@ -21,7 +21,7 @@ export function CurveHeadFields({ form, materials, gs, errorOf, onChange }: Curv
   return (
     <>
       <div className="grid grid-cols-2 items-start gap-x-[14px] gap-y-3 sm:grid-cols-3">
-        <TextField label="Code" placeholder="RB-3" maxLength={80} value={form.code} error={errorOf('code')} onChange={(event) => onChange({ code: event.target.value })} />
+        <TextField className="max-sm:col-span-2" label="Code" placeholder="RB-3" maxLength={80} value={form.code} error={errorOf('code')} onChange={(event) => onChange({ code: event.target.value })} />
         <SelectField className="max-sm:order-first max-sm:col-span-2" label="Material" value={form.materialId} error={errorOf('materialId')} onChange={(event) => handleMaterial(event.target.value)}>
           <option value="">Choose a material</option>
           {materials.map((material) => (
@@ -31,7 +31,7 @@ export function CurveHeadFields({ form, materials, gs, errorOf, onChange }: Curv
           ))}
         </SelectField>
         <TextField className="max-sm:col-span-2" label="Sampled" type="datetime-local" value={form.sampledAt} error={errorOf('sampledAt')} onChange={(event) => onChange({ sampledAt: event.target.value })} />
-        <div className="grid grid-cols-[minmax(0,1fr)_5rem] gap-x-[14px] max-sm:order-first">
+        <div className="grid grid-cols-[minmax(0,1fr)_5rem] gap-x-[14px] max-sm:order-first max-sm:col-span-2">
           <SelectField label="Method" value={form.method} onChange={(event) => onChange({ method: METHODS.find((method) => method === event.target.value) ?? 'D698', procedure: 'A' })}>
             {METHODS.map((method) => (
               <option key={method}>{method}</option>

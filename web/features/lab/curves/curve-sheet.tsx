@@ -10,6 +10,7 @@ import { CurvePlot } from './curve-plot.tsx'
 import { CurveNotes } from './curve-notes.tsx'
 import { CurveSuccession } from './curve-succession.tsx'
 import { DraftActs } from './draft-acts.tsx'
+import { EnteredSpecimens } from './entered-specimens.tsx'
 import { FitsTable, FitWarnings } from './fits-table.tsx'
 import { OversizePairs } from './oversize-pairs.tsx'
 import { pairWords, sieveWords, STATUS_WORDS } from '#web/features/lab/lab-words.ts'
@@ -60,6 +61,7 @@ export function CurveSheet({ curve }: { curve: Curve }) {
           ? `Its stones (kept on the ${sieveWords(curve.method, curve.procedure)}) are not known: a test with 5 % of them or more cannot be judged by it.`
           : `Stones kept on the ${sieveWords(curve.method, curve.procedure)}: bulk specific gravity ${coarse.bulkGravity}, moisture ${units.percent(coarse.moisture)}.`}
       </p>
+      {curve.points.length > 0 && <EnteredSpecimens curve={curve} />}
       <OversizePairs curve={curve} />
       <CurvePlot
         label={`Compaction curve ${curve.code}, ${curve.points.length} points, ${pairWords(curve.pair, units)}`}

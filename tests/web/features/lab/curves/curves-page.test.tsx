@@ -43,6 +43,15 @@ describe('the Lab sheet', { timeout: 30_000 }, () => {
     expect(fits[0]?.textContent).toBe('Smooth curve, this pair120.012.080')
   })
 
+  it('shows the specimens as they were weighed, and what each comes to', async () => {
+    const specimens = [[6020, 161.84, 149.84, 31.24], [6128, 174, 158.31, 30.96]].map(([mouldAndSoil = 0, wetAndTin = 0, dryAndTin = 0, tin = 0]) => ({ mouldAndSoil, moisture: { massUnit: 'g' as const, tins: [{ wetAndTin, dryAndTin, tin }] } }))
+    open('qc-lead', [buildCurve({ entry: { kind: 'masses', massUnit: 'g', mould: 4242, volumeUnit: 'ft3', mouldVolume: 0.0333, specimens }, apparatus: { edition: '2007', mould: '4-in', layers: 3, blows: 25, oversizePercent: 2 } })])
+    const table = await screen.findByRole('table', { name: 'Specimens as entered', hidden: true })
+    // (6020 − 4242) g in 0.0333 ft³ at 100·12.00/118.60 % (arithmetic)
+    expect(within(table).getAllByRole('row', { hidden: true })[1]?.textContent).toBe('1161.84149.8431.24602010.1106.9')
+    expect(screen.getByText(/Entered as mould masses of 2 specimens/).textContent).toContain('4 in mould, 3 layers, 25 blows a layer, 2 % retained on the No. 4')
+  })
+
   it('is read-only for those who neither record nor approve', async () => {
     open('owner-rep')
     await screen.findByRole('table', { name: 'Reference curves' })
