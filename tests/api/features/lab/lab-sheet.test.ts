@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
+import { PlacementEntity } from '#api/entities/placement.entity.ts'
 import { verifyChain } from '#api/features/events/verify-chain.ts'
 import { curveSchema, materialSchema } from '#shared/schemas/lab.ts'
 import type { CreateCurve, Curve } from '#shared/schemas/lab.ts'
@@ -9,6 +10,7 @@ import { fieldWork } from '#tests/factories/field-work.ts'
 import { materialInput } from '#tests/factories/material.ts'
 import { openSite } from '#tests/factories/open-site.ts'
 import type { OpenSite } from '#tests/factories/open-site.ts'
+import { placeCells } from '#tests/factories/work-on-site.ts'
 import { testApp } from '#tests/setup/api.ts'
 import type { TestApp } from '#tests/setup/api.ts'
 
@@ -128,5 +130,21 @@ describe('PATCH /api/sites/:siteId/materials/:id', () => {
     const second = materialInput()
     expect((await lead.post(open.path('/materials'), second)).status).toBe(201)
     expect((await lead.patch(path, { name: second.name })).status).toBe(409)
+  })
+
+  it('counts fill placed from then on by the new swell and shrink; what was placed keeps its volume', async () => {
+    const loads = { loads: 4, loadVolumeCm3: 9_000_000 }
+    const loadsOf = async () => (await app.dataSource.manager.find(PlacementEntity, { where: { siteId: open.siteId }, order: { seq: 'ASC' } })).map((placement) => placement.loadsCm3)
+    await placeCells(app, open, [0, 1], loads)
+    const [before] = await loadsOf()
+    const changed = materialSchema.parse((await open.people['qc-lead'].patch(open.path(`/materials/${open.material.id}`), { swellPercent: 60, shrinkPercent: 20 })).body)
+    await placeCells(app, open, [2, 3], loads)
+    const [still, after] = await loadsOf()
+    expect(still).toBe(before)
+    // compacted = loose · (1 − shrink) / (1 + swell): 0.8 / 1.6
+    expect(changed.looseToCompacted).toBeCloseTo(0.5, 12)
+    expect(after).toBe(18_000_000)
+    expect(before).not.toBe(after)
+    expect(await verifyChain(app.dataSource.manager, open.siteId)).toMatchObject({ ok: true })
   })
 })
