@@ -52,11 +52,11 @@ export function columnsOf({ kind, moistureBy, densityUnit, massUnit, tinUnit }: 
     case 'dry':
       return [
         ...moisture,
-        { key: 'density', head: 'Dry', name: 'dry unit weight', unit: density, known: /dry.*(density|unit|weight)|dry/i },
+        { key: 'density', head: 'Dry', name: 'dry unit weight', unit: density, known: /^(?!.*(mou?ld|tin|can|tare)).*dry/i },
         { key: 'wetDensity', head: 'Wet, if stated', name: 'wet unit weight, if stated', unit: density, known: /(wet|moist|bulk).*(density|unit|weight)/i },
       ]
     case 'wet':
-      return [...moisture, { key: 'density', head: 'Wet', name: 'wet unit weight', unit: density, known: /(wet|moist|bulk)/i }]
+      return [...moisture, { key: 'density', head: 'Wet', name: 'wet unit weight', unit: density, known: /^(?!.*(mou?ld|tin|can|tare)).*(wet|moist(?!ure)|bulk)/i }]
     case 'masses':
       return [...moisture, { key: 'soil', head: 'Mould and soil', name: 'mould and soil', unit: massUnit, known: /mou?ld/i }]
   }
